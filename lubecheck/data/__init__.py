@@ -1,0 +1,1 @@
+"""What the tables hold: lubricants, bearings, cleanliness, air."""

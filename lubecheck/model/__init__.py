@@ -1,0 +1,1 @@
+"""From what the user said to the verdict: case, points, equilibrium, limits, plan, result."""
