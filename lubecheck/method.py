@@ -41,7 +41,7 @@ class Method(Generic[P, R]):
     """A physics function with its two faces, its source and its range of validity."""
 
     __name__: str
-    plain: Callable[P, R]
+    plain: Callable[..., R]  # arrays and plain floats alike
     source: str
     valid: Mapping[str, tuple[float, float]]
     arguments: Mapping[str, Declared]
@@ -77,8 +77,7 @@ class Method(Generic[P, R]):
 
     def __call__(self, *args: Any, **kwargs: Any) -> Any:
         """Check and convert the arguments, run the body, return quantities."""
-        bound = self._signature.bind(*args, **kwargs)
-        bound.apply_defaults()
+        bound = self._signature.bind(*args, **kwargs)  # a default is in house units already: it is left to the body
         faults: list[Fault] = []
         plain: dict[str, Any] = {}
         for name, value in bound.arguments.items():
@@ -93,8 +92,7 @@ class Method(Generic[P, R]):
         if np.any(self.outside(**plain)):
             raise OutOfRange(f"{self.__name__}(): outside its range of validity: {self.range_text}")
         with np.errstate(all="ignore"):
-            body: Callable[..., Any] = self.plain
-            result = body(**plain)
+            result: Any = self.plain(**plain)
         results = result if isinstance(result, tuple) else (result,)
         if not all(np.all(np.isfinite(part)) for part in results):
             raise OutOfRange(f"{self.__name__}(): no finite result for these arguments")

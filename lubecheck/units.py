@@ -107,6 +107,8 @@ KINDS: Mapping[str, Kind] = {
         _kind("power", "W", {"mW": 1e-3, "kW": 1000, "MW": 1e6, "hp": HORSEPOWER_W}),
         _kind("conductance", "W/K", {"W/delta_degC": 1, "kW/K": 1000}),
         _kind("heat transfer coefficient", "W/(m^2*K)", {"W/m^2/K": 1}),
+        _kind("conductivity", "W/(m*K)", {"W/m/K": 1}),
+        _kind("heat capacity", "J/(kg*K)", {"J/kg/K": 1, "kJ/(kg*K)": 1000, "kJ/kg/K": 1000}),
         _kind(
             "time",
             "h",
@@ -157,6 +159,10 @@ KINDS: Mapping[str, Kind] = {
                 "gal/min": US_GALLON_CM3 / 1000,
             },
         ),
+        _kind("shear rate", "1/s", {}),
+        _kind("shear stress", "Pa", {"kPa": 1000, "N/m^2": 1}),
+        _kind("feed", "g/h", {"g/d": 1 / DAY_H, "g/day": 1 / DAY_H, "g/week": 1 / (7 * DAY_H), "mg/h": 1e-3}),
+        _kind("Saybolt viscosity", "s", {"SUS": 1, "SSU": 1}),  # Saybolt Universal seconds: a viscosity, not a time
         _kind("angle", "deg", {"rad": 180 / math.pi}),
         _kind("share", "1", {"%": 0.01, "percent": 0.01, "ppm": 1e-6}),
         _kind("number", "1", {}),
@@ -168,17 +174,18 @@ _FOLD = str.maketrans({"²": "^2", "³": "^3", "·": "*", "×": "*", "µ": "u", 
 _WORDS = {"°C": "degC", "°F": "degF", "rev/minute": "rpm", "fl oz": "fl_oz", '"': "in", "SUS": "SUS"}
 _SQUARES = re.compile(r"\b([a-z]+)(\^|\*\*)?([23])(?=$|[/*])")  # mm2/s and mm**2/s for mm^2/s
 _NUMBER = r"[+-]?(?:[0-9]+(?:\.[0-9]*)?|\.[0-9]+)(?:[eE][+-]?[0-9]+)?"
-_GRAMMAR = re.compile(rf"({_NUMBER})\s*([^\s0-9+\-.,][^\s]*(?: oz)?)?")
+_GRAMMAR = re.compile(rf"({_NUMBER})\s*((?:1/)?[^\s0-9+\-.,]\S*(?: oz)?)?")
 _LONGEST = 60
 
 
 class UnreadableText(ValueError):
-    """A text is not one number and one unit of the right kind. `expected` says what would be."""
+    """A text is not one number and one unit of the right kind. `expected` says what would be, `hint` why it is not."""
 
-    def __init__(self, expected: str, near: str | None = None) -> None:
-        super().__init__(expected)
-        self.expected = expected
+    def __init__(self, expected: str, near: str | None = None, hint: str = "") -> None:
+        self.expected = f"{expected} ({hint})" if hint else expected
         self.near = near
+        self.hint = hint
+        super().__init__(self.expected)
 
 
 def unit_word(word: str) -> str:
@@ -194,13 +201,13 @@ def unit_word(word: str) -> str:
 def _hint(text: str) -> str:
     """Say what is wrong with a text that the grammar refused, where the mistake is a known one."""
     if re.search(r"[0-9],[0-9]", text):
-        return " (write a decimal point, and no thousands separator)"
+        return "write a decimal point, and no thousands separator"
     if re.search(r"[0-9][ '_\u00a0\u202f][0-9]", text):
-        return " (write thousands without a separator)"
-    if re.search(r"[0-9a-z]\s*[+*]\s*[0-9]|[0-9]\s*-\s*[0-9]", text):
-        return " (one value only, no arithmetic)"
+        return "write thousands without a separator"
+    if re.search(r"[0-9A-Za-z]\s*[+*]\s*[0-9]|[0-9]\s*-\s*[0-9]", text):
+        return "one value only, no arithmetic"
     if re.search(r"nan|inf", text, re.IGNORECASE):
-        return " (a finite number)"
+        return "a finite number"
     return ""
 
 
@@ -224,10 +231,10 @@ def split_text(text: str, kind: Kind) -> tuple[float, str]:
     folded = text.strip().replace("\N{MINUS SIGN}", "-")
     match = _GRAMMAR.fullmatch(folded) if len(folded) <= _LONGEST else None
     if match is None:
-        raise UnreadableText(f"{wanted}{_hint(folded[: 2 * _LONGEST])}")
+        raise UnreadableText(wanted, hint=_hint(folded[: 2 * _LONGEST]))
     number, word = float(match[1]), match[2]
     if not math.isfinite(number):
-        raise UnreadableText(f"{wanted} (a finite number)")
+        raise UnreadableText(wanted, hint="a finite number")
     if word is None:
         if kind.is_bare:
             return number, "1"
@@ -296,6 +303,7 @@ Rpm = Annotated[Array, Unit("speed")]
 MPerS = Annotated[Array, Unit("velocity")]
 Mm2PerS = Annotated[Array, Unit("kinematic viscosity")]
 MPaS = Annotated[Array, Unit("dynamic viscosity")]
+SayboltS = Annotated[Array, Unit("Saybolt viscosity")]
 Newton = Annotated[Array, Unit("force")]
 NMm = Annotated[Array, Unit("torque")]
 DegC = Annotated[Array, Unit("temperature")]
@@ -303,13 +311,18 @@ DeltaDegC = Annotated[Array, Unit("temperature difference")]
 Watt = Annotated[Array, Unit("power")]
 WPerK = Annotated[Array, Unit("conductance")]
 WPerM2K = Annotated[Array, Unit("heat transfer coefficient")]
+WPerMK = Annotated[Array, Unit("conductivity")]
+JPerKgK = Annotated[Array, Unit("heat capacity")]
 Hour = Annotated[Array, Unit("time")]
 KgPerM3 = Annotated[Array, Unit("density")]
 PerKelvin = Annotated[Array, Unit("thermal expansion")]
 MPa = Annotated[Array, Unit("pressure")]
 PerGPa = Annotated[Array, Unit("pressure coefficient")]
 LPerMin = Annotated[Array, Unit("flow")]
+GramPerHour = Annotated[Array, Unit("feed")]
 Deg = Annotated[Array, Unit("angle")]
+PerSecond = Annotated[Array, Unit("shear rate")]
+Pa = Annotated[Array, Unit("shear stress")]
 Share = Annotated[Array, Unit("share")]
 Number = Annotated[Array, Unit("number")]
 

@@ -1,0 +1,76 @@
+"""Shared by all tests: the shipped examples, and a case to change."""
+
+from __future__ import annotations
+
+import re
+from pathlib import Path
+
+import pytest
+
+ROOT = Path(__file__).parents[1]
+EXAMPLES = ROOT / "examples"
+
+BASE = """\
+[bearing]
+designation = "6309"
+dynamic_rating = "53 kN"
+static_rating = "31.5 kN"
+mass = "0.83 kg"
+cage = "steel"
+
+[lubricant]
+name = "polyurea-110-2"
+
+[[duty]]
+speed = "1480 rpm"
+radial_load = "1.9 kN"
+axial_load = "250 N"
+
+[surroundings]
+ambient = "40 degC"
+coldest = "-10 degC"
+draught = "1 m/s"
+altitude = "150 m"
+dust = "clean"
+water = "dry"
+vibration = "smooth"
+orientation = "horizontal"
+
+[housing]
+kind = "motor end shield"
+void = "60 cm^3"
+relief = "closed"
+shaft_temperature = "75 degC"
+
+[grease]
+fill = "15 g"
+housing_fill = "40 %"
+interval = "16 week"
+hours_per_day = "24 h"
+
+[cleanliness]
+setting = "normal"
+"""
+
+
+def with_key(text: str, table: str, key: str, value: str | None) -> str:
+    """Return a case text with one key of a table set to a TOML value, or taken out."""
+    head = f"[[{table}]]" if table == "duty" else f"[{table}]"
+    pattern = re.compile(rf"({re.escape(head)}\n(?:[^\[\n].*\n|\n)*?)({re.escape(key)} = .*\n)")
+    if value is None:
+        changed, count = pattern.subn(lambda found: found[1], text)
+        assert count == 1, f"no {key} in {head}"
+        return changed
+    line = f"{key} = {value}\n"
+    changed, count = pattern.subn(lambda found: found[1] + line, text)
+    if count:
+        return changed
+    if head not in text:
+        return f"{text}\n{head}\n{line}"
+    return text.replace(f"{head}\n", f"{head}\n{line}")
+
+
+@pytest.fixture
+def base() -> str:
+    """The text of a whole and good case."""
+    return BASE
