@@ -70,6 +70,7 @@ LIFE_REFERENCE: Mapping[str, float] = {
     "PTFE": 100.0,
 }
 INDEX_AGREES = 6.0  # a stated index may differ from that of the stated viscosities: rounding, and twice its precision
+SAYBOLT: Mapping[str, float] = {"saybolt_100": 340 / 9, "saybolt_210": 890 / 9}  # degC of 100 and 210 degF
 GREASE_ONLY = ("thickener", "nlgi", "yield_stress", "life_reference")
 OIL_ONLY = ("pour_point", "flash_point", "iso_vg")
 
@@ -128,7 +129,8 @@ def from_figures(
 def with_given(lubricant: Lubricant, **given: Any) -> Lubricant:
     """Return a lubricant with figures of the user's own in place of the table's.
 
-    One viscosity given alone keeps the viscosity index of the table and moves the other, and says so.
+    One viscosity given alone, in mm^2/s or in Saybolt seconds, keeps the viscosity index of the table and moves the
+    other, and says so.
 
     Raises InputError as `from_figures` does.
     """
@@ -141,14 +143,17 @@ def with_given(lubricant: Lubricant, **given: Any) -> Lubricant:
         if entry.name not in ("ranges", "assumed")
     }
     assumed = list(lubricant.assumed)
-    if ("nu_40" in stated) != ("nu_100" in stated) and "index" not in stated:
-        alone, other = ("nu_40", "nu_100") if "nu_40" in stated else ("nu_100", "nu_40")
+    measured = [name for name in ("nu_40", "nu_100", *SAYBOLT) if name in stated]
+    if measured:
+        figures["nu_40"] = figures["nu_100"] = None
+        if measured != ["nu_100"]:
+            figures["iso_vg"] = None  # the grade was the table's
+    if len(measured) == 1 and "index" not in stated:
+        alone = measured[0]
         index = float(viscosity.viscosity_index.plain(nu_40=_array(lubricant.nu_40), nu_100=_array(lubricant.nu_100)))
-        figures[other] = None
         stated["index"] = index
-        assumed.append(f"viscosity index {index:.0f} of {lubricant.key} kept for {alone} = {stated[alone]:g} mm^2/s")
-    if "nu_40" in stated:
-        figures["iso_vg"] = None  # the grade was the table's
+        unit = FIELDS[alone].unit if alone in SAYBOLT else "mm^2/s"
+        assumed.append(f"viscosity index {index:.0f} of {lubricant.key} kept for {alone} = {stated[alone]:g} {unit}")
     ranges = {name: span for name, span in lubricant.ranges.items() if name not in stated and figures[name] is not None}
     made = from_figures(ranges=ranges, **{**figures, **stated})
     return dataclasses.replace(made, assumed=(*assumed, *made.assumed))
@@ -258,12 +263,13 @@ def _viscosities(
             f"nu_40 = {figures['nu_40']:g} mm^2/s, the middle of ISO VG {figures['iso_vg']:g} "
             f"({limits.low:g} to {limits.high:g})"
         )
-    if "saybolt_100" in figures or "saybolt_210" in figures:
-        _from_saybolt(figures, faults)
     base_oil = figures.get("base_oil", "")
-    if "index" not in figures and ("nu_40" in figures) != ("nu_100" in figures) and base_oil in USUAL_INDEX:
+    measured = [name for name in ("nu_40", "nu_100", *SAYBOLT) if name in figures]
+    if "index" not in figures and len(measured) == 1 and base_oil in USUAL_INDEX:
         figures["index"] = USUAL_INDEX[base_oil]
         assumed.append(f"viscosity index {figures['index']:g}, usual of {base_oil} oil")
+    if any(name in figures for name in SAYBOLT):
+        _from_saybolt(figures, faults)
     index = figures.get("index")
     if "nu_40" in figures and "nu_100" in figures:
         if index is not None and figures["nu_100"] < figures["nu_40"] and figures["nu_100"] >= 2:
@@ -291,13 +297,20 @@ def _from_saybolt(figures: Figures, faults: list[Fault]) -> None:
     """Turn Saybolt seconds at 100 and 210 degF, or one of them with an index or the other viscosity, into figures."""
     points = [
         (temperature, float(viscosity.kinematic_from_saybolt.plain(_array(figures[name]), _array(temperature))))
-        for name, temperature in (("saybolt_100", 340 / 9), ("saybolt_210", 890 / 9))
+        for name, temperature in SAYBOLT.items()
         if name in figures
     ]
     points += [(degc, figures[name]) for name, degc in (("nu_40", 40.0), ("nu_100", 100.0)) if name in figures]
+    if len(points) == 1 and "index" in figures:
+        given = next(name for name in SAYBOLT if name in figures)
+        figures["nu_40"] = nu_40_through(points[0][1], degc=points[0][0], index=figures["index"])
+        if math.isnan(figures["nu_40"]):
+            faults.append(Fault(given, f"{figures[given]:g} s", "more seconds: for so thin an oil there is no index"))
+            del figures["nu_40"]
+        return
     if len(points) == 1:
         other = "saybolt_210" if "saybolt_100" in figures else "saybolt_100"
-        faults.append(Fault(other, "nothing", "seconds at the second temperature too, or nu_40 or nu_100"))
+        faults.append(Fault(other, "nothing", "seconds at the second temperature too, or index, nu_40 or nu_100"))
         return
     degc, nu = (np.array(column) for column in zip(*points, strict=True))
     a, b, _ = viscosity.fit.plain(degc, nu)
@@ -306,6 +319,22 @@ def _from_saybolt(figures: Figures, faults: list[Fault]) -> None:
         return
     for name, at in (("nu_40", 40.0), ("nu_100", 100.0)):
         figures.setdefault(name, float(viscosity.viscosity_from_constants.plain(_array(at), a=a, b=b)))
+
+
+def nu_40_through(nu: float, *, degc: float, index: float) -> float:
+    """Return the viscosity at 40 degC of the oil of an index that has a viscosity at some other temperature.
+
+    Found by repeating nu_40 x (wanted/found): each round takes away at least a third of what is left of the error, as
+    the viscosity at 40 degC moves that at 100 degC by its 0.5th to 0.7th power. Not a number where there is none.
+    """
+    nu_40 = nu
+    for _ in range(60):
+        nu_100 = float(viscosity.nu_100_from_index.plain(_array(nu_40), _array(index)))
+        found = float(viscosity.kinematic_viscosity.plain(_array(degc), nu_40=_array(nu_40), nu_100=_array(nu_100)))
+        if not abs(found / nu - 1) > 1e-12:  # NaN ends it as well
+            return nu_40 if found == found else math.nan
+        nu_40 *= nu / found
+    return nu_40
 
 
 def _fill_in(figures: Figures, assumed: list[str]) -> None:

@@ -297,7 +297,7 @@ def static_factor(gamma: Number) -> Number:
     return factor
 
 
-@method(source="iso-76:5.2", valid={"ball_diameter": (0.5, 300.0), "count": (2.0, 500.0)})
+@method(source="iso-76:6.1", valid={"ball_diameter": (0.5, 300.0), "count": (2.0, 500.0)})
 def thrust_ball_static(*, ball_diameter: Mm, pitch_diameter: Mm, count: Number) -> Newton:
     """Static rating of thrust ball bearings with a contact angle of 90 deg, one row.
 
@@ -316,7 +316,7 @@ def thrust_ball_static(*, ball_diameter: Mm, pitch_diameter: Mm, count: Number) 
 
 
 @method(
-    source="iso-76:6.1", valid={"roller_diameter": (0.5, 300.0), "count": (2.0, 500.0), "contact_angle": (0.0, 45.0)}
+    source="iso-76:7.1", valid={"roller_diameter": (0.5, 300.0), "count": (2.0, 500.0), "contact_angle": (0.0, 45.0)}
 )
 def radial_roller_static(
     *,
@@ -351,7 +351,7 @@ def radial_roller_static(
 
 
 @method(
-    source="iso-76:6.2", valid={"roller_diameter": (0.5, 300.0), "count": (2.0, 500.0), "contact_angle": (45.0, 90.0)}
+    source="iso-76:8.1", valid={"roller_diameter": (0.5, 300.0), "count": (2.0, 500.0), "contact_angle": (45.0, 90.0)}
 )
 def thrust_roller_static(
     *, roller_diameter: Mm, roller_length: Mm, pitch_diameter: Mm, contact_angle: Deg, count: Number
