@@ -1,0 +1,136 @@
+"""What a fact that was left out may be: a usual reading, and the worst that it may be.
+
+A position is judged at both. Where the verdict of a limit is the same, the missing fact does not matter; where it is
+not, the limit is `unknown` and says which fact would settle it. So taking a fact away never improves a verdict, and
+nothing is assumed in silence. A decision left out (a fill, an interval) is no fact: it is proposed.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Callable, Iterator
+from dataclasses import dataclass
+from typing import Any
+
+from lubecheck.model.entries import Case
+
+# Multiples of D^2 that the outer area of a housing comes to. Estimates of this program from ordinary proportions of
+# such housings, (low, nominal, high); a flange is the smallest.
+HOUSING_AREA = {
+    "pedestal": (6.0, 9.0, 14.0),
+    "split plummer": (7.0, 11.0, 16.0),
+    "flange": (4.0, 6.0, 9.0),
+    "motor end shield": (7.0, 12.0, 20.0),
+    "gearbox wall": (5.0, 10.0, 20.0),
+}
+SMALLEST_AREA = min(low for low, _, _ in HOUSING_AREA.values())
+
+HOTTEST_SHAFT = 120.0  # degC, of a machine that nobody described: common practice for hot fans and motors, estimate
+LARGEST_ALTITUDE = 5000e3  # mm, the highest that a case may state
+
+
+@dataclass(frozen=True, slots=True)
+class Fact:
+    """A fact that may be left out: where it stands, its usual and its worst reading, and the limits it can move."""
+
+    table: str
+    key: str
+    usual: Any
+    worst: Any
+    text: str  # how the usual reading is listed
+    basis: str
+    limits: tuple[str, ...]
+    is_missing: Callable[[Case], bool]
+
+    @property
+    def name(self) -> str:
+        """The key as a user writes it."""
+        return f"[{self.table}] {self.key}"
+
+
+THERMAL = ("film", "temperature", "interval", "fatigue_life")
+
+
+def _missing(table: str, key: str, *, grease: bool | None = None) -> Callable[[Case], bool]:
+    def test(case: Case) -> bool:
+        return getattr(getattr(case, table), key) is None and (grease is None or case.is_grease == grease)
+
+    return test
+
+
+def _no_cooling(case: Case) -> bool:
+    return case.housing.kind is None and case.housing.area is None and case.housing.conductance is None
+
+
+def _no_machine_heat(case: Case) -> bool:
+    housing = case.housing
+    return housing.machine_heat is None and housing.shaft_temperature is None
+
+
+def _no_altitude(case: Case) -> bool:
+    return case.surroundings.altitude is None and case.housing.conductance is None
+
+
+FACTS: tuple[Fact, ...] = (
+    Fact("surroundings", "draught", 0.0, 0.0, "still air", "common-practice", THERMAL,
+         lambda case: case.surroundings.draught is None and case.housing.conductance is None),
+    Fact("surroundings", "altitude", 1000e3, LARGEST_ALTITUDE, "up to 1000 m", "iec-60034", THERMAL, _no_altitude),
+    Fact("surroundings", "dust", "normal", "very dusty", "normal", "common-practice", ("interval",),
+         _missing("surroundings", "dust", grease=True)),
+    Fact("surroundings", "water", "dry", "wet", "dry", "common-practice", ("interval",),
+         _missing("surroundings", "water", grease=True)),
+    Fact("surroundings", "vibration", "smooth", "severe", "smooth", "common-practice", ("interval", "static_load"),
+         _missing("surroundings", "vibration")),
+    Fact("surroundings", "orientation", "horizontal", "vertical", "horizontal", "common-practice", THERMAL,
+         _missing("surroundings", "orientation")),
+    Fact("housing", "kind", "pedestal", "smallest", "pedestal", "own-estimate", THERMAL, _no_cooling),
+    Fact("housing", "machine_heat", 0.0, HOTTEST_SHAFT, "none", "own-estimate", THERMAL, _no_machine_heat),
+    Fact("housing", "void", None, 0.0, "as much as the bearing's free volume", "own-estimate",
+         ("fill", *THERMAL), _missing("housing", "void", grease=True)),
+    Fact("housing", "relief", "closed", "closed", "closed", "common-practice", ("fill", *THERMAL),
+         _missing("housing", "relief", grease=True)),
+    Fact("grease", "fill", 0.5, 1.0, "30 to 100 %", "common-practice", ("fill", *THERMAL),
+         lambda case: case.is_grease and case.grease.fill == "unknown"),
+    Fact("grease", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
+         _missing("grease", "hours_per_day", grease=True)),
+    Fact("oil", "supply", "bath", "bath", "bath", "common-practice", THERMAL, _missing("oil", "supply", grease=False)),
+    Fact("oil", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
+         _missing("oil", "hours_per_day", grease=False)),
+    Fact("cleanliness", "setting", "normal", "very severe", "normal cleanliness", "iso-281:annex A", ("fatigue_life",),
+         _missing("cleanliness", "setting")),
+)  # fmt: skip
+
+
+def missing(case: Case) -> tuple[Fact, ...]:
+    """Return the facts that a case leaves out."""
+    return tuple(fact for fact in FACTS if fact.is_missing(case))
+
+
+# Ends of the factors that the uncertain inputs are multiplied with, taken as 95 % ranges.
+# Palmgren's lubricant torque is good to about x 0.7 to 1.5 for one bearing (from memory); the kind of supply has its
+# own published range on top for grease.
+F0_RANGE = {"grease": (0.6, 1.8), "oil": (0.7, 1.5)}
+F1_RANGE = (0.7, 1.5)  # Harris against ISO 15312: the load factor differs by this much between sources
+CHURNING_RANGE = (0.5, 2.0)  # yield stress of soap greases of one NLGI grade (Palacios): halved to doubled
+SHAFT_RANGE = (0.5, 2.0)  # coefficient and length of the shaft: estimates
+AREA_RANGE = (0.8, 1.25)  # a stated area still leaves the coefficient of air, about 20 % (Churchill)
+CONDUCTANCE_RANGE = (0.9, 1.1)  # a stated conductance: as good as a measurement, estimate
+
+
+def uncertain(case: Case) -> Iterator[tuple[str, float, float]]:
+    """Return the uncertain inputs of a case: the field of the points, and the factors at its low and high end."""
+    yield "cooling_factor", *_cooling_range(case)
+    yield "f0_factor", *F0_RANGE[case.lubricant.kind]
+    yield "f1_factor", *F1_RANGE
+    if case.housing.shaft_temperature is not None:
+        yield "shaft_conductance", *SHAFT_RANGE
+    if case.is_grease:
+        yield "churning_factor", *CHURNING_RANGE
+
+
+def _cooling_range(case: Case) -> tuple[float, float]:
+    if case.housing.conductance is not None:
+        return CONDUCTANCE_RANGE
+    if case.housing.area is not None:
+        return AREA_RANGE
+    low, nominal, high = HOUSING_AREA[case.housing.kind or "pedestal"]
+    return low / nominal, high / nominal

@@ -1,0 +1,228 @@
+"""check: one case, judged as it was described, at the worst that was left unsaid, and over its uncertain inputs.
+
+All of these readings are rows of one kernel call. The first position is the case at the usual reading of what it
+leaves out; then come the worst reading of everything left out, of each such fact alone, and each uncertain input at
+its low and its high end.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Mapping, Sequence
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+
+from lubecheck.data import air
+from lubecheck.model import limits, wording
+from lubecheck.model.assumptions import Fact, missing, uncertain
+from lubecheck.model.entries import Case
+from lubecheck.model.equilibrium import Air
+from lubecheck.model.kernel import Outcome, judge
+from lubecheck.model.limits import BEYOND, NEAR_CODE, STATES, UNKNOWN
+from lubecheck.model.plan import plan_line
+from lubecheck.model.points import Points, from_rows, join, rows_of
+from lubecheck.model.result import Grease, Life, Limit, Operating, PlanLine, Result
+from lubecheck.units import Array
+
+# Unit of the demand and the allowance of each limit, and where the limit comes from unless it says otherwise.
+LIMITS: Mapping[str, tuple[str, str]] = {
+    "film": ("1", "iso-281:9.3.3.1"),
+    "temperature": ("degC", "common-practice"),
+    "cold_start": ("degC", "din-51825"),
+    "fill": ("1", "fill-handbooks"),
+    "oil_level": ("mm", "neale"),
+    "interval": ("h", "grease-handbooks"),
+    "regrease_amount": ("g", "neale:A20.5"),
+    "speed": ("rpm", "common-practice"),
+    "minimum_load": ("N", "common-practice"),
+    "static_load": ("1", "iso-76"),
+    "fatigue_life": ("h", "iso-281:9.3"),
+}
+
+Triple = tuple[float, float, float]
+
+
+@dataclass(frozen=True, slots=True)
+class Variants:
+    """The readings of one case as positions of one outcome: 0 usual, 1 worst, then each fact alone, then the inputs."""
+
+    case: Case
+    facts: tuple[Fact, ...]
+    outcome: Outcome
+    rows: int  # rows of one position
+
+    @property
+    def single(self) -> Mapping[str, int]:
+        """The position at which one fact alone is at its worst."""
+        return {fact.name: 2 + i for i, fact in enumerate(self.facts)}
+
+    @property
+    def inputs(self) -> range:
+        """The positions at which one uncertain input is at an end."""
+        return range(2 + len(self.facts), self.outcome.points.cases)
+
+    def uses(self, name: str) -> Array:
+        """The use of a limit in every position, the interval judged as the usual reading plans it."""
+        judged = self.outcome.judged[name]
+        if name != "interval":
+            return judged.use
+        with np.errstate(all="ignore"):
+            use: Array = judged.demand[0] / judged.allowed
+        return use
+
+    def band(self, of_positions: Array) -> Triple:
+        """A figure's value and its band: the uncertain inputs' effects, added as the root of the sum of squares."""
+        value = of_positions[0]
+        change = of_positions[list(self.inputs)].reshape(-1, 2) - value
+        up = np.maximum(change.max(axis=1, initial=0.0), 0.0)
+        down = np.minimum(change.min(axis=1, initial=0.0), 0.0)
+        return float(value), float(value - np.sqrt((down**2).sum())), float(value + np.sqrt((up**2).sum()))
+
+    def row_band(self, of_rows: Array, row: int) -> Triple:
+        """The same for a figure of one row."""
+        return self.band(of_rows[row :: self.rows])
+
+
+def check(case: Case, *, air_properties: Air = air.properties) -> Result:
+    """Judge one bearing position.
+
+    Every limit comes with its use, the demand over what is allowed; the verdict is the worst state, and what could not
+    be judged is never called good.
+    """
+    variants = _variants(case, air_properties)
+    outcome = variants.outcome
+    judged = tuple(_limit(variants, name) for name, limit in outcome.judged.items() if limit.applies[0])
+    verdict = max((limit.state for limit in judged), key=STATES.index)
+    operating = [_operating(variants, row) for row in range(variants.rows)]
+    hottest = int(outcome.hottest[0])
+    plan = plan_line(case, outcome)
+    return Result(
+        title=case.title,
+        verdict=verdict,
+        governing=_governing(judged, verdict),
+        limits=judged,
+        operating=operating[hottest],
+        duty=tuple(operating),
+        grease=_grease(outcome, plan) if case.is_grease else None,
+        life=_life(variants),
+        plan=plan,
+        remedies=(),
+        notes=wording.notes(case, outcome),
+        cautions=wording.cautions(case),
+        given=case.given,
+        assumed=wording.assumed(case, variants.facts),
+        bearing=wording.bearing(case.bearing),
+        lubricant=wording.lubricant(case.lubricant),
+        converged_in=outcome.state.steps,
+        residual=_finite(outcome.state.residual[hottest]),
+    )
+
+
+def readings(case: Case) -> tuple[tuple[Fact, ...], list[dict[str, Any]]]:
+    """Return the facts a case leaves out, and its readings: usual, worst, and each fact alone at its worst."""
+    facts = tuple(fact for fact in missing(case))
+    usual = {fact.name: fact.usual for fact in facts}
+    moving = tuple(fact for fact in facts if fact.usual != fact.worst)
+    worst = {fact.name: fact.worst for fact in facts}
+    return moving, [usual, worst, *({**usual, fact.name: fact.worst} for fact in moving)]
+
+
+def _variants(case: Case, air_properties: Air) -> Variants:
+    moving, said = readings(case)
+    usual = from_rows(rows_of(case, said[0]))
+    parts: list[Points] = [usual, *(from_rows(rows_of(case, reading)) for reading in said[1:])]
+    for name, low, high in uncertain(case):
+        parts += [usual.changed(**{name: getattr(usual, name) * factor}) for factor in (low, high)]
+    return Variants(case, moving, judge(join(parts), air_properties), len(usual))
+
+
+def _limit(variants: Variants, name: str) -> Limit:
+    judged = variants.outcome.judged[name]
+    uses = variants.uses(name)
+    states = limits.state_of(uses)
+    unit, basis = LIMITS[name]
+    state, doubt = int(states[0]), ""
+    if states[1] > state:
+        hinges = [fact for fact in variants.facts if states[variants.single[fact.name]] > state]
+        hinges = hinges or [fact for fact in variants.facts if name in fact.limits]
+        state = NEAR_CODE if states[1] == NEAR_CODE else max(state, UNKNOWN)
+        doubt = wording.doubt(hinges, float(uses[1]), is_open=state != NEAR_CODE)
+    _, low, high = variants.band(np.where(np.isfinite(uses), uses, np.nan))
+    return Limit(
+        name=name,
+        state=STATES[state],
+        use=_finite(uses[0]),
+        demand=_finite(judged.demand[0]),
+        allowed=_finite(judged.allowed[0]),
+        unit=unit,
+        basis=wording.basis(name, variants.case, variants.outcome) or basis,
+        note=wording.join(doubt, wording.limit_note(name, variants.case, variants.outcome), wording.band(low, high)),
+        use_low=_finite(low),
+        use_high=_finite(high),
+    )
+
+
+def _governing(judged: Sequence[Limit], verdict: str) -> str:
+    """The limit with the greatest use; where the verdict is `unknown`, the first that could not be judged."""
+    if verdict == STATES[UNKNOWN]:
+        return next(limit.name for limit in judged if limit.state == verdict)
+    if verdict == STATES[BEYOND]:
+        # A use that is not finite is the greatest there is.
+        judged = [limit for limit in judged if limit.state == verdict]
+    return max(judged, key=lambda limit: float("inf") if limit.use is None else limit.use).name
+
+
+def _operating(variants: Variants, row: int) -> Operating:
+    outcome = variants.outcome
+    state = outcome.state
+    torque = state.viscous_torque + state.load_torque + state.seal_torque + state.churning_torque
+    arrays = {
+        "temperature": state.temperature,
+        "viscosity": state.viscosity,
+        "reference_viscosity": outcome.reference_viscosity,
+        "viscosity_ratio": outcome.kappa,
+        "friction_torque": torque,
+        "friction_power": state.friction_power,
+        "churning_power": state.churning_power,
+        "heat_removed": state.heat_removed,
+    }
+    made: Operating = Operating.of({name: variants.row_band(array, row) for name, array in arrays.items()})
+    return made
+
+
+def _grease(outcome: Outcome, plan: PlanLine) -> Grease:
+    points = outcome.points
+    volume, density = float(points.free_volume[0]), float(points.density[0]) / 1000
+    made: Grease = Grease.of(
+        {
+            "free_volume": volume,
+            "first_fill": plan.first_fill_g,
+            "fill_share": None if plan.first_fill_g is None else plan.first_fill_g / density / volume,
+            "regrease_quantity": plan.regrease_g,
+            "regrease_interval": plan.interval_h,
+        }
+    )
+    return made
+
+
+def _life(variants: Variants) -> Life:
+    outcome = variants.outcome
+    rows = slice(0, variants.rows)
+    a1 = outcome.reliability_factor
+    with np.errstate(all="ignore"):
+        factor = outcome.modified_life / (a1 * outcome.rating_life)
+    made: Life = Life.of(
+        {
+            "load_ratio": float(outcome.load_ratio[rows].max()),
+            "rating_life": float(outcome.rating_life[0]),
+            "contamination_factor": float(outcome.contamination[rows].min()),
+            "life_modification_factor": variants.band(factor),
+            "modified_life": variants.band(outcome.modified_life),
+        }
+    )
+    return made
+
+
+def _finite(value: float) -> float | None:
+    return float(value) if np.isfinite(value) else None

@@ -1,0 +1,380 @@
+"""What a case may say: one dataclass a table, one entry a key, with kind, range and meaning as data on the field.
+
+The reader, the help, the listing of assumptions and the schema all read these fields, so that a key is described once.
+A field is a *fact* of the position (left out: a listed, cautious reading or `unknown`), a *decision* of the user (left
+out: proposed), or a *requirement* (left out: a listed default).
+"""
+
+from __future__ import annotations
+
+import dataclasses
+from collections.abc import Iterator, Sequence
+from dataclasses import dataclass
+from typing import Any
+
+from lubecheck.data import families, lubricants
+from lubecheck.data.bearings import Bearing
+from lubecheck.physics import fatigue, grease_life
+from lubecheck.units import KINDS
+
+SUPPLIES = ("bath", "circulating", "mist")
+RELIEFS = ("open", "closed")
+HOUSINGS = ("pedestal", "split plummer", "flange", "motor end shield", "gearbox wall")
+SERVICES = ("quiet", "normal", "shock")
+
+
+@dataclass(frozen=True, slots=True)
+class Entry:
+    """One key of a case: the kinds or words it takes, the accepted range in the house unit, and what it means."""
+
+    role: str  # "fact", "decision", "requirement" or "label"
+    kinds: tuple[str, ...]  # unit kinds; empty for words and text
+    low: float
+    high: float
+    words: tuple[str, ...]
+    meaning: str
+    example: str
+    is_need: bool
+
+    @property
+    def expected(self) -> str:
+        """What the key takes, in words for a message."""
+        parts = []
+        if self.kinds:
+            kind = KINDS[self.kinds[0]]
+            unit = "" if kind.is_bare else f" {kind.unit}"
+            named = " or ".join(
+                "number" if name in ("share", "number") and len(self.kinds) == 1 else name for name in self.kinds
+            )
+            parts.append(f"a {named}, {self.low:g} to {self.high:g}{unit}, such as {self.example}")
+        if self.words:
+            parts.append("one of " + ", ".join(self.words) if not self.kinds else f"or {' or '.join(self.words)}")
+        return " ".join(parts) or "a text"
+
+
+def _words(answers: Sequence[grease_life.Answer]) -> tuple[str, ...]:
+    return tuple(answer.word for answer in answers)
+
+
+def _entry(
+    role: str,
+    kinds: str | tuple[str, ...] = (),
+    low: float = 0.0,
+    high: float = 0.0,
+    *,
+    words: tuple[str, ...] = (),
+    meaning: str,
+    example: str = "",
+    need: bool = False,
+) -> Any:
+    kinds = (kinds,) if isinstance(kinds, str) else kinds
+    entry = Entry(role, kinds, low, high, words, meaning, example, need)
+    if need:
+        return dataclasses.field(metadata={"entry": entry})
+    return dataclasses.field(default=None, metadata={"entry": entry})
+
+
+@dataclass(frozen=True, slots=True)
+class Amount:
+    """A quantity that may come in more than one kind: its number in the house unit of the kind it came in."""
+
+    value: float
+    kind: str
+    word: str  # the unit the user wrote
+
+    @property
+    def is_calendar(self) -> bool:
+        """A time in days, weeks, months or years runs by the calendar; one in hours or less is running time."""
+        return self.kind == "time" and self.word not in ("h", "hour", "hours", "hr", "min", "s")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class BearingTable:
+    """[bearing]: by designation, or by family and dimensions; figures given here win over the tables."""
+
+    designation: str | None = _entry(
+        "fact", meaning="basic designation by DIN 623-1, with usual suffixes", example='"6309"'
+    )
+    family: str | None = _entry("fact", words=tuple(families.FAMILIES), meaning="family, where no designation is given")
+    bore: float | None = _entry("fact", "length", 3, 2000, meaning="bore diameter d", example='"45 mm"')
+    outside: float | None = _entry("fact", "length", 6, 3000, meaning="outside diameter D", example='"100 mm"')
+    width: float | None = _entry("fact", "length", 1, 1000, meaning="width B", example='"25 mm"')
+    dynamic_rating: float | None = _entry(
+        "fact", "force", 100, 3e7, meaning="basic dynamic load rating C", example='"55.3 kN"'
+    )
+    static_rating: float | None = _entry(
+        "fact", "force", 50, 6e7, meaning="basic static load rating C0", example='"31.5 kN"'
+    )
+    fatigue_limit: float | None = _entry("fact", "force", 1, 5e6, meaning="fatigue load limit Cu", example='"1.34 kN"')
+    mass: float | None = _entry("fact", "mass", 1, 1e7, meaning="mass of the bearing", example='"0.83 kg"')
+    contact_angle: float | None = _entry("fact", "angle", 0, 90, meaning="contact angle", example='"40 deg"')
+    clearance: str | None = _entry("fact", words=("C2", "CN", "C3", "C4", "C5"), meaning="internal clearance class")
+    seal: str | None = _entry("fact", words=("open", "shields", "contact seals"), meaning="seals or shields")
+    cage: str | None = _entry("fact", words=("steel", "brass", "polyamide", "full complement"), meaning="cage")
+    f0: float | None = _entry(
+        "fact", "number", 0.3, 40, meaning="viscous friction factor f0 for an oil bath", example="2.3"
+    )
+    f1: float | None = _entry("fact", "number", 1e-6, 0.02, meaning="load friction factor f1", example="0.0002")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class LubricantTable:
+    """[lubricant]: by name from the tables, by a standard's designation, or with its figures."""
+
+    name: str | None = _entry("fact", meaning="name in the lubricant tables", example='"polyurea-110-2"')
+    designation: str | None = _entry("fact", meaning="designation by a standard", example='"KP2K-30"')
+    kind: str | None = _entry("fact", words=lubricants.LUBRICANT_KINDS, meaning="grease or oil")
+    nu_40: float | None = _entry(
+        "fact",
+        "kinematic viscosity",
+        1.5,
+        20000,
+        meaning="kinematic viscosity of the (base) oil at 40 degC",
+        example='"110 mm^2/s"',
+    )
+    nu_100: float | None = _entry(
+        "fact",
+        "kinematic viscosity",
+        0.8,
+        2000,
+        meaning="kinematic viscosity of the (base) oil at 100 degC",
+        example='"12 mm^2/s"',
+    )
+    index: float | None = _entry("fact", "number", 0, 400, meaning="viscosity index", example="95")
+    thickener: str | None = _entry("fact", words=lubricants.THICKENERS, meaning="thickener of the grease")
+    base_oil: str | None = _entry("fact", words=lubricants.BASE_OILS, meaning="kind of base oil")
+    nlgi: str | None = _entry(
+        "fact", words=("000", "00", "0", "1", "2", "3", "4", "5", "6"), meaning="NLGI consistency grade"
+    )
+    lowest: float | None = _entry(
+        "fact", "temperature", -100, 60, meaning="lowest temperature of use", example='"-30 degC"'
+    )
+    highest: float | None = _entry(
+        "fact", "temperature", 20, 350, meaning="highest temperature of use", example='"140 degC"'
+    )
+    life_reference: float | None = _entry(
+        "fact",
+        "temperature",
+        40,
+        250,
+        example='"70 degC"',
+        meaning="temperature above which grease life halves by steps",
+    )
+    density_15: float | None = _entry(
+        "fact", "density", 600, 2200, meaning="density at 15 degC", example='"890 kg/m^3"'
+    )
+    ep: bool | None = _entry("fact", meaning="proven EP additive: true or false")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Duty:
+    """[[duty]]: one state that the position runs in; several with their shares make a duty cycle."""
+
+    speed: float = _entry("fact", "speed", 0.1, 200_000, meaning="shaft speed", example='"1480 rpm"', need=True)
+    radial_load: float = _entry(
+        "fact", "force", 0, 3e7, meaning="radial load on this bearing", example='"1800 N"', need=True
+    )
+    axial_load: float = _entry(
+        "fact",
+        "force",
+        -3e7,
+        3e7,
+        example='"0 N"',
+        meaning='axial load on this bearing ("0 N" where there is none)',
+        need=True,
+    )
+    share: float | None = _entry("fact", "share", 1e-6, 1, meaning="share of the running time", example='"60 %"')
+    ambient: float | None = _entry(
+        "fact", "temperature", -60, 150, meaning="ambient in this state", example='"40 degC"'
+    )
+    draught: float | None = _entry(
+        "fact", "velocity", 0, 50, meaning="air speed at the housing in this state", example='"2 m/s"'
+    )
+    shaft_temperature: float | None = _entry(
+        "fact",
+        "temperature",
+        -60,
+        300,
+        example='"75 degC"',
+        meaning="temperature of the shaft beside the bearing in this state",
+    )
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Surroundings:
+    """[surroundings]: where the position stands."""
+
+    ambient: float = _entry(
+        "fact", "temperature", -60, 150, meaning="air temperature round the housing", example='"40 degC"', need=True
+    )
+    coldest: float | None = _entry(
+        "fact", "temperature", -80, 60, meaning="coldest temperature of a start", example='"-15 degC"'
+    )
+    draught: float | None = _entry("fact", "velocity", 0, 50, meaning="air speed at the housing", example='"2 m/s"')
+    altitude: float | None = _entry(
+        "fact", "length", -500e3, 5000e3, meaning="height above sea level", example='"300 m"'
+    )
+    dust: str | None = _entry("fact", words=_words(grease_life.DUST), meaning="dust at the position")
+    water: str | None = _entry("fact", words=_words(grease_life.WATER), meaning="water at the position")
+    vibration: str | None = _entry("fact", words=_words(grease_life.VIBRATION), meaning="vibration of the machine")
+    orientation: str | None = _entry("fact", words=_words(grease_life.ORIENTATION), meaning="how the shaft lies")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Housing:
+    """[housing]: how heat leaves, what heat comes in, and where grease can go."""
+
+    kind: str | None = _entry("fact", words=HOUSINGS, meaning="kind of housing, for its outer area")
+    area: float | None = _entry(
+        "fact", "area", 100, 1e8, meaning="outer area that gives off heat", example='"0.12 m^2"'
+    )
+    conductance: float | None = _entry(
+        "fact",
+        "conductance",
+        0.01,
+        1e4,
+        example='"1.4 W/K"',
+        meaning="all paths from the bearing to the ambient together",
+    )
+    void: float | None = _entry(
+        "fact", "volume", 0, 1e7, meaning="space for grease beside the bearing", example='"60 cm^3"'
+    )
+    relief: str | None = _entry("fact", words=RELIEFS, meaning="relief or drain plug while running")
+    machine_heat: float | None = _entry(
+        "fact", "power", 0, 1e6, meaning="heat from the machine into the bearing", example='"12 W"'
+    )
+    shaft_temperature: float | None = _entry(
+        "fact", "temperature", -60, 300, example='"75 degC"', meaning="temperature of the shaft beside the bearing"
+    )
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class GreasePlan:
+    """[grease]: what is, or is planned to be, in the bearing and how often it is renewed."""
+
+    fill: Amount | str | None = _entry(
+        "decision",
+        ("mass", "volume", "share"),
+        0,
+        1e7,
+        words=("unknown",),
+        meaning="grease in the bearing: mass, volume or share of its free volume",
+        example='"15 g"',
+    )
+    housing_fill: float | None = _entry(
+        "decision", "share", 0, 1, meaning="share of the housing's space filled", example='"40 %"'
+    )
+    regrease_amount: Amount | None = _entry(
+        "decision", ("mass", "volume"), 0, 1e7, example='"12 g"', meaning="grease given at each regreasing"
+    )
+    interval: Amount | None = _entry(
+        "decision",
+        "time",
+        1,
+        400_000,
+        example='"18 week"',
+        meaning="time between regreasings: running hours, or calendar days to years",
+    )
+    hours_per_day: float | None = _entry("fact", "time", 0.1, 24, meaning="running time in a day", example='"16 h"')
+    stroke: Amount | None = _entry(
+        "fact",
+        ("mass", "volume"),
+        0.05,
+        50,
+        example='"1.2 g"',
+        meaning="what one stroke of your grease gun gives, weighed",
+    )
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class OilPlan:
+    """[oil]: how the oil reaches the bearing and how often it is changed."""
+
+    supply: str | None = _entry("fact", words=SUPPLIES, meaning="how the oil is supplied")
+    level: float | None = _entry(
+        "fact",
+        "length",
+        -500,
+        2000,
+        example='"0 mm"',
+        meaning="oil level at rest above (+) or below (-) the centre of the lowest element",
+    )
+    flow: float | None = _entry("fact", "flow", 0, 1e4, meaning="oil flow through the bearing", example='"1.5 l/min"')
+    inlet: float | None = _entry(
+        "fact", "temperature", -20, 150, meaning="oil temperature at the inlet", example='"45 degC"'
+    )
+    interval: Amount | None = _entry(
+        "decision", "time", 1, 400_000, meaning="time between oil changes", example='"6 month"'
+    )
+    hours_per_day: float | None = _entry("fact", "time", 0.1, 24, meaning="running time in a day", example='"16 h"')
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Cleanliness:
+    """[cleanliness]: what dirt the lubricant carries."""
+
+    setting: str | None = _entry("fact", words=fatigue.SETTINGS, meaning="cleanliness by ISO 281 annex A")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Requirements:
+    """[limits]: the user's own limits, replacing the defaults."""
+
+    life: float | None = _entry(
+        "requirement", "time", 10, 1e6, meaning="modified rating life wanted", example='"40000 h"'
+    )
+    reliability: float | None = _entry(
+        "requirement", "share", 0.9, 0.9995, meaning="reliability of that life", example='"90 %"'
+    )
+    highest_temperature: float | None = _entry(
+        "requirement", "temperature", 20, 350, example='"95 degC"', meaning="highest bearing temperature"
+    )
+    least_viscosity_ratio: float | None = _entry(
+        "requirement", "number", 0.1, 10, example="1.0", meaning="least viscosity ratio kappa"
+    )
+    static_safety: float | None = _entry(
+        "requirement", "number", 0.3, 20, meaning="least static safety S0", example="2"
+    )
+    service: str | None = _entry("requirement", words=SERVICES, meaning="class of running for static safety")
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Case:
+    """One bearing position, as the user described it."""
+
+    title: str = ""
+    note: str = ""
+    bearing: Bearing
+    lubricant: lubricants.Lubricant
+    duty: tuple[Duty, ...]
+    surroundings: Surroundings
+    housing: Housing = Housing()
+    grease: GreasePlan = GreasePlan()
+    oil: OilPlan = OilPlan()
+    cleanliness: Cleanliness = Cleanliness()
+    limits: Requirements = Requirements()
+    given: tuple[tuple[str, str], ...] = ()  # "table.key" and the text the user wrote, in their order
+
+    @property
+    def is_grease(self) -> bool:
+        """The position is grease lubricated."""
+        return self.lubricant.kind == "grease"
+
+
+TABLES: dict[str, type] = {
+    "bearing": BearingTable,
+    "lubricant": LubricantTable,
+    "duty": Duty,
+    "surroundings": Surroundings,
+    "housing": Housing,
+    "grease": GreasePlan,
+    "oil": OilPlan,
+    "cleanliness": Cleanliness,
+    "limits": Requirements,
+}
+
+
+def entries(table: type) -> Iterator[tuple[str, Entry]]:
+    """Return each key of a table with its entry."""
+    for field in dataclasses.fields(table):
+        yield field.name, field.metadata["entry"]

@@ -1,0 +1,221 @@
+"""The kernel: points in, outcome out, one vectorised pass for a single check and for a million positions alike."""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+import numpy as np
+
+from lubecheck.data import air
+from lubecheck.model import limits
+from lubecheck.model.equilibrium import Air, Equilibrium, solve
+from lubecheck.model.limits import Judged
+from lubecheck.model.points import Codes, Flags, Points
+from lubecheck.physics import fatigue, film, grease_amount, grease_life, loads
+from lubecheck.units import DAY_H, Array
+
+PROPOSED_SHARE = 0.8  # of the allowed interval that is proposed: leaves a fifth for what varies, so that it is `within`
+
+
+@dataclass(frozen=True, slots=True)
+class Outcome:
+    """All that the kernel works out: arrays in rows, and arrays in positions."""
+
+    points: Points
+    state: Equilibrium
+    # rows
+    reference_viscosity: Array
+    kappa: Array
+    contamination: Array
+    life_factor: Array
+    load_ratio: Array
+    # positions
+    hottest: Codes  # row of the operating point
+    rating_life: Array
+    modified_life: Array
+    allowed_interval: Array  # running hours, before any plan
+    interval: Array  # planned, or proposed
+    proposed_interval: Array
+    proposed_regrease: Array  # g, by the side rule
+    reliability_factor: Array  # a1
+    judged: Mapping[str, Judged]
+    verdict: Codes  # position in limits.STATES
+    governing: Codes  # position in the order of `judged`
+
+    @property
+    def names(self) -> tuple[str, ...]:
+        """The limits, in the order they are shown."""
+        return tuple(self.judged)
+
+
+def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
+    """Solve the equilibrium of every row and judge every limit of every position."""
+    p = points
+    state = solve(p, air_properties)
+    with np.errstate(all="ignore"):
+        nu_1 = film.reference_viscosity.plain(p.speed, p.pitch_diameter)
+        kappa = film.viscosity_ratio.plain(nu=state.viscosity, nu_1=nu_1)
+        e_c, factor = _life_factor(p, state, kappa)
+        load_ratio = state.equivalent_load / p.dynamic_rating
+        rating, modified = _lives(p, state, load_ratio, factor)
+        allowed = _allowed_interval(p, state, load_ratio)
+        planned = p.interval[p.starts]
+        is_grease = p.is_grease[p.starts] > 0
+        is_sealed = is_grease & (p.is_sealed[p.starts] > 0)
+        # A sealed bearing's grease has to last as long as the bearing; a plan to regrease it is beyond by itself.
+        proposed = _proposed(p, allowed)
+        wanted = np.where(is_sealed, p.life_target[p.starts], proposed)
+        interval = np.where(np.isnan(planned), wanted, planned)
+        allowed = np.where(is_sealed & ~np.isnan(planned), 0.0, allowed)
+        has_interval = is_grease | (p.is_bath[p.starts] > 0) | ~np.isnan(planned)
+        everywhere = np.ones(p.cases, dtype=bool)
+        judged = {
+            "film": limits.reduce(p, limits.film(p, kappa)),
+            "temperature": limits.reduce(p, limits.temperature(p, state)),
+            "cold_start": limits.reduce(p, limits.cold_start(p)),
+            "fill": limits.reduce(p, limits.fill(p)),
+            "oil_level": limits.reduce(p, limits.oil_level(p)),
+            "interval": limits.of_positions(p, interval, allowed, has_interval),
+            "regrease_amount": limits.reduce(p, limits.regrease(p)),
+            "speed": limits.reduce(p, limits.rotational_speed(p)),
+            "minimum_load": limits.reduce(p, limits.minimum_load(p, state)),
+            "static_load": limits.reduce(p, limits.static_load(p)),
+            "fatigue_life": limits.of_positions(p, p.life_target[p.starts], modified, everywhere),
+        }
+    verdict, governing = _verdict(judged)
+    return Outcome(
+        points=p,
+        state=state,
+        reference_viscosity=nu_1,
+        kappa=kappa,
+        contamination=e_c,
+        life_factor=factor,
+        load_ratio=load_ratio,
+        hottest=_hottest(p, state),
+        rating_life=rating,
+        modified_life=modified,
+        allowed_interval=allowed,
+        interval=interval,
+        proposed_interval=proposed,
+        proposed_regrease=grease_amount.regrease_quantity.plain(outside=p.outside[p.starts], width=p.width[p.starts]),
+        reliability_factor=fatigue.reliability_factor.plain(p.reliability[p.starts]),
+        judged=judged,
+        verdict=verdict,
+        governing=governing,
+    )
+
+
+def _life_factor(points: Points, state: Equilibrium, kappa: Array) -> tuple[Array, Array]:
+    """Return e_C and a_ISO of every row, NaN outside the range of the standard."""
+    p = points
+    e_c = fatigue.contamination_factor.plain(kappa, p.pitch_diameter, p.setting)
+    with_additive = fatigue.effective_viscosity_ratio.plain(kappa, e_c, p.additive)
+    factors = [
+        fatigue.life_modification_factor.plain(
+            ratio, e_c, fatigue_load_limit=p.fatigue_limit, load=state.equivalent_load, kind=p.kind
+        )
+        for ratio in (kappa, with_additive)
+    ]
+    factor = fatigue.factor_with_additive.plain(without=factors[0], with_additive=factors[1])
+    factor = np.where(p.additive > 0, factor, factors[0])
+    is_valid = ~fatigue.contamination_factor.outside(viscosity_ratio=kappa)
+    return np.where(is_valid, e_c, np.nan), np.where(is_valid, factor, np.nan)
+
+
+def _lives(points: Points, state: Equilibrium, load_ratio: Array, factor: Array) -> tuple[Array, Array]:
+    """Return the basic and the modified rating life of every position, by the linear sum of damage over its rows."""
+    p = points
+    revolutions = fatigue.rating_life.plain(
+        dynamic_rating=p.dynamic_rating, load=state.equivalent_load, exponent=p.exponent
+    )
+    hours = fatigue.life_hours.plain(revolutions, p.speed)
+    a1 = fatigue.reliability_factor.plain(p.reliability)
+    modified = fatigue.modified_life.plain(basic_life=hours, reliability_factor=a1, life_modification_factor=factor)
+    modified = np.where((load_ratio <= fatigue.GREATEST_LOAD_RATIO) & takes_loads(p), modified, np.nan)
+    return _damage_sum(p, hours), _damage_sum(p, modified)
+
+
+def takes_loads(points: Points) -> Flags:
+    """Return where the load rule of the family counts every load that there is."""
+    p = points
+    axial_counts = loads.TAKES_AXIAL[p.rule] | (p.axial_load == 0)
+    flags: Flags = axial_counts & (loads.TAKES_RADIAL[p.rule] | (p.radial_load == 0))
+    return flags
+
+
+def _damage_sum(points: Points, hours: Array) -> Array:
+    """Return the time in which the shares of damage of a position's rows add up to one."""
+    rate: Array = np.add.reduceat(points.share / hours, points.starts)
+    whole: Array = np.add.reduceat(points.share, points.starts)
+    return whole / rate
+
+
+def _allowed_interval(points: Points, state: Equilibrium, load_ratio: Array) -> Array:
+    """Return the running hours after which the lubricant of every position has to be renewed.
+
+    Open grease bearings by the classical line, sealed ones by the life of their grease, baths by oil ageing; NaN where
+    no line covers the row.
+    """
+    p = points
+    open_bearing = _classical(p, state, load_ratio)
+    sealed = _sealed_life(state.temperature)
+    bath = grease_life.bath_change_interval.plain(state.temperature) * p.hours_per_day / DAY_H
+    bath = np.where(grease_life.bath_change_interval.outside(temperature=state.temperature), np.nan, bath)
+    is_sealed, is_grease = p.is_sealed > 0, p.is_grease > 0
+    hours = np.select([is_grease & is_sealed, is_grease, p.is_bath > 0], [sealed, open_bearing, bath], np.nan)
+    allowed = _damage_sum(p, hours)
+    # Grease that is renewed has a calendar ceiling; a sealed bearing keeps its own for life.
+    return np.where(is_sealed[p.starts], allowed, np.minimum(allowed, p.ceiling[p.starts]))
+
+
+def _classical(points: Points, state: Equilibrium, load_ratio: Array) -> Array:
+    p = points
+    hours = grease_life.classical_interval.plain(p.speed, p.bore, p.interval_family)
+    heat = grease_life.temperature_halving.plain(
+        temperature=state.temperature, reference=p.life_reference, step=grease_life.HALVING_STEP
+    )
+    is_outside = grease_life.classical_share.plain(p.speed, p.bore) > grease_life.CLASSICAL_GREATEST_SHARE
+    is_outside |= grease_life.load_factor.outside(load_ratio=load_ratio)
+    hours = hours * heat * p.interval_factor * grease_life.load_factor.plain(load_ratio)
+    return np.where(is_outside, np.nan, hours)
+
+
+def _sealed_life(temperature: Array) -> Array:
+    """L10 of the grease in a bearing that is never regreased; below the range of the equation its cool end stands."""
+    coolest, hottest = grease_life.booser_median_life.valid["temperature"]
+    median = grease_life.booser_median_life.plain(np.maximum(temperature, coolest), 0.0)
+    to_l10 = grease_life.weibull_scale.plain(
+        known=grease_life.L50, wanted=grease_life.L10, slope=grease_life.WEIBULL_SLOPE
+    )
+    return np.where(temperature <= hottest, median * to_l10, np.nan)
+
+
+def _proposed(points: Points, allowed: Array) -> Array:
+    """Return a fifth less than the allowed interval, in whole weeks of the calendar where it is as long as one."""
+    week = 7 * points.hours_per_day[points.starts]
+    hours = PROPOSED_SHARE * allowed
+    return np.where(hours >= week, np.floor(hours / week) * week, hours)
+
+
+def _hottest(points: Points, state: Equilibrium) -> Codes:
+    """Return the row of every position that runs hottest; one without an equilibrium counts as hottest of all."""
+    heat = np.where(state.is_found, state.temperature, np.inf)
+    order = np.lexsort((-np.arange(len(heat)), heat, points.case))
+    hottest: Codes = order[np.r_[points.starts[1:], len(points)] - 1]
+    return hottest
+
+
+def _verdict(judged: Mapping[str, Judged]) -> tuple[Codes, Codes]:
+    """Return the worst state of every position and the limit that governs it.
+
+    The governing limit is the one with the greatest use; where the verdict is `unknown`, the first that could not be
+    judged.
+    """
+    states = np.stack([np.where(limit.applies, limit.state, limits.WITHIN) for limit in judged.values()])
+    uses = np.stack([np.where(limit.applies, limit.use, -1.0) for limit in judged.values()])
+    verdict = states.max(axis=0)
+    known = np.where(np.isnan(uses), -1.0, uses)
+    greatest = known.argmax(axis=0)
+    first_unknown = (states == limits.UNKNOWN).argmax(axis=0)
+    return verdict, np.where(verdict == limits.UNKNOWN, first_unknown, greatest)

@@ -1,0 +1,163 @@
+"""The limits: the use of each, demand over what is allowed, 1.0 at the limit.
+
+Each function takes the points, the equilibrium and what was derived from it, and returns a `Use` in rows. NaN means
+"could not be judged", infinity "beyond, whatever the number". `reduce` brings rows to positions: the worst row governs,
+and a row that could not be judged makes the position unknown unless another row is beyond.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from lubecheck.model.equilibrium import Equilibrium
+from lubecheck.model.points import Codes, Flags, Points
+from lubecheck.physics import churning, grease_amount, loads
+from lubecheck.units import Array
+
+NEAR = 0.85  # of a limit: from here on the state is `near`
+STATES = ("within", "near", "unknown", "beyond")  # in rising order of gravity
+WITHIN, NEAR_CODE, UNKNOWN, BEYOND = range(4)
+
+COLD_REFERENCE = 20.0  # degC from which a lower temperature limit counts down
+ELEMENT_SHARE = 0.3  # rolling element diameter over D - d: estimate, 0.25 to 0.33
+REGREASE_RANGE = (0.4, 2.0)  # of the side rule: from the weekly rule of thumb to twice the usual dose, estimate
+
+
+@dataclass(frozen=True, slots=True)
+class Use:
+    """A limit in arrays: what is demanded, what is allowed, and the ratio that judges.
+
+    Where something has to be there (film, safety, a least amount) the demand is what is asked for and the allowance
+    what there is, so that the use is the demand over the allowance for every ratio.
+    """
+
+    demand: Array
+    allowed: Array
+    use: Array
+    applies: Flags  # the limit exists for the row or position
+
+
+@dataclass(frozen=True, slots=True)
+class Judged:
+    """A limit brought to positions."""
+
+    demand: Array
+    allowed: Array
+    use: Array
+    applies: Flags
+    row: Codes  # the row that governs
+    state: Codes  # position in STATES
+
+
+def state_of(use: Array) -> Codes:
+    """Return the state of each use, from positive evidence only: what is not a number is unknown."""
+    return np.select([use <= NEAR, use <= 1.0, use > 1.0], [WITHIN, NEAR_CODE, BEYOND], UNKNOWN).astype(np.intp)
+
+
+def reduce(points: Points, limit: Use) -> Judged:
+    """Bring the rows of each position to one: beyond before unknown before the greatest use."""
+    if len(limit.use) == points.cases == len(points):
+        rows = np.arange(len(points))
+        return Judged(limit.demand, limit.allowed, limit.use, limit.applies, rows, state_of(limit.use))
+    # Rank: beyond by its use, then unknown just above 1, then the rest by use.
+    rank = np.where(np.isnan(limit.use), 1.0 + 1e-9, limit.use)
+    order = np.lexsort((-np.arange(len(rank)), rank, points.case))
+    last = np.r_[points.starts[1:], len(points)] - 1
+    rows = order[last]
+    use = limit.use[rows]
+    applies = np.logical_or.reduceat(limit.applies, points.starts)
+    return Judged(limit.demand[rows], limit.allowed[rows], use, applies, rows, state_of(use))
+
+
+def film(points: Points, kappa: Array) -> Use:
+    """Viscosity ratio that is asked for over the one that is there."""
+    return Use(points.least_kappa, kappa, points.least_kappa / kappa, np.ones(len(points), dtype=bool))
+
+
+def temperature(points: Points, state: Equilibrium) -> Use:
+    """Rise over the rise to the lowest top temperature of lubricant, cage, seal, rings and the user."""
+    allowed = points.highest - points.ambient
+    use = np.where(allowed > 0, (state.temperature - points.ambient) / allowed, np.inf)
+    use = np.where(np.isnan(points.highest), np.nan, np.where(state.is_found, use, np.inf))
+    return Use(state.temperature, points.highest, use, np.ones(len(points), dtype=bool))
+
+
+def cold_start(points: Points) -> Use:
+    """Depth below 20 degC over the depth that the lubricant may be used at."""
+    depth = COLD_REFERENCE - points.coldest
+    allowed = COLD_REFERENCE - points.lowest
+    use = np.where(allowed > 0, np.maximum(0.0, depth) / allowed, np.where(depth <= allowed, 0.0, np.inf))
+    use = np.where(np.isnan(depth) | np.isnan(allowed), np.nan, use)
+    return Use(points.coldest, points.lowest, use, np.ones(len(points), dtype=bool))
+
+
+def fill(points: Points) -> Use:
+    """Grease in the bearing against the band that the speed allows; the worse side counts.
+
+    Grease that finds room in the housing, or an open relief, may be more: it clears by itself.
+    """
+    p = points
+    lower, upper = grease_amount.allowed_fill.plain(
+        speed=p.speed, speed_limit=p.speed_limit, pitch_diameter=p.pitch_diameter
+    )
+    room = np.where(p.is_open > 0, 1.0, (1.0 - p.housing_fill) * p.void / p.free_volume)
+    upper = np.minimum(1.0, np.maximum(upper, churning.CLEAR_SHARE + room))
+    applies = (p.is_grease > 0) & ~((p.is_sealed > 0) & (p.is_proposed_fill > 0))
+    return _two_sided(p.fill, lower, upper, applies)
+
+
+def oil_level(points: Points) -> Use:
+    """Oil level at rest, from the centre of the lowest rolling element, against half an element up or down."""
+    allowed = ELEMENT_SHARE * (points.outside - points.bore) / 2
+    return Use(points.level, np.copysign(allowed, points.level), np.abs(points.level) / allowed, points.is_bath > 0)
+
+
+def regrease(points: Points) -> Use:
+    """Grease given at each regreasing against a band round the side rule, never more than what can clear."""
+    p = points
+    dose = grease_amount.regrease_quantity.plain(outside=p.outside, width=p.width)
+    low, high = REGREASE_RANGE
+    room = (1.0 - churning.CLEAR_SHARE) * p.free_volume * p.density / 1000
+    upper = np.minimum(high * dose, np.maximum(room, dose))
+    applies = (p.is_grease > 0) & ~np.isnan(p.regrease_mass) & (p.is_sealed == 0)
+    return _two_sided(p.regrease_mass, low * dose, upper, applies)
+
+
+def _two_sided(amount: Array, lower: Array, upper: Array, applies: Flags) -> Use:
+    """Judge an amount that can be too much or too little: the amount over the upper bound, or the lower one over it."""
+    too_much, too_little = amount / upper, lower / amount
+    is_much = too_much >= too_little
+    return Use(
+        np.where(is_much, amount, lower), np.where(is_much, upper, amount), np.maximum(too_much, too_little), applies
+    )
+
+
+def rotational_speed(points: Points) -> Use:
+    """Speed parameter n dm over what the family takes with this lubricant."""
+    use = points.speed / points.speed_limit
+    return Use(points.speed, points.speed_limit, use, np.ones(len(points), dtype=bool))
+
+
+def minimum_load(points: Points, state: Equilibrium) -> Use:
+    """Least load that makes the elements roll over the load that is there."""
+    least = points.minimum_load_share * points.dynamic_rating
+    return Use(least, state.equivalent_load, least / state.equivalent_load, np.ones(len(points), dtype=bool))
+
+
+def static_load(points: Points) -> Use:
+    """Static safety that is asked for over the one that is there."""
+    load = loads.static_equivalent_load.plain(
+        radial_load=points.radial_load, axial_load=points.axial_load, contact_angle=points.contact_angle,
+        rule=points.rule,
+    )  # fmt: skip
+    safety = points.static_rating / load
+    return Use(points.static_safety, safety, points.static_safety / safety, np.ones(len(points), dtype=bool))
+
+
+def of_positions(points: Points, demand: Array, allowed: Array, applies: Flags) -> Judged:
+    """Return a limit that exists once a position: demand over allowed."""
+    with np.errstate(all="ignore"):
+        use = demand / allowed
+    return Judged(demand, allowed, use, applies, points.starts, state_of(use))

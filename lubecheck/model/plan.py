@@ -1,0 +1,104 @@
+"""The plan: grams, strokes, hours and weeks of the line that goes on the maintenance plan."""
+
+from __future__ import annotations
+
+import math
+
+from lubecheck.model.entries import Case
+from lubecheck.model.kernel import Outcome
+from lubecheck.model.points import volume_of
+from lubecheck.model.result import PlanLine
+
+
+def strokes_of(grams: float | None, grams_per_stroke: float | None) -> int | None:
+    """Return whole strokes of the gun that give no more than the grams, at least one.
+
+    >>> strokes_of(12.5, 1.2)
+    10
+    """
+    if grams is None or grams_per_stroke is None:
+        return None
+    # A hair is added before rounding down, so that 12 g at 1.2 g a stroke are 10 strokes and not 9.
+    return max(1, math.floor(grams / grams_per_stroke + 1e-9))
+
+
+def weeks_of(hours: float | None, hours_per_day: float) -> float | None:
+    """Return running hours as calendar weeks, rounded down to a tenth.
+
+    >>> weeks_of(2000.0, 16.0)
+    17.8
+    """
+    return None if hours is None else math.floor(hours / (7 * hours_per_day) * 10 + 1e-9) / 10
+
+
+def plan_line(case: Case, outcome: Outcome) -> PlanLine:
+    """Return the plan line of the first position of an outcome.
+
+    What the user planned stands on it where it is not beyond its limit; else the proposal does, and says so.
+    """
+    points = outcome.points
+    hours_per_day = float(points.hours_per_day[0])
+    proposed = []
+
+    def chosen(limit: str, planned: float, proposal: float) -> float | None:
+        judged = outcome.judged[limit]
+        if math.isnan(planned) or judged.use[0] > 1:
+            proposed.append(limit)
+            return _finite(proposal)
+        return _finite(planned)
+
+    fill = regrease = stroke = interval = None
+    if case.is_grease:
+        density = float(points.density[0]) / 1000
+        grams = points.free_volume[0] * density
+        stated = math.nan if case.grease.fill is None or isinstance(case.grease.fill, str) else points.fill[0]
+        fill = chosen("fill", stated * grams, points.proposed_fill[0] * grams)
+        regrease = chosen("regrease_amount", points.regrease_mass[0], outcome.proposed_regrease[0])
+        if case.grease.stroke is not None:
+            stroke = volume_of(case.grease.stroke, 1.0, density) * density
+    if outcome.judged["interval"].applies[0]:
+        interval = chosen("interval", points.interval[0], outcome.proposed_interval[0])
+    if case.is_grease and points.is_sealed[0]:
+        regrease = interval = None
+        proposed = [name for name in proposed if name == "fill"]
+    return PlanLine(
+        lubricant=case.lubricant.name,
+        first_fill_g=fill,
+        first_fill_strokes=strokes_of(fill, stroke),
+        regrease_g=regrease,
+        regrease_strokes=strokes_of(regrease, stroke),
+        stroke_g=stroke,
+        interval_h=interval,
+        interval_weeks=weeks_of(interval, hours_per_day),
+        hours_per_day=hours_per_day,
+        is_proposed=tuple(proposed),
+        steps=_steps(case, is_sealed=bool(points.is_sealed[0])),
+    )
+
+
+def _steps(case: Case, *, is_sealed: bool) -> tuple[str, ...]:
+    """Return what to do, in order."""
+    if not case.is_grease:
+        return (
+            "Isolate and lock out the machine; let the oil cool to hand warm",
+            "Drain, wipe out the sump, refill with the same oil to the middle of the lowest rolling element at rest",
+        )
+    if is_sealed:
+        return ("Do not regrease: the bearing is closed on both sides; replace it at the end of its grease life",)
+    relief = {
+        "open": "Open the relief plug and clear it of hard grease",
+        "closed": "There is no open relief: give no more than the stated amount, in several small portions",
+        None: "Look for a relief or drain plug and open it; without one give no more than the stated amount",
+    }[case.housing.relief]
+    return (
+        "Wipe the nipple and the gun clean; check that the grease is the one on this line",
+        relief,
+        "Grease slowly while the shaft turns where that is safe and the site allows it, else at standstill",
+        "Run until the temperature has risen, levelled and turned over"
+        + ("" if case.housing.relief == "closed" else "; then close the plug")
+        + "; wipe off the surplus",
+    )
+
+
+def _finite(value: float) -> float | None:
+    return float(value) if math.isfinite(value) else None

@@ -1,0 +1,435 @@
+"""Points: the struct of arrays that the kernel takes, one row a duty point.
+
+Every row carries all that is known of its position, so that rows of different bearings, lubricants and readings mix in
+one call. All values are in house units; NaN stands for "not known", and what depends on it is judged `unknown`.
+"""
+
+from __future__ import annotations
+
+import dataclasses
+import math
+from collections.abc import Iterable, Mapping, Sequence
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+from numpy.typing import NDArray
+
+from lubecheck.data.bearings import Bearing
+from lubecheck.data.families import FAMILIES, Family
+from lubecheck.model.assumptions import HOTTEST_SHAFT, HOUSING_AREA, SMALLEST_AREA
+from lubecheck.model.entries import Amount, Case, Duty
+from lubecheck.physics import cooling, fatigue, grease_amount, grease_life, loads, viscosity
+from lubecheck.units import Array
+
+Codes = NDArray[np.intp]
+Flags = NDArray[np.bool_]
+
+# Position of a family's interval factor K in the classical formula's own order.
+INTERVAL_FAMILY = {factor: code for code, factor in enumerate(grease_life.CLASSICAL_FACTOR.values())}
+
+# What the user answers about the surroundings, and the factor on the grease interval that each answer stands for.
+INTERVAL_ANSWERS = {
+    "dust": grease_life.DUST,
+    "water": grease_life.WATER,
+    "vibration": grease_life.VIBRATION,
+    "orientation": grease_life.ORIENTATION,
+}
+
+# Highest temperatures of parts, degC: common practice for polyamide 66 cages and nitrile lip seals.
+POLYAMIDE_LIMIT = 120.0
+NITRILE_LIMIT = 100.0
+
+# What a row's highest temperature comes from: words and source, in the order of Points.limit_origin.
+LIMIT_ORIGINS: tuple[tuple[str, str], ...] = (
+    ("lubricant", "din-51825"),
+    ("cage of polyamide", "common-practice"),
+    ("seals of nitrile rubber", "common-practice"),
+    ("dimensional stability of the rings", "common-practice"),
+    ("your own limit", "user"),
+)
+
+DEFAULT_LIFE = 40_000.0  # h, machines in continuous service: common practice
+DEFAULT_RELIABILITY = 0.9  # ISO 281: basic rating life
+DEFAULT_KAPPA = 1.0  # common practice: kappa 1 to 4 in design; below 1 the surfaces touch
+FIN_LENGTH = 2.0  # bores of bare shaft on the free side that act as a fin: estimate, 0 to 4
+SHAFT_COEFFICIENT = 15.0  # W/(m^2*K), turning shaft in air, radiation included: estimate, 10 to 30
+OIL_HEAT_CAPACITY = 1900.0  # J/(kg*K), mineral oil at 50 degC; 1700 to 2100, handbooks, from memory
+STREAM_CONTACT = 0.5  # share of its warming that circulating oil takes at the bearing: estimate, 0.3 to 0.8
+RUN_IN_GREASE = 0.5  # of the oil-bath f0, Harris, range 0.35 to 0.7
+MIST = 0.5  # of the oil-bath f0, Harris
+VERTICAL_BATH = 2.0  # of the oil-bath f0 for a vertical shaft in a bath or jet, Harris
+PROPOSED_HOUSING_FILL = 0.4  # common practice, 30 to 50 %
+
+
+@dataclass(frozen=True, slots=True)
+class Points:
+    """One row a duty point; all arrays have the same length."""
+
+    case: Codes  # which position the row belongs to: 0, 1, 2 ... in rising order
+    share: Array  # of the running time
+    # duty
+    speed: Array
+    radial_load: Array
+    axial_load: Array
+    # bearing
+    bore: Array
+    outside: Array
+    width: Array
+    pitch_diameter: Array
+    dynamic_rating: Array
+    static_rating: Array
+    fatigue_limit: Array
+    contact_angle: Array
+    f0_load: Array
+    rule: Codes
+    kind: Codes
+    exponent: Array
+    f0: Array  # for the lubrication at hand
+    f1: Array
+    minimum_load_share: Array
+    speed_limit: Array  # rpm, of the family with the lubricant at hand
+    interval_family: Codes
+    free_volume: Array
+    is_sealed: Array  # shielded or sealed on both sides
+    rubbing_seals: Array
+    # lubricant
+    is_grease: Array
+    walther_a: Array
+    walther_b: Array
+    density: Array
+    lowest: Array
+    highest: Array  # of lubricant, cage, seals, rings and the user's limit
+    limit_origin: Codes
+    life_reference: Array
+    yield_stress: Array
+    additive: Codes
+    # surroundings and heat
+    ambient: Array
+    coldest: Array
+    draught: Array
+    pressure: Array
+    housing_area: Array  # NaN where the conductance is given
+    conductance: Array  # NaN where the area is known
+    shaft_temperature: Array
+    shaft_conductance: Array  # towards the machine, to shaft_temperature
+    fin_conductance: Array  # of the free shaft end, to the ambient
+    oil_inlet: Array
+    oil_conductance: Array
+    machine_heat: Array
+    interval_factor: Array  # dust, water, vibration, orientation together
+    # amounts
+    fill: Array
+    void: Array
+    housing_fill: Array
+    is_open: Array
+    proposed_fill: Array
+    is_proposed_fill: Array
+    interval: Array  # running hours; NaN where none is planned
+    hours_per_day: Array
+    regrease_mass: Array  # g; NaN where none is planned
+    is_bath: Array
+    level: Array
+    # requirements
+    setting: Codes
+    life_target: Array
+    reliability: Array
+    least_kappa: Array
+    static_safety: Array
+    ceiling: Array  # running hours of the calendar ceiling
+    # factors of uncertain inputs, 1 nominal
+    cooling_factor: Array
+    f0_factor: Array
+    f1_factor: Array
+    churning_factor: Array
+
+    def __len__(self) -> int:
+        return len(self.speed)
+
+    @property
+    def cases(self) -> int:
+        """How many positions the rows belong to."""
+        return int(self.case[-1]) + 1 if len(self) else 0
+
+    @property
+    def starts(self) -> Codes:
+        """The first row of each position."""
+        return np.flatnonzero(np.r_[True, np.diff(self.case) > 0])
+
+    def changed(self, **values: Any) -> Points:
+        """Return the points with some fields replaced; a scalar is broadcast to all rows."""
+        return dataclasses.replace(
+            self,
+            **{key: np.broadcast_to(np.asarray(value, getattr(self, key).dtype), (len(self),))
+               for key, value in values.items()},
+        )  # fmt: skip
+
+    def take(self, rows: Any) -> Points:
+        """Return some of the rows; the positions are numbered anew."""
+        taken = {field.name: getattr(self, field.name)[rows] for field in dataclasses.fields(self)}
+        taken["case"] = np.unique(taken["case"], return_inverse=True)[1].astype(np.intp)
+        return Points(**taken)
+
+
+_CODES = {field.name for field in dataclasses.fields(Points) if field.type == "Codes"}
+
+
+def from_rows(rows: Sequence[Mapping[str, float]]) -> Points:
+    """Return points from one mapping a row."""
+    columns: dict[str, Any] = {}
+    for field in dataclasses.fields(Points):
+        dtype = np.intp if field.name in _CODES else np.float64
+        columns[field.name] = np.array([row[field.name] for row in rows], dtype=dtype)
+    return Points(**columns)
+
+
+def join(parts: Iterable[Points]) -> Points:
+    """Return several points as one, the positions numbered on."""
+    parts = list(parts)
+    columns = {
+        field.name: np.concatenate([getattr(part, field.name) for part in parts])
+        for field in dataclasses.fields(Points)
+    }
+    offsets = np.cumsum([0, *(part.cases for part in parts[:-1])])
+    columns["case"] = np.concatenate([part.case + offset for part, offset in zip(parts, offsets, strict=True)])
+    return Points(**columns)
+
+
+def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dict[str, float]]:
+    """Return the rows of one case under one reading of the facts it leaves out.
+
+    `reading` maps the name of a fact ("[housing] void") to the value it is read as.
+    """
+    shared = _bearing_columns(case.bearing, reading)
+    family = FAMILIES[case.bearing.family]
+    shared |= _lubricant_columns(case)
+    shared |= _surroundings_columns(case, reading)
+    shared |= _housing_columns(case, reading, shared)
+    shared |= _requirement_columns(case, reading, family)
+    rows = []
+    for duty in case.duty:
+        row = dict(shared)
+        row |= _duty_columns(case, duty, reading, shared)
+        row |= _friction_columns(case, reading)
+        row |= _amount_columns(case, reading, row)
+        row |= {"case": number, "cooling_factor": 1.0, "f0_factor": 1.0, "f1_factor": 1.0, "churning_factor": 1.0}
+        rows.append(row)
+    return rows
+
+
+def _known(value: float | None) -> float:
+    return math.nan if value is None else float(value)
+
+
+def _bearing_columns(bearing: Bearing, reading: Mapping[str, Any]) -> dict[str, float]:
+    family = FAMILIES[bearing.family]
+    low = {key: bearing.estimated.get(key, (1.0, 1.0))[0] if reading.get("[bearing] ratings") == "low" else 1.0
+           for key in ("dynamic_rating", "static_rating", "fatigue_limit")}  # fmt: skip
+    volume = grease_amount.free_volume.plain(
+        bore=bearing.bore, outside=bearing.outside, width=bearing.width, mass=bearing.mass
+    )
+    return {
+        "bore": bearing.bore,
+        "outside": bearing.outside,
+        "width": bearing.width,
+        "pitch_diameter": (bearing.bore + bearing.outside) / 2,
+        "dynamic_rating": bearing.dynamic_rating * low["dynamic_rating"],
+        "static_rating": bearing.static_rating * low["static_rating"],
+        "fatigue_limit": bearing.fatigue_limit * low["fatigue_limit"],
+        "contact_angle": bearing.contact_angle or 0.0,
+        "f0_load": bearing.f0_load,
+        "rule": loads.RULES.index(bearing.load_rule),
+        "kind": fatigue.KINDS.index(family.kind),
+        "exponent": family.life_exponent,
+        "minimum_load_share": family.minimum_load_share,
+        "interval_family": INTERVAL_FAMILY[family.interval_factor],
+        "free_volume": float(volume),
+        "is_sealed": float(bearing.seal != "open"),
+        "rubbing_seals": 2.0 if bearing.seal == "contact seals" else 0.0,
+    }
+
+
+def _lubricant_columns(case: Case) -> dict[str, float]:
+    lubricant = case.lubricant
+    family = FAMILIES[case.bearing.family]
+    mean_diameter = (case.bearing.bore + case.bearing.outside) / 2
+    a, b = viscosity.walther_constants.plain(nu_40=lubricant.nu_40, nu_100=lubricant.nu_100)
+    limits = (
+        _known(lubricant.highest),
+        POLYAMIDE_LIMIT if case.bearing.cage == "polyamide" else math.inf,
+        NITRILE_LIMIT if case.bearing.seal == "contact seals" else math.inf,
+        float(case.bearing.stabilised_to),
+        math.inf if case.limits.highest_temperature is None else case.limits.highest_temperature,
+    )
+    # A lubricant whose top temperature nobody stated leaves the limit unknown, whatever the other parts allow.
+    highest = math.nan if math.isnan(limits[0]) else min(limits)
+    return {
+        "is_grease": float(case.is_grease),
+        "walther_a": float(a),
+        "walther_b": float(b),
+        "density": lubricant.density_15,
+        "lowest": _known(lubricant.lowest),
+        "highest": highest,
+        "limit_origin": 0 if math.isnan(highest) else limits.index(highest),
+        "life_reference": _known(lubricant.life_reference),
+        "yield_stress": lubricant.yield_stress if lubricant.yield_stress is not None else 0.0,
+        "speed_limit": (family.grease_speed_limit if case.is_grease else family.oil_speed_limit) / mean_diameter,
+        "additive": fatigue.ADDITIVES.index("extreme pressure" if lubricant.ep else "none"),
+    }
+
+
+def _surroundings_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float]:
+    around = case.surroundings
+    altitude = around.altitude if around.altitude is not None else reading.get("[surroundings] altitude", 0.0)
+    factor = 1.0
+    for key, answers in INTERVAL_ANSWERS.items():
+        word = getattr(around, key) or reading.get(f"[surroundings] {key}")
+        factor *= next((answer.factor for answer in answers if answer.word == word), 1.0)
+    return {
+        "coldest": _known(around.coldest),
+        "pressure": float(cooling.pressure_at.plain(altitude)),
+        "interval_factor": factor,
+    }
+
+
+def _is_vertical(case: Case, reading: Mapping[str, Any]) -> bool:
+    return (case.surroundings.orientation or reading.get("[surroundings] orientation")) == "vertical"
+
+
+def _housing_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, float]) -> dict[str, float]:
+    housing = case.housing
+    square = row["outside"] ** 2
+    area = math.nan
+    if housing.area is not None:
+        area = housing.area
+    elif housing.conductance is None:
+        kind = housing.kind or reading["[housing] kind"]
+        area = (SMALLEST_AREA if kind == "smallest" else HOUSING_AREA[kind][1]) * square
+    fin = float(
+        cooling.fin_conductance.plain(
+            diameter=row["bore"],
+            length=FIN_LENGTH * row["bore"],
+            coefficient=SHAFT_COEFFICIENT,
+            conductivity=cooling.STEEL_CONDUCTIVITY,
+        )
+    )
+    shaft = float(
+        cooling.long_fin_conductance.plain(
+            diameter=row["bore"], coefficient=SHAFT_COEFFICIENT, conductivity=cooling.STEEL_CONDUCTIVITY
+        )
+    )
+    stream = cooling.stream_conductance.plain(case.oil.flow or 0.0, row["density"], OIL_HEAT_CAPACITY)
+    return {
+        "housing_area": area,
+        "conductance": _known(housing.conductance),
+        "shaft_conductance": shaft,
+        "fin_conductance": fin,
+        "oil_conductance": STREAM_CONTACT * float(stream),
+        "machine_heat": housing.machine_heat or 0.0,
+    }
+
+
+def _requirement_columns(case: Case, reading: Mapping[str, Any], family: Family) -> dict[str, float]:
+    limits = case.limits
+    vibration = case.surroundings.vibration or reading.get("[surroundings] vibration")
+    service = limits.service or ("shock" if vibration == grease_life.VIBRATION[-1].word else "normal")
+    setting = case.cleanliness.setting or reading["[cleanliness] setting"]
+    hours = _hours_per_day(case, reading)
+    return {
+        "setting": fatigue.SETTINGS.index(setting),
+        "life_target": limits.life or DEFAULT_LIFE,
+        "reliability": limits.reliability or DEFAULT_RELIABILITY,
+        "least_kappa": limits.least_viscosity_ratio or DEFAULT_KAPPA,
+        "static_safety": limits.static_safety or family.static_safety[service],
+        "hours_per_day": hours,
+        "ceiling": grease_life.CALENDAR_CEILING * hours / 24,
+    }
+
+
+def _hours_per_day(case: Case, reading: Mapping[str, Any]) -> float:
+    plan = case.grease if case.is_grease else case.oil
+    table = "grease" if case.is_grease else "oil"
+    hours = plan.hours_per_day if plan.hours_per_day is not None else reading.get(f"[{table}] hours_per_day", 24.0)
+    return float(hours)
+
+
+def _duty_columns(case: Case, duty: Duty, reading: Mapping[str, Any], row: Mapping[str, float]) -> dict[str, float]:
+    around = case.surroundings
+    ambient = around.ambient if duty.ambient is None else duty.ambient
+    draught = duty.draught if duty.draught is not None else around.draught
+    shaft = duty.shaft_temperature if duty.shaft_temperature is not None else case.housing.shaft_temperature
+    is_hot = shaft is None and bool(reading.get("[housing] machine_heat", 0.0))
+    # The shaft towards the machine carries heat where its temperature is stated or has to be feared; where the
+    # machine's heat is stated in watts, or all paths together as one conductance, it is in there already.
+    is_path = shaft is not None or is_hot or (case.housing.machine_heat is None and case.housing.conductance is None)
+    if shaft is None:
+        shaft = max(ambient, HOTTEST_SHAFT) if is_hot else ambient
+    return {
+        "share": 1.0 if duty.share is None else duty.share,
+        "speed": duty.speed,
+        "radial_load": duty.radial_load,
+        "axial_load": duty.axial_load,
+        "ambient": ambient,
+        "draught": draught or 0.0,
+        "shaft_temperature": shaft,
+        "shaft_conductance": row["shaft_conductance"] if is_path else 0.0,
+        "oil_inlet": case.oil.inlet if case.oil.inlet is not None else ambient,
+    }
+
+
+def _friction_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float]:
+    bearing = case.bearing
+    if case.is_grease:
+        factor = RUN_IN_GREASE
+    else:
+        supply = case.oil.supply or reading["[oil] supply"]
+        factor = {"bath": 1.0, "circulating": 1.0, "mist": MIST}[supply]
+        if supply != "mist" and _is_vertical(case, reading):
+            factor *= VERTICAL_BATH
+        if supply == "bath":
+            # Immersion above the lowest element's centre adds churning: a fully flooded bearing has about three times
+            # the viscous friction (Eschmann, range 2 to 3), taken linear in the level up to the top of the bearing.
+            factor *= 1 + 2 * min(1.0, max(0.0, case.oil.level or 0.0) / bearing.outside)
+    return {"f0": bearing.f0 * factor, "f1": bearing.f1}
+
+
+def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, float]) -> dict[str, float]:
+    plan = case.grease
+    volume, grams_per_cm3 = row["free_volume"], row["density"] / 1000
+    void = case.housing.void if case.housing.void is not None else reading.get("[housing] void", 0.0)
+    _, proposed, _ = grease_amount.first_fill.plain(
+        speed=row["speed"], speed_limit=row["speed_limit"], pitch_diameter=row["pitch_diameter"]
+    )
+    if plan.fill is None:
+        fill = float(proposed)
+    elif isinstance(plan.fill, str):
+        fill = reading["[grease] fill"]
+    else:
+        fill = volume_of(plan.fill, volume, grams_per_cm3) / volume
+    relief = case.housing.relief or reading.get("[housing] relief")
+    interval = case.grease.interval if case.is_grease else case.oil.interval
+    mass = math.nan if plan.regrease_amount is None else volume_of(plan.regrease_amount, volume, grams_per_cm3)
+    return {
+        "fill": fill if case.is_grease else math.nan,
+        "void": volume if void is None else void,
+        "housing_fill": PROPOSED_HOUSING_FILL if plan.housing_fill is None else plan.housing_fill,
+        "is_open": float(relief == "open"),
+        "proposed_fill": float(proposed) if case.is_grease else math.nan,
+        "is_proposed_fill": float(plan.fill is None),
+        "interval": math.nan if interval is None else running_hours(interval, row["hours_per_day"]),
+        "regrease_mass": mass * grams_per_cm3,
+        "is_bath": float(not case.is_grease and (case.oil.supply or reading.get("[oil] supply")) == "bath"),
+        "level": case.oil.level or 0.0,
+    }
+
+
+def volume_of(amount: Amount, free_volume: float, grams_per_cm3: float) -> float:
+    """Return an amount of grease, however stated, as a volume in cm^3."""
+    if amount.kind == "mass":
+        return amount.value / grams_per_cm3
+    return amount.value * (free_volume if amount.kind == "share" else 1.0)
+
+
+def running_hours(interval: Amount, hours_per_day: float) -> float:
+    """Return an interval as running hours; one stated by the calendar runs only some hours a day."""
+    return interval.value * (hours_per_day / 24 if interval.is_calendar else 1.0)

@@ -1,0 +1,423 @@
+"""The case reader: strict, and all faults at once.
+
+TOML in, a `Case` out. Every dimensional value is a text with its unit. An unknown key, a wrong dimension, a value out
+of range, a missing need, a contradiction: one fault each, with file, line, key, what was given, what is expected and
+the nearest valid name; nothing is guessed and nothing is passed over.
+"""
+
+from __future__ import annotations
+
+import dataclasses
+import math
+import re
+import sys
+import tomllib
+from collections.abc import Iterator, Mapping
+from dataclasses import dataclass, field
+from pathlib import Path
+from typing import Any, TypeVar
+
+from lubecheck.data import bearings, lubricants
+from lubecheck.data.bearings import Bearing
+from lubecheck.data.lubricants import Lubricant
+from lubecheck.errors import CaseError, Fault, InputError, nearest, shown
+from lubecheck.model.entries import (
+    TABLES,
+    Amount,
+    BearingTable,
+    Case,
+    Cleanliness,
+    Duty,
+    Entry,
+    GreasePlan,
+    Housing,
+    LubricantTable,
+    OilPlan,
+    Requirements,
+    Surroundings,
+    entries,
+)
+from lubecheck.model.toml_lines import key_lines
+from lubecheck.units import KINDS, UnreadableText, split_text, to_house
+
+STANDARD_INPUT = "-"
+_LARGEST_FILE = 1_000_000  # bytes; a case is a page of text, so more is a slip of the hand
+
+T = TypeVar("T")
+
+
+def load_case(path: str | Path) -> Case:
+    """Read a case file; "-" reads standard input.
+
+    Raises CaseError, which holds every fault found.
+    """
+    name = "standard input" if str(path) == STANDARD_INPUT else str(path)
+    try:
+        raw = sys.stdin.buffer.read() if str(path) == STANDARD_INPUT else Path(path).read_bytes()
+    except IsADirectoryError:
+        raise _whole_file(name, "a directory", "a case file in TOML") from None
+    except FileNotFoundError:
+        raise _whole_file(name, "no such file", "a case file in TOML, or - for standard input") from None
+    except (OSError, ValueError) as refused:
+        reason = refused.strerror if isinstance(refused, OSError) and refused.strerror else "not a file name"
+        raise _whole_file(name, reason, "a readable case file in TOML") from None
+    return read_case(raw, name)
+
+
+def read_case(raw: bytes | str, name: str = "case") -> Case:
+    """Read the text of a case; `name` is how messages call it.
+
+    Raises CaseError, which holds every fault found.
+    """
+    text = _decoded(raw, name)
+    try:
+        document = tomllib.loads(text)
+    except tomllib.TOMLDecodeError as refused:
+        raise CaseError([_toml_fault(str(refused), text, name)]) from None
+    except RecursionError:
+        raise _whole_file(name, "values nested too deeply", "a case file in TOML") from None
+    reading = _Reading(name, key_lines(text))
+    case = reading.case(document)
+    if reading.faults or case is None:
+        raise CaseError(sorted(reading.faults, key=lambda fault: fault.line or 0))
+    return case
+
+
+def _whole_file(name: str, given: str, expected: str, line: int | None = None) -> CaseError:
+    return CaseError([Fault("(whole file)", given, expected, where=name, line=line)])
+
+
+def _decoded(raw: bytes | str, name: str) -> str:
+    if len(raw) > _LARGEST_FILE:
+        raise _whole_file(name, f"{len(raw)} bytes", f"a case file of at most {_LARGEST_FILE} bytes")
+    try:
+        text = raw if isinstance(raw, str) else raw.decode("utf-8-sig")
+    except UnicodeDecodeError as refused:
+        line = raw[: refused.start].count(b"\n") + 1 if isinstance(raw, bytes) else None
+        given = f"byte 0x{refused.object[refused.start]:02x} at position {refused.start}"
+        raise _whole_file(name, given, "text in UTF-8", line) from None
+    if not text.strip():
+        raise _whole_file(name, "an empty file", "a case with [bearing], [lubricant], [[duty]] and [surroundings]")
+    return text
+
+
+def _toml_fault(message: str, text: str, name: str) -> Fault:
+    place = re.search(r"\(at line (\d+), column \d+\)", message)
+    reason = message[: place.start()].strip() if place else message
+    lines = text.splitlines()
+    number = min(int(place[1]), len(lines)) if place else len(lines)
+    content = lines[number - 1].strip() if lines else ""
+    key = content.partition("=")[0].strip(" []\"'") or "(whole file)"
+    return Fault(key[:40], shown(content), f'TOML, such as key = "45 mm" ({reason})', where=name, line=number)
+
+
+@dataclass
+class _Reading:
+    """One reading of one document: collects the faults on the way."""
+
+    name: str
+    lines: Mapping[tuple[str | int, ...], int]
+    faults: list[Fault] = field(default_factory=list)
+    given: list[tuple[str, str]] = field(default_factory=list)
+
+    def fault(
+        self, path: tuple[str | int, ...], given: object, expected: str, near: str | None = None, *, plain: bool = False
+    ) -> None:
+        """Note one fault at a key; `plain` given text is already words and is not quoted."""
+        line = self.lines.get(path) or self.lines.get(path[:-1])
+        text = str(given) if plain else shown(given)
+        self.faults.append(Fault(_dotted(path), text, expected, where=self.name, line=line, nearest=near))
+
+    def case(self, document: Mapping[str, Any]) -> Case | None:
+        """Read the whole document; None where a part that everything else needs was refused."""
+        for key in document:
+            if key not in TABLES and key not in ("title", "note"):
+                known = [*TABLES, "title", "note"]
+                self.fault((key,), key, f"one of {', '.join(known)}", nearest(key, known))
+        title, note = (self._text(document, key) for key in ("title", "note"))
+        bearing = self._bearing(self._table(document, "bearing", BearingTable, is_need=True))
+        lubricant = self._lubricant(self._table(document, "lubricant", LubricantTable, is_need=True))
+        duty = self._duty(document)
+        surroundings = self._table(document, "surroundings", Surroundings, is_need=True)
+        housing = self._table(document, "housing", Housing) or Housing()
+        grease = self._table(document, "grease", GreasePlan) or GreasePlan()
+        oil = self._table(document, "oil", OilPlan) or OilPlan()
+        cleanliness = self._table(document, "cleanliness", Cleanliness) or Cleanliness()
+        limits = self._table(document, "limits", Requirements) or Requirements()
+        self._housing_conflicts(housing)
+        if lubricant is not None:
+            unused = "oil" if lubricant.kind == "grease" else "grease"
+            if unused in document:
+                self.fault(
+                    (unused,), f"[{unused}]", f"no [{unused}] table: the lubricant is {lubricant.kind}", plain=True
+                )
+            if surroundings is not None and isinstance(cleanliness.setting, str):
+                self._setting_fits(cleanliness.setting, lubricant, oil)
+        if bearing is None or lubricant is None or not duty or surroundings is None:
+            return None
+        return Case(
+            title=title, note=note, bearing=bearing, lubricant=lubricant, duty=duty, surroundings=surroundings,
+            housing=housing, grease=grease, oil=oil, cleanliness=cleanliness, limits=limits, given=tuple(self.given),
+        )  # fmt: skip
+
+    def _text(self, document: Mapping[str, Any], key: str) -> str:
+        value = document.get(key, "")
+        if not isinstance(value, str):
+            self.fault((key,), value, "a text")
+            return ""
+        return value
+
+    def _table(self, document: Mapping[str, Any], key: str, table: type[T], *, is_need: bool = False) -> T | None:
+        """Read one table; None where it is missing or a need in it is missing."""
+        if key not in document:
+            if is_need:
+                self.fault((key,), "nothing", f"a [{key}] table", plain=True)
+            return None
+        value = document[key]
+        if not isinstance(value, dict):
+            many = isinstance(value, list)
+            given = f"{len(value)} of [[{key}]]" if many else shown(value)
+            self.fault((key,), given, f"one [{key}] table", plain=True)
+            return None
+        return self._keys((key,), value, table)
+
+    def _duty(self, document: Mapping[str, Any]) -> tuple[Duty, ...]:
+        value = document.get("duty")
+        expected = "at least one [[duty]] table with speed, radial_load and axial_load"
+        if value is None:
+            self.fault(("duty",), "nothing", expected, plain=True)
+            return ()
+        if not isinstance(value, list) or not value or not all(isinstance(item, dict) for item in value):
+            self.fault(("duty",), "[duty]" if isinstance(value, dict) else shown(value), expected, plain=True)
+            return ()
+        points = [self._keys(("duty", i), item, Duty) for i, item in enumerate(value)]
+        read = tuple(point for point in points if point is not None)
+        if len(read) < len(points):
+            return ()
+        for i, point in enumerate(read):
+            if point.radial_load == 0 and point.axial_load == 0:
+                self.fault(
+                    ("duty", i, "radial_load"), "no load at all", "a radial or an axial load above 0 N", plain=True
+                )
+        if len(read) > 1 or read[0].share is not None:
+            total = 0.0
+            for i, point in enumerate(read):
+                if point.share is None:
+                    self.fault(
+                        ("duty", i, "share"),
+                        "nothing",
+                        "a share of the running time, since there are several",
+                        plain=True,
+                    )
+                total += point.share or 0.0
+            if all(point.share is not None for point in read) and not math.isclose(total, 1.0, abs_tol=1e-3):
+                self.fault(
+                    ("duty", len(read) - 1, "share"),
+                    f"shares that add up to {total:.4g}",
+                    "shares that add up to 1 (100 %)",
+                    plain=True,
+                )
+        return read
+
+    def _keys(self, path: tuple[str | int, ...], values: Mapping[str, Any], table: type[T]) -> T | None:
+        """Read the keys of one table."""
+        known = dict(entries(table))
+        read: dict[str, Any] = {}
+        is_whole = True
+        for key, value in values.items():
+            here = (*path, key)
+            if key not in known:
+                self.fault(here, key, "one of " + ", ".join(known), nearest(key, known))
+                continue
+            self.given.append((_dotted(here), str(value)))
+            try:
+                read[key] = _value(value, known[key])
+            except UnreadableText as refused:
+                self.fault(here, value, refused.expected, refused.near)
+                is_whole = is_whole and not known[key].is_need
+        for key, entry in known.items():
+            if entry.is_need and key not in values:
+                self.fault((*path, key), "nothing", entry.expected, plain=True)
+                is_whole = False
+        return table(**read) if is_whole else None
+
+    def _bearing(self, table: BearingTable | None) -> Bearing | None:
+        if table is None:
+            return None
+        dimensions = (table.bore, table.outside, table.width)
+        path: tuple[str | int, ...] = ("bearing",)
+        before = len(self.faults)
+        if table.bore is not None and table.outside is not None and table.bore >= table.outside:
+            self.fault(
+                (*path, "bore"),
+                f"{table.bore:g} mm",
+                f"less than the outside diameter {table.outside:g} mm",
+                plain=True,
+            )
+        if table.designation is not None:
+            for key in ("family", "bore", "outside", "width"):
+                if getattr(table, key) is not None:
+                    self.fault(
+                        (*path, key), getattr(table, key), "no such key beside a designation, which already says it"
+                    )
+        elif table.family is None or None in dimensions:
+            absent = [key for key in ("family", "bore", "outside", "width") if getattr(table, key) is None]
+            if not any(fault.key.startswith("bearing.") for fault in self.faults):
+                self.fault(
+                    (*path, "designation"),
+                    "nothing",
+                    f"a designation, or family, bore, outside and width (missing: {', '.join(absent)})",
+                    plain=True,
+                )
+        if len(self.faults) > before or (table.designation is None and (table.family is None or None in dimensions)):
+            return None
+        given = {
+            key: getattr(table, key)
+            for key in ("dynamic_rating", "static_rating", "fatigue_limit", "mass", "contact_angle", "clearance",
+                        "seal", "cage", "f0", "f1")
+            if getattr(table, key) is not None
+        }  # fmt: skip
+        try:
+            if table.designation is not None:
+                found = bearings.find(table.designation)
+            else:
+                found = bearings.from_dimensions(
+                    str(table.family),
+                    bore=float(table.bore or 0),
+                    outside=float(table.outside or 0),
+                    width=float(table.width or 0),
+                )
+            return bearings.with_given(found, **given)
+        except InputError as refused:
+            self._carry(path, refused)
+            return None
+
+    def _lubricant(self, table: LubricantTable | None) -> Lubricant | None:
+        if table is None:
+            return None
+        path: tuple[str | int, ...] = ("lubricant",)
+        inline = [name for name, _ in entries(LubricantTable) if name not in ("name", "designation", "index")]
+        stated = {key: getattr(table, key) for key in inline if getattr(table, key) is not None}
+        if table.name is not None and table.designation is not None:
+            self.fault((*path, "designation"), table.designation, "a name or a designation, not both")
+            return None
+        try:
+            if table.name is not None:
+                if table.index is not None:
+                    self.fault((*path, "index"), table.index, "no such key beside a name, which already says it")
+                    return None
+                return lubricants.with_given(lubricants.find(table.name), **stated)
+            if any(fault.key.startswith("lubricant.") for fault in self.faults):
+                return None
+            return lubricants.from_figures(designation=table.designation, index=table.index, **stated)
+        except InputError as refused:
+            self._carry(path, refused)
+            return None
+
+    def _carry(self, path: tuple[str | int, ...], refused: InputError) -> None:
+        """Take over the faults of a table look-up, with the place in this file."""
+        for fault in refused.faults:
+            here = (*path, fault.key)
+            self.faults.append(
+                dataclasses.replace(
+                    fault,
+                    key=_dotted(here),
+                    where=self.name,
+                    line=self.lines.get(here) or self.lines.get(path),
+                )
+            )
+
+    def _housing_conflicts(self, housing: Housing) -> None:
+        if housing.conductance is not None:
+            for key in ("kind", "area"):
+                if getattr(housing, key) is not None:
+                    self.fault(
+                        ("housing", key),
+                        getattr(housing, key),
+                        "no such key beside conductance, which is all heat paths together",
+                    )
+        if housing.machine_heat is not None and housing.shaft_temperature is not None:
+            self.fault(
+                ("housing", "machine_heat"),
+                f"{housing.machine_heat:g} W",
+                "either machine_heat or shaft_temperature: both say what the machine sends",
+                plain=True,
+            )
+
+    def _setting_fits(self, setting: str, lubricant: Lubricant, oil: OilPlan) -> None:
+        supply = "grease" if lubricant.kind == "grease" else (oil.supply or "bath")
+        circuit, _, _code = setting.partition(" -/")
+        is_oil_setting = " -/" in setting
+        if is_oil_setting and circuit != supply:
+            self.fault(
+                ("cleanliness", "setting"),
+                setting,
+                f"a setting without an oil code, or one for {supply}"
+                if supply != "grease"
+                else "a setting for grease, without an oil code",
+            )
+
+
+def _dotted(path: tuple[str | int, ...]) -> str:
+    """Return a path as messages name it: duty[1].speed, counted from 1 as people do."""
+    text = ""
+    for part in path:
+        text += f"[{part + 1}]" if isinstance(part, int) else ("." if text else "") + part
+    return text
+
+
+def _value(value: Any, entry: Entry) -> Any:
+    """Read one value by its entry; raises UnreadableText where it is not what the entry takes."""
+    if not entry.kinds:
+        return _word(value, entry)
+    if isinstance(value, str) and value in entry.words:
+        return value
+    amount = _amount(value, entry)
+    highest = 1.0 if amount.kind == "share" and len(entry.kinds) > 1 else entry.high
+    if not entry.low <= amount.value <= highest or (entry.low == 0 and len(entry.kinds) > 1 and amount.value == 0):
+        raise UnreadableText(entry.expected)
+    return amount if len(entry.kinds) > 1 or (entry.kinds == ("time",) and entry.role == "decision") else amount.value
+
+
+def _word(value: Any, entry: Entry) -> Any:
+    if entry.words:
+        folded = str(value) if isinstance(value, int) and not isinstance(value, bool) else value
+        if isinstance(folded, str):
+            for word in entry.words:
+                if folded.casefold() == word.casefold():
+                    return word
+        raise UnreadableText(entry.expected, nearest(folded, entry.words) if isinstance(folded, str) else None)
+    if entry.meaning.endswith("true or false"):
+        if isinstance(value, bool):
+            return value
+        raise UnreadableText("true or false")
+    if isinstance(value, str) and value.strip() and len(value) <= 100:
+        return value
+    raise UnreadableText(f"a text such as {entry.example}" if entry.example else "a text")
+
+
+def _amount(value: Any, entry: Entry) -> Amount:
+    """Read a quantity of the first kind that fits."""
+    if isinstance(value, bool) or not isinstance(value, (str, int, float)):
+        raise UnreadableText(entry.expected)
+    if not isinstance(value, str):
+        bare = next((name for name in entry.kinds if KINDS[name].is_bare), None)
+        if bare is None or not math.isfinite(value):
+            raise UnreadableText(entry.expected)
+        return Amount(float(value), bare, "1")
+    refusals: list[UnreadableText] = []
+    for name in entry.kinds:
+        try:
+            number, word = split_text(value, KINDS[name])
+            return Amount(to_house(number, word, KINDS[name]), name, word)
+        except UnreadableText as refused:
+            refusals.append(refused)
+    near = next((refused.near for refused in refusals if refused.near), None)
+    raise UnreadableText(entry.expected, near, refusals[0].hint)
+
+
+def keys() -> Iterator[tuple[str, str, Entry]]:
+    """Return every key that a case may have: table, key, entry."""
+    for table, form in TABLES.items():
+        for key, entry in entries(form):
+            yield table, key, entry

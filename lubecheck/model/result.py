@@ -1,0 +1,198 @@
+"""The result: frozen dataclasses whose figures are pint quantities, each declared once with its unit and meaning.
+
+A figure is stored as a plain float with its band, and becomes a quantity when it is asked for by name, so that a face
+which only prints needs no pint. Faces walk `declared()` and `figures`; they compute nothing.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from typing import TYPE_CHECKING, Any, overload
+
+from lubecheck.units import quantity
+
+if TYPE_CHECKING:
+    import pint
+
+
+@dataclass(frozen=True, slots=True)
+class Figure:
+    """A number in a house unit, with the band that its uncertain inputs give it where there is one."""
+
+    value: float | None  # None: could not be worked out
+    unit: str
+    low: float | None = None
+    high: float | None = None
+
+    @property
+    def quantity(self) -> pint.Quantity[Any] | None:
+        """The value as a quantity."""
+        return None if self.value is None else quantity(self.value, self.unit)
+
+
+class Declared:
+    """Declares a figure of a result: its unit and what it means."""
+
+    def __init__(self, unit: str, meaning: str) -> None:
+        self.unit = unit
+        self.meaning = meaning
+        self.name = ""
+
+    def __set_name__(self, owner: type, name: str) -> None:
+        self.name = name
+
+    @overload
+    def __get__(self, group: None, owner: type | None = None) -> Declared: ...
+    @overload
+    def __get__(self, group: Figures, owner: type | None = None) -> pint.Quantity[Any] | None: ...
+    def __get__(self, group: Figures | None, owner: type | None = None) -> Declared | pint.Quantity[Any] | None:
+        return self if group is None else group.figures[self.name].quantity
+
+
+@dataclass(frozen=True)
+class Figures:
+    """A group of declared figures."""
+
+    figures: Mapping[str, Figure]
+
+    @classmethod
+    def declared(cls) -> dict[str, Declared]:
+        """Return the figures that the group declares, in their order."""
+        return {name: item for name, item in vars(cls).items() if isinstance(item, Declared)}
+
+    @classmethod
+    def of(cls, values: Mapping[str, float | tuple[float, float, float] | None]) -> Any:
+        """Return a group from values, or (value, low, high); what is not finite becomes None."""
+        figures = {}
+        for name, item in cls.declared().items():
+            given = values[name]
+            value, low, high = given if isinstance(given, tuple) else (given, None, None)
+            figures[name] = Figure(_finite(value), item.unit, _finite(low), _finite(high))
+        return cls(figures)
+
+
+def _finite(value: float | None) -> float | None:
+    return None if value is None or value != value or value in (float("inf"), float("-inf")) else float(value)
+
+
+@dataclass(frozen=True)
+class Operating(Figures):
+    """The operating point: the state of the duty point that runs hottest."""
+
+    temperature = Declared("degC", "temperature of bearing and lubricant")
+    viscosity = Declared("mm^2/s", "kinematic viscosity of the (base) oil at that temperature")
+    reference_viscosity = Declared("mm^2/s", "viscosity that the bearing needs (ISO 281)")
+    viscosity_ratio = Declared("1", "viscosity ratio kappa, what there is over what is needed")
+    friction_torque = Declared("N*mm", "torque of viscous friction, load and churning together")
+    friction_power = Declared("W", "heat of all that friction")
+    churning_power = Declared("W", "the part of it that overfilled grease makes")
+    heat_removed = Declared("W", "heat that leaves by housing, shaft and oil, net of what comes in by them")
+
+
+@dataclass(frozen=True)
+class Grease(Figures):
+    """Amounts and interval of a grease-lubricated position."""
+
+    free_volume = Declared("cm^3", "free volume of the bearing")
+    first_fill = Declared("g", "grease for the first fill of the bearing, as planned or proposed")
+    fill_share = Declared("1", "that fill as a share of the free volume")
+    regrease_quantity = Declared("g", "grease for each regreasing, as planned or proposed")
+    regrease_interval = Declared("h", "running hours between regreasings, as planned or proposed")
+
+
+@dataclass(frozen=True)
+class Life(Figures):
+    """Fatigue life of the position."""
+
+    load_ratio = Declared("1", "load ratio P/C of the heaviest duty point")
+    rating_life = Declared("h", "basic rating life L10h")
+    contamination_factor = Declared("1", "contamination factor e_C of the worst duty point")
+    life_modification_factor = Declared("1", "life modification factor a_ISO, over the whole duty")
+    modified_life = Declared("h", "modified rating life at the wanted reliability")
+
+
+@dataclass(frozen=True, slots=True)
+class Limit:
+    """One limit and how much of it is used."""
+
+    name: str
+    state: str
+    use: float | None
+    demand: float | None
+    allowed: float | None
+    unit: str
+    basis: str  # source key
+    note: str
+    use_low: float | None = None
+    use_high: float | None = None
+
+
+@dataclass(frozen=True, slots=True)
+class PlanLine:
+    """What goes on the maintenance plan."""
+
+    lubricant: str
+    first_fill_g: float | None
+    first_fill_strokes: int | None
+    regrease_g: float | None
+    regrease_strokes: int | None
+    stroke_g: float | None  # what one stroke of the user's gun gives
+    interval_h: float | None
+    interval_weeks: float | None
+    hours_per_day: float
+    is_proposed: tuple[str, ...]  # "fill", "interval", "regrease_amount": what the user left to be proposed
+    steps: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Assumed:
+    """One thing that the user did not say: what it was read as, why, and whether the verdict hangs on it."""
+
+    name: str
+    value: str
+    basis: str
+
+
+@dataclass(frozen=True, slots=True)
+class Remedy:
+    """A change that brings the verdict back."""
+
+    change: str
+    use_after: float
+    verdict_after: str
+    note: str
+
+
+@dataclass(frozen=True)
+class Result:
+    """The verdict on one bearing position, with all that it rests on."""
+
+    title: str
+    verdict: str
+    governing: str
+    limits: tuple[Limit, ...]
+    operating: Operating
+    duty: tuple[Operating, ...]  # the same figures for each duty point
+    grease: Grease | None  # None for oil
+    life: Life
+    plan: PlanLine
+    remedies: tuple[Remedy, ...]
+    notes: tuple[str, ...]
+    cautions: tuple[str, ...]
+    given: tuple[tuple[str, str], ...]
+    assumed: tuple[Assumed, ...]
+    bearing: str
+    lubricant: str
+    converged_in: int  # steps of the coupled solve
+    residual: float | None  # W left over in the balance of the operating point
+
+    def limit(self, name: str) -> Limit:
+        """Return a limit by its name.
+
+        Raises KeyError where the case has no such limit.
+        """
+        for limit in self.limits:
+            if limit.name == name:
+                return limit
+        raise KeyError(name)

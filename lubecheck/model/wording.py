@@ -1,0 +1,282 @@
+"""The words of a result: why a limit stands where it does, what was assumed, what to beware of.
+
+Faces print these texts and compute nothing; so the terminal, the record and the page say the same.
+"""
+
+from __future__ import annotations
+
+import math
+from collections.abc import Sequence
+
+import numpy as np
+
+from lubecheck.data.bearings import Bearing
+from lubecheck.data.lubricants import Lubricant
+from lubecheck.model.assumptions import FACTS, Fact
+from lubecheck.model.entries import BearingTable, Case, entries
+from lubecheck.model.equilibrium import TOP_TEMPERATURE
+from lubecheck.model.kernel import Outcome, takes_loads
+from lubecheck.model.points import (
+    DEFAULT_KAPPA,
+    DEFAULT_LIFE,
+    DEFAULT_RELIABILITY,
+    LIMIT_ORIGINS,
+    PROPOSED_HOUSING_FILL,
+)
+from lubecheck.model.result import Assumed
+from lubecheck.physics import fatigue, grease_life
+from lubecheck.units import KINDS
+
+SAFETY = (
+    "This result supports, and does not replace, the machine maker's instructions, site procedures, local codes and "
+    "the judgement of a licensed engineer",
+    "Isolate and lock out before any work on the machine; stay clear of the turning shaft; surfaces can be hot",
+)
+GREASE_SAFETY = (
+    "Do not mix greases without a compatibility test (ASTM D6185)",
+    "A grease gun reaches pressures that push out seals and inject grease through skin: never use force",
+)
+_BEARING_UNITS = {key: KINDS[entry.kinds[0]].unit for key, entry in entries(BearingTable) if entry.kinds}
+LONG_LIFE = 200_000.0  # h, beyond which a fatigue life says no more than "not this"
+
+
+def join(*parts: str) -> str:
+    """Return the parts that say something, as one text."""
+    return "; ".join(part for part in parts if part)
+
+
+def doubt(facts: Sequence[Fact], use: float, *, is_open: bool) -> str:
+    """Say which facts left unsaid would change the state, and what the use is at their worst."""
+    names = ", ".join(fact.name for fact in facts)
+    worst = f"{use:.2f}" if math.isfinite(use) else "no finite value"
+    if is_open:
+        return f"hangs on what was not said: state {names} (use at the worst reading: {worst})"
+    return f"near at the worst reading of what was not said: {names}"
+
+
+def band(low: float, high: float) -> str:
+    """Say that the band of uncertain inputs crosses the limit, where it does."""
+    return f"the band {low:.2f} to {high:.2f} crosses the limit" if low <= 1.0 < high else ""
+
+
+def basis(name: str, case: Case, outcome: Outcome) -> str:
+    """Return the source key of a limit where it depends on the case."""
+    points = outcome.points
+    own = case.limits
+    if name == "temperature":
+        return LIMIT_ORIGINS[int(points.limit_origin[outcome.judged[name].row[0]])][1]
+    if name == "interval" and not case.is_grease:
+        return "bath-handbooks"
+    if name == "interval" and points.is_sealed[0]:
+        return "booser"
+    stated = {"film": own.least_viscosity_ratio, "static_load": own.static_safety}
+    return "user" if stated.get(name) is not None else ""
+
+
+def limit_note(name: str, case: Case, outcome: Outcome) -> str:
+    """Return what is worth saying about a limit."""
+    judged = outcome.judged[name]
+    row = int(judged.row[0])
+    maker = _NOTES.get(name)
+    return maker(case, outcome, row) if maker else ""
+
+
+def _film(case: Case, outcome: Outcome, row: int) -> str:
+    kappa = outcome.kappa[row]
+    if math.isnan(kappa):
+        return "no temperature, so no film could be worked out"
+    asked = outcome.points.least_kappa[row]
+    advice = ""
+    if kappa > 4:
+        advice = "above 4: a thinner oil would run cooler with film enough"
+    elif kappa < 0.4 and not case.lubricant.ep:
+        advice = "below 0.4 an extreme pressure additive is asked for"
+    return join(f"kappa is {kappa:.2f}, at least {asked:.2f} is asked for", advice, _duty(case, row))
+
+
+def _temperature(case: Case, outcome: Outcome, row: int) -> str:
+    if not outcome.state.is_found[row]:
+        return f"no equilibrium below {TOP_TEMPERATURE:g} degC: the heat cannot be carried off"
+    points = outcome.points
+    if math.isnan(points.highest[row]):
+        return "state [lubricant] highest"
+    return join(f"the lowest top temperature is that of the {LIMIT_ORIGINS[int(points.limit_origin[row])][0]}",
+                _duty(case, row))  # fmt: skip
+
+
+def _cold(case: Case, outcome: Outcome, row: int) -> str:
+    parts = []
+    if case.surroundings.coldest is None:
+        parts.append("[surroundings] coldest")
+    if case.lubricant.lowest is None:
+        parts.append("[lubricant] lowest")
+    return f"state {', '.join(parts)}" if parts else ""
+
+
+def _fill(case: Case, outcome: Outcome, row: int) -> str:
+    points = outcome.points
+    grams = points.fill[row] * points.free_volume[row] * points.density[row] / 1000
+    held = outcome.state.held_volume[row]
+    said = "proposed" if case.grease.fill is None else ""
+    if isinstance(case.grease.fill, str):
+        said = "unknown fill, judged from 30 to 100 %: inspect, or purge first"
+    churned = f"{held:.1f} cm^3 cannot clear and are churned" if held > 0 else ""
+    over = "more than the bearing's free volume" if points.fill[row] > 1 else ""
+    side = "held against the least" if outcome.judged["fill"].demand[0] != points.fill[row] else ""
+    share = f"{grams:.1f} g fill {points.fill[row] * 100:.0f} % of {points.free_volume[row]:.1f} cm^3"
+    return join(said, share, side, over, churned)
+
+
+def _interval(case: Case, outcome: Outcome, row: int) -> str:
+    points, state = outcome.points, outcome.state
+    hottest = int(outcome.hottest[0])
+    if not case.is_grease:
+        return "oil change by the temperature of the bath" + ("" if case.oil.interval else ", proposed")
+    if points.is_sealed[0]:
+        if case.grease.interval is not None:
+            return "closed on both sides: do not regrease"
+        return "closed on both sides: life of its grease (L10) against the wanted life; do not regrease"
+    said = "" if case.grease.interval is not None else "proposed"
+    share = float(grease_life.classical_share.plain(points.speed[hottest], points.bore[hottest]))
+    if share > grease_life.CLASSICAL_GREATEST_SHARE:
+        valid = (
+            f"speed is {share:.2f} of where the classical line ends, valid to {grease_life.CLASSICAL_GREATEST_SHARE:g}"
+        )
+        return join(said, f"{valid}: feed continuously or ask the grease's maker")
+    if np.isnan(outcome.allowed_interval[0]):
+        return join(said, "load or temperature outside the range of the classical line")
+    classical = float(
+        grease_life.classical_interval.plain(
+            points.speed[hottest], points.bore[hottest], points.interval_family[hottest]
+        )
+    )
+    heat = float(
+        grease_life.temperature_halving.plain(
+            temperature=state.temperature[hottest],
+            reference=points.life_reference[hottest],
+            step=grease_life.HALVING_STEP,
+        )
+    )
+    load = float(grease_life.load_factor.plain(outcome.load_ratio[hottest]))
+    surroundings = float(points.interval_factor[hottest])
+    chain = f"classical {classical:.0f} h x temperature {heat:.2f} x load {load:.2f} x surroundings {surroundings:.2f}"
+    capped = "held to the calendar ceiling of 48 months" if outcome.allowed_interval[0] >= points.ceiling[0] else ""
+    short = "under a week: feed continuously or use oil" if (
+        outcome.allowed_interval[0] < 7 * points.hours_per_day[0]
+    ) else ""  # fmt: skip
+    return join(said, chain, capped, short, "1 % of bearings have failed by then (L01)")
+
+
+def _minimum_load(case: Case, outcome: Outcome, row: int) -> str:
+    judged = outcome.judged["minimum_load"]
+    advice = "the elements may slide: preload, or a smaller bearing" if judged.use[0] > 1 else ""
+    return join(f"P is {judged.allowed[0]:.0f} N, at least {judged.demand[0]:.0f} N", advice, _duty(case, row))
+
+
+def _static(case: Case, outcome: Outcome, row: int) -> str:
+    judged = outcome.judged["static_load"]
+    return join(f"S0 is {judged.allowed[0]:.2f}, at least {judged.demand[0]:.2f}", _duty(case, row))
+
+
+def _life(case: Case, outcome: Outcome, row: int) -> str:
+    life = float(outcome.modified_life[0])
+    reliability = f"L{(1 - outcome.points.reliability[0]) * 100:.3g} at the film, dirt and load it has"
+    if math.isnan(life):
+        return "outside the range of ISO 281: " + _outside_life(outcome)
+    if life > LONG_LIFE:
+        return f"over {LONG_LIFE:.0f} h: fatigue will not end this bearing; grease, seals or dirt may"
+    return reliability
+
+
+def _outside_life(outcome: Outcome) -> str:
+    reasons = []
+    if np.nanmin(outcome.kappa, initial=np.inf) < fatigue.LEAST_VISCOSITY_RATIO:
+        reasons.append("kappa is under 0.1")
+    if np.nanmax(outcome.load_ratio) > fatigue.GREATEST_LOAD_RATIO:
+        reasons.append("P is over 0.5 C")
+    if not takes_loads(outcome.points).all():
+        reasons.append("the family takes no load in one of the stated directions")
+    return ", ".join(reasons) or "no equilibrium temperature"
+
+
+def _duty(case: Case, row: int) -> str:
+    """Name the duty point that governs, where there are several."""
+    return f"at duty point {row % len(case.duty) + 1}" if len(case.duty) > 1 else ""
+
+
+_NOTES = {
+    "film": _film,
+    "temperature": _temperature,
+    "cold_start": _cold,
+    "fill": _fill,
+    "interval": _interval,
+    "minimum_load": _minimum_load,
+    "static_load": _static,
+    "fatigue_life": _life,
+}
+
+
+def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
+    """Return what the reader should know beside the limits."""
+    said = []
+    if case.bearing.unread:
+        said.append(f"not understood in the designation: {', '.join(case.bearing.unread)}")
+    if case.bearing.estimated:
+        named = ", ".join(key.replace("_", " ") for key in case.bearing.estimated)
+        said.append(f"estimated, not the maker's figures: {named}; give them under [bearing] where you have them")
+    if len(case.duty) > 1:
+        said.append(f"operating point: the hottest of {len(case.duty)} duty points")
+    if case.is_grease and case.grease.stroke is None:
+        said.append("weigh ten strokes of your grease gun and state [grease] stroke: guns give 0.8 to 3 g a stroke")
+    churned = float(outcome.state.churning_power[0])
+    if churned > 0:
+        power = float(outcome.state.friction_power[0])
+        said.append(f"churning makes {churned:.1f} of {power:.1f} W: the surplus cannot leave and will not run in")
+    return tuple(said)
+
+
+def cautions(case: Case) -> tuple[str, ...]:
+    """Return the cautions that are always shown."""
+    return SAFETY + GREASE_SAFETY if case.is_grease else SAFETY
+
+
+def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
+    """Return everything that was not said, with the reading or the default that stood in for it."""
+    said = []
+    judged_too = {fact.name for fact in moving}
+    for fact in FACTS:
+        if fact.is_missing(case):
+            worst = " (judged at its worst as well)" if fact.name in judged_too else ""
+            said.append(Assumed(fact.name, fact.text + worst, fact.basis))
+    limits = case.limits
+    defaults = (
+        ("[limits] life", limits.life, f"{DEFAULT_LIFE:.0f} h, continuous service", "common-practice"),
+        ("[limits] reliability", limits.reliability, f"{DEFAULT_RELIABILITY * 100:.0f} %", "iso-281"),
+        ("[limits] least_viscosity_ratio", limits.least_viscosity_ratio, f"{DEFAULT_KAPPA:g}", "common-practice"),
+    )
+    said += [Assumed(name, text, source) for name, value, text, source in defaults if value is None]
+    if case.is_grease and case.grease.housing_fill is None:
+        said.append(
+            Assumed("[grease] housing_fill", f"{PROPOSED_HOUSING_FILL * 100:.0f} % proposed", "common-practice")
+        )
+    for key, (low, high) in case.bearing.estimated.items():
+        value = getattr(case.bearing, key)
+        source = case.bearing.basis.get(key, "own-estimate")
+        unit = _BEARING_UNITS.get(key, "")
+        said.append(Assumed(f"[bearing] {key}", f"{value:.4g} {unit}, {low:.2f} to {high:.2f} times that", source))
+    said += [Assumed("[lubricant]", text, "common-practice") for text in case.lubricant.assumed]
+    if case.bearing.cage is None:
+        said.append(Assumed("[bearing] cage", "metal", "common-practice"))
+    return tuple(said)
+
+
+def bearing(bearing: Bearing) -> str:
+    """Return a bearing in words."""
+    name = f"{bearing.designation} " if bearing.designation else ""
+    return f"{name}{bearing.family}, {bearing.bore:g} x {bearing.outside:g} x {bearing.width:g} mm"
+
+
+def lubricant(lubricant: Lubricant) -> str:
+    """Return a lubricant in words."""
+    kind = f"{lubricant.kind}, " if lubricant.kind not in lubricant.name else ""
+    return f"{lubricant.name} ({kind}{lubricant.nu_40:g} mm^2/s at 40 degC, {lubricant.nu_100:.3g} at 100 degC)"

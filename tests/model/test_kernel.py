@@ -1,0 +1,221 @@
+"""The kernel: one pass for one position and for ten thousand, converged, and moving the right way."""
+
+from __future__ import annotations
+
+import dataclasses
+
+import numpy as np
+import pytest
+from conftest import EXAMPLES
+from scipy.optimize import brentq
+
+from lubecheck.model import equilibrium, limits
+from lubecheck.model.check import readings
+from lubecheck.model.kernel import judge
+from lubecheck.model.points import Points, from_rows, join, rows_of
+from lubecheck.model.reader import load_case
+
+ROWS = 10_000
+
+
+def points_of(name: str) -> Points:
+    case = load_case(EXAMPLES / f"{name}.toml")
+    return from_rows(rows_of(case, readings(case)[1][0]))
+
+
+def random_points(rows: int = ROWS, seed: int = 20261201) -> Points:
+    """Return positions of mixed bearings, lubricants and surroundings, wide but admissible."""
+    rng = np.random.default_rng(seed)
+    seeds = [points_of(name).take([0]) for name in ("new_motor", "overfilled_motor", "slow_roller", "oil_bath_pump")]
+    base = join(seeds).take(rng.integers(0, len(seeds), rows))
+
+    def spread(low: float, high: float) -> np.ndarray:
+        return np.exp(rng.uniform(np.log(low), np.log(high), rows))
+
+    size = spread(0.4, 2.5)
+    grease = base.is_grease > 0
+    return dataclasses.replace(
+        base,
+        case=np.arange(rows),
+        share=np.ones(rows),
+        bore=base.bore * size,
+        outside=base.outside * size,
+        width=base.width * size,
+        pitch_diameter=base.pitch_diameter * size,
+        dynamic_rating=base.dynamic_rating * size**2,
+        static_rating=base.static_rating * size**2,
+        fatigue_limit=base.fatigue_limit * size**2,
+        free_volume=base.free_volume * size**3,
+        speed=np.minimum(base.speed * spread(0.05, 3.0), 1.2 * base.speed_limit / size),
+        speed_limit=base.speed_limit / size,
+        radial_load=base.dynamic_rating * spread(0.002, 0.2),
+        axial_load=base.dynamic_rating * spread(0.0005, 0.05) * rng.choice([-1, 0, 1], rows),
+        ambient=rng.uniform(-30, 60, rows),
+        coldest=rng.uniform(-50, 30, rows),
+        draught=rng.choice([0.0, 0.5, 3.0, 10.0], rows),
+        housing_area=base.housing_area * size**2 * spread(0.3, 3.0),
+        conductance=np.where(rng.random(rows) < 0.2, spread(0.05, 20.0), np.nan),
+        shaft_temperature=rng.uniform(-20, 160, rows),
+        machine_heat=rng.choice([0.0, 5.0, 60.0], rows),
+        fill=np.where(grease, rng.uniform(0.05, 1.2, rows), np.nan),
+        void=base.void * size**3 * rng.choice([0.0, 1.0], rows),
+        is_open=rng.choice([0.0, 1.0], rows),
+        interval=np.where(rng.random(rows) < 0.5, spread(100, 30000), np.nan),
+    )
+
+
+@pytest.fixture(scope="module")
+def many() -> Points:
+    return random_points()
+
+
+@pytest.fixture(scope="module")
+def judged_many(many):
+    return judge(many)
+
+
+ROW_FIELDS = ("reference_viscosity", "kappa", "contamination", "life_factor", "load_ratio")
+POSITION_FIELDS = ("rating_life", "modified_life", "allowed_interval", "interval", "verdict", "governing")
+
+
+def test_ten_thousand_in_one_call_equal_ten_thousand_single_calls(many, judged_many):
+    for i in range(len(many)):
+        one = judge(many.take([i]))
+        for name in ROW_FIELDS + POSITION_FIELDS:
+            a, b = getattr(one, name)[0], getattr(judged_many, name)[i]
+            assert a == b or (np.isnan(a) and np.isnan(b)) or abs(a - b) <= 1e-12 * abs(b), (i, name, a, b)
+        a, b = one.state.temperature[0], judged_many.state.temperature[i]
+        assert a == b or (np.isnan(a) and np.isnan(b)) or abs(a - b) <= 1e-12 * abs(b), (i, a, b)
+        for name, limit in one.judged.items():
+            assert limit.state[0] == judged_many.judged[name].state[i], (i, name)
+
+
+def test_every_balance_is_closed_to_a_millionth_of_the_friction_power(judged_many):
+    state = judged_many.state
+    assert state.is_found.mean() > 0.9  # the test would be empty otherwise
+    closed = np.abs(state.residual) <= 1e-6 * state.friction_power
+    assert closed[state.is_found].all()
+    assert np.isnan(state.temperature[~state.is_found]).all()
+
+
+def test_heat_removed_is_friction_and_machine_heat(many, judged_many):
+    state = judged_many.state
+    found = state.is_found
+    assert np.allclose(state.heat_removed[found], (state.friction_power + many.machine_heat)[found], rtol=1e-6)
+
+
+def test_the_root_is_the_one_that_brentq_finds(many, judged_many):
+    found = np.flatnonzero(judged_many.state.is_found)[:200]
+    for i in found:
+        balance = equilibrium.Balance(many.take([i]))
+
+        def surplus(rise, balance=balance):
+            heat = balance.at(np.array([rise]))
+            return float(heat.heat_in[0] - heat.heat_out[0])
+
+        top = equilibrium.TOP_TEMPERATURE - balance.floor[0]
+        root = brentq(surplus, 1e-9, top, xtol=1e-12, rtol=1e-12)
+        assert abs(balance.floor[0] + root - judged_many.state.temperature[i]) < 1e-5
+
+
+def test_the_balance_has_one_root_because_it_only_falls(many):
+    rises = np.linspace(0.5, 180, 60)
+    balance = equilibrium.Balance(many)
+    with np.errstate(all="ignore"):
+        surplus = np.stack([(lambda h: h.heat_in - h.heat_out)(balance.at(np.full(len(many), r))) for r in rises])
+    # Between the coldest sink and the top the surplus of heat only falls, up to rounding.
+    steps = np.diff(surplus, axis=0)
+    assert (steps <= 1e-9 * np.abs(surplus[:-1]).max(axis=0)).all()
+
+
+def test_without_an_equilibrium_the_state_is_beyond_and_nothing_is_a_number():
+    hot = points_of("new_motor").changed(conductance=0.01, shaft_conductance=0.0, fin_conductance=0.0, speed=6000.0)
+    outcome = judge(hot)
+    assert not outcome.state.is_found[0]
+    assert np.isnan(outcome.state.temperature[0])
+    assert limits.STATES[outcome.judged["temperature"].state[0]] == "beyond"
+    assert limits.STATES[outcome.judged["film"].state[0]] == "unknown"
+    assert limits.STATES[outcome.verdict[0]] == "beyond"
+
+
+# Physics that must hold: change one thing in every position and look which way the answer went.
+
+
+def temperatures(points):
+    return equilibrium.solve(points).temperature
+
+
+def test_more_fill_above_the_clearing_share_never_lowers_the_temperature(many):
+    low = dataclasses.replace(many, fill=np.where(np.isnan(many.fill), np.nan, 0.4))
+    high = dataclasses.replace(many, fill=np.where(np.isnan(many.fill), np.nan, 0.9))
+    a, b = temperatures(low), temperatures(high)
+    assert not (b < a - 1e-6).any()
+    assert (b > a + 0.1).any()
+
+
+@pytest.mark.parametrize(
+    "change",
+    [
+        {"cooling_factor": 1.5},
+        {"draught": 12.0},
+    ],
+)
+def test_more_cooling_never_raises_the_temperature(many, change):
+    # A shaft colder than the air turns "cooling" round: the air then heats.
+    warm = dataclasses.replace(many, shaft_temperature=np.maximum(many.shaft_temperature, many.ambient))
+    a, b = temperatures(warm), temperatures(warm.changed(**change))
+    is_hotter = b > a + 1e-6
+    assert not is_hotter[~np.isnan(a)].any()
+    assert (b < a - 0.1).any()
+
+
+def test_a_warmer_ambient_never_cools(many):
+    a = temperatures(many)
+    b = temperatures(dataclasses.replace(many, ambient=many.ambient + 5))
+    assert not (b < a - 1e-6).any()
+
+
+def test_a_thicker_oil_never_lowers_kappa_at_a_fixed_temperature():
+    from lubecheck.physics import film, viscosity
+
+    nu_40 = np.linspace(10, 1000, 200)
+    constants = [viscosity.walther_constants.plain(nu_40=nu, nu_100=0.1 * nu + 1) for nu in nu_40]
+    a, b = np.array(constants).T
+    nu = viscosity.viscosity_from_constants.plain(np.full(200, 60.0), a=a, b=b)
+    kappa = film.viscosity_ratio.plain(nu=nu, nu_1=film.reference_viscosity.plain(1480.0, 72.5))
+    assert (np.diff(kappa) > 0).all()
+
+
+def test_more_load_never_lengthens_life(many):
+    heavier = dataclasses.replace(many, radial_load=many.radial_load * 1.3, axial_load=many.axial_load * 1.3)
+    a, b = judge(many), judge(heavier)
+    for name in ("rating_life", "modified_life"):
+        longer = getattr(b, name) > getattr(a, name) * (1 + 1e-9)
+        assert not longer.any(), name
+
+
+def test_a_hotter_bearing_never_lengthens_the_interval(many):
+    grease = many.take(np.flatnonzero(many.is_grease > 0)[:4000])
+    a = judge(grease)
+    b = judge(dataclasses.replace(grease, machine_heat=grease.machine_heat + 20))
+    assert (b.state.temperature[a.state.is_found & b.state.is_found] > 0).any()
+    assert not (b.allowed_interval > a.allowed_interval * (1 + 1e-9)).any()
+
+
+def test_equal_duty_points_equal_one_point():
+    one = points_of("new_motor")
+    parts = [one.changed(share=share) for share in (0.2, 0.5, 0.3)]
+    three = join(parts).changed(case=0)
+    a, b = judge(one), judge(three)
+    for name in ("rating_life", "modified_life", "allowed_interval"):
+        assert np.allclose(getattr(a, name), getattr(b, name), rtol=1e-12)
+
+
+def test_no_state_comes_from_what_is_not_a_number():
+    uses = np.array([0.0, 0.85, 0.8500001, 1.0, 1.0000001, np.inf, np.nan, -0.5])
+    states = [limits.STATES[code] for code in limits.state_of(uses)]
+    assert states == ["within", "within", "near", "near", "beyond", "beyond", "unknown", "within"]
+
+
+def test_more_load_case_has_an_example_of_every_state(judged_many):
+    assert set(np.unique(judged_many.verdict)) >= {limits.WITHIN, limits.NEAR_CODE, limits.BEYOND}

@@ -1,0 +1,260 @@
+"""The case reader: what it takes, and what it refuses, each with file, line, key, value and expectation."""
+
+from __future__ import annotations
+
+import math
+from pathlib import Path
+
+import pytest
+from conftest import BASE, EXAMPLES, with_key
+
+from lubecheck.errors import CaseError
+from lubecheck.model.entries import TABLES, entries
+from lubecheck.model.reader import load_case, read_case
+
+
+def faults_of(text: str | bytes):
+    with pytest.raises(CaseError) as caught:
+        read_case(text, "pump.toml")
+    return caught.value.faults
+
+
+# table, key, TOML value, and a word that the message has to say
+BAD_VALUES = [
+    ("bearing", "designation", '"6390"', "63"),
+    ("bearing", "designation", '"banana"', "designation"),
+    ("bearing", "designation", '""', "text"),
+    ("bearing", "designation", "6309", "text"),
+    ("bearing", "dynamic_rating", '"53 kg"', "force"),
+    ("bearing", "dynamic_rating", '"53"', "force"),
+    ("bearing", "dynamic_rating", "53000", "force"),
+    ("bearing", "dynamic_rating", '"-53 kN"', "force"),
+    ("bearing", "dynamic_rating", '"0 N"', "force"),
+    ("bearing", "dynamic_rating", '"53 kn"', "kN"),
+    ("bearing", "static_rating", '"31,5 kN"', "decimal point"),
+    ("bearing", "static_rating", '"31 500 N"', "without a separator"),
+    ("bearing", "static_rating", '"30 kN + 1 kN"', "no arithmetic"),
+    ("bearing", "static_rating", '"1e30 N"', "30"),
+    ("bearing", "mass", '"nan kg"', "finite"),
+    ("bearing", "mass", '"inf kg"', "finite"),
+    ("bearing", "mass", "nan", "mass"),
+    ("bearing", "cage", '"steal"', "steel"),
+    ("bearing", "seal", '"shield"', "shields"),
+    ("bearing", "clearance", '"C9"', "C3"),
+    ("bearing", "bore", '"45 mm"', "beside a designation"),
+    ("bearing", "f0", '"2 mm"', "number"),
+    ("bearing", "f1", "2.0", "0.02"),
+    ("bearing", "colour", '"red"', "colour"),
+    ("bearing", "desgnation", '"6309"', "designation"),
+    ("lubricant", "name", '"poliurea-110-2"', "polyurea-110-2"),
+    ("lubricant", "name", "1", "text"),
+    ("lubricant", "designation", '"KP2K-30"', "not both"),
+    ("lubricant", "nu_40", '"110 N"', "kinematic viscosity"),
+    ("lubricant", "highest", '"140 C"', "temperature"),
+    ("lubricant", "highest", '"140 K"', "20 to 350"),
+    ("lubricant", "ep", '"yes"', "true or false"),
+    ("lubricant", "nlgi", "7", "000"),
+    ("lubricant", "thickener", '"lithum"', "lithium"),
+    ("duty", "speed", '"1480"', "speed"),
+    ("duty", "speed", "1480", "speed"),
+    ("duty", "speed", '"0 rpm"', "0.1"),
+    ("duty", "speed", '"-1480 rpm"', "speed"),
+    ("duty", "speed", '"1480 rmp"', "rpm"),
+    ("duty", "speed", '"1480 mm"', "speed"),
+    ("duty", "speed", '"1e9 rpm"', "200000"),
+    ("duty", "speed", '["1480 rpm"]', "speed"),
+    ("duty", "speed", "1979-05-27", "speed"),
+    ("duty", "speed", "true", "speed"),
+    ("duty", "speed", '"9**9**9 rpm"', "speed"),
+    ("duty", "radial_load", '"1.9 kN 2"', "force"),
+    ("duty", "radial_load", '"kN"', "force"),
+    ("duty", "axial_load", '""', "force"),
+    ("duty", "share", '"150 %"', "share"),
+    ("duty", "share", "0.4", "add up"),
+    ("duty", "load", '"1 kN"', "radial_load"),
+    ("surroundings", "ambient", '"40"', "temperature"),
+    ("surroundings", "ambient", '"40 K"', "-60 to 150"),
+    ("surroundings", "ambient", '"400 degC"', "-60 to 150"),
+    ("surroundings", "ambient", '"forty degC"', "temperature"),
+    ("surroundings", "coldest", '"-10 delta_degC"', "temperature"),
+    ("surroundings", "dust", '"filthy"', "very dusty"),
+    ("surroundings", "orientation", '"upright"', "vertical"),
+    ("surroundings", "altitude", '"99 km"', "length"),
+    ("surroundings", "ambeint", '"40 degC"', "ambient"),
+    ("housing", "kind", '"pedstal"', "pedestal"),
+    ("housing", "area", '"0.1 m"', "area"),
+    ("housing", "conductance", '"1.4 W/K"', "conductance"),
+    ("housing", "machine_heat", '"12 W"', "either"),
+    ("housing", "relief", '"shut"', "closed"),
+    ("grease", "fill", '"15 mm"', "mass"),
+    ("grease", "fill", "15", "share"),
+    ("grease", "fill", '"0 g"', "mass"),
+    ("grease", "fill", '"-15 g"', "mass"),
+    ("grease", "fill", '"lots"', "unknown"),
+    ("grease", "interval", '"16"', "time"),
+    ("grease", "interval", '"16 fortnights"', "time"),
+    ("grease", "interval", "16", "time"),
+    ("grease", "hours_per_day", '"25 h"', "24"),
+    ("grease", "stroke", '"1 kg"', "50"),
+    ("cleanliness", "setting", '"dirty"', "severe"),
+    ("cleanliness", "setting", '"bath -/17/14"', "grease"),
+    ("limits", "reliability", "1.0", "0.9995"),
+    ("limits", "life", '"0 h"', "time"),
+    ("oil", "supply", '"bath"', "grease"),
+    ("gear", "ratio", "2", "bearing"),
+]
+
+
+@pytest.mark.parametrize(("table", "key", "value", "word"), BAD_VALUES)
+def test_a_bad_value_is_refused_with_place_key_value_and_expectation(table, key, value, word):
+    text = with_key(BASE, table, key, value)
+    faults = faults_of(text)
+    messages = [str(fault) for fault in faults]
+    where = [m for m in messages if m.startswith("pump.toml:") and (key in m or table in m)]
+    assert where, messages
+    assert any(word in message for message in where), where
+    named = [fault for fault in faults if key in fault.key or table in fault.key]
+    assert any(fault.line and table.split("[")[0] in "\n".join(text.splitlines()[: fault.line]) for fault in named)
+
+
+@pytest.mark.parametrize(
+    ("content", "word"),
+    [
+        (b"", "empty"),
+        (b"  \n\t\n", "empty"),
+        (b"not a case at all", "TOML"),
+        (b"<xml/>", "TOML"),
+        (b'[bearing]\ndesignation = "6309', "TOML"),
+        (BASE.encode() + b'[bearing]\ndesignation = "6310"\n', "bearing"),
+        (b"\xff\xfe[bearing]", "UTF-8"),
+        (BASE.encode().replace(b"6309", b"63\xb009"), "UTF-8"),
+        (BASE.encode().replace(b"[bearing]", b"[[bearing]]") + b'[[bearing]]\ndesignation = "6310"\n', "2 of"),
+        (b"bearing = 6309", "[bearing]"),
+        (b"x = " + b"[" * 3000, "TOML"),
+        (b"#" * 2_000_000, "bytes"),
+    ],
+)
+def test_a_file_that_is_no_case_is_refused(content, word):
+    messages = [str(fault) for fault in faults_of(content)]
+    assert all(message.startswith("pump.toml") for message in messages)
+    assert any(word in message for message in messages), messages
+
+
+@pytest.mark.parametrize("table", ["bearing", "lubricant", "duty", "surroundings"])
+def test_a_missing_table_is_named(table):
+    head = f"[[{table}]]" if table == "duty" else f"[{table}]"
+    start = BASE.index(head)
+    end = BASE.find("\n[", start + 1)
+    faults = faults_of(BASE[:start] + BASE[end + 1 :])
+    assert [fault.key for fault in faults] == [table]
+
+
+@pytest.mark.parametrize(("table", "key"), [("duty", "speed"), ("duty", "radial_load"), ("duty", "axial_load"),
+                                            ("surroundings", "ambient")])  # fmt: skip
+def test_a_missing_need_is_named(table, key):
+    faults = faults_of(with_key(BASE, table, key, None))
+    assert len(faults) == 1
+    assert key in faults[0].key
+
+
+def test_all_faults_come_at_once_in_the_order_of_the_file():
+    text = BASE
+    for table, key, value in (("bearing", "mass", '"1,5 kg"'), ("duty", "speed", '"1480"'),
+                              ("surroundings", "dust", '"filthy"'), ("grease", "fill", "15")):  # fmt: skip
+        text = with_key(text, table, key, value)
+    faults = faults_of(text)
+    assert [fault.key for fault in faults] == ["bearing.mass", "duty[1].speed", "surroundings.dust", "grease.fill"]
+    assert [fault.line for fault in faults] == sorted(fault.line for fault in faults)
+
+
+def test_a_fault_names_the_line_of_its_key():
+    text = with_key(BASE, "surroundings", "dust", '"filthy"')
+    (fault,) = faults_of(text)
+    assert text.splitlines()[fault.line - 1] == 'dust = "filthy"'
+
+
+def test_a_bore_that_is_no_smaller_than_the_outside_is_refused():
+    text = BASE.replace(
+        'designation = "6309"', 'family = "deep groove ball"\nbore = "100 mm"\noutside = "100 mm"\nwidth = "25 mm"'
+    )
+    (fault,) = faults_of(text)
+    assert fault.key == "bearing.bore"
+    assert "less than the outside" in fault.expected
+
+
+def test_dimensions_that_are_not_all_there_are_named():
+    text = BASE.replace('designation = "6309"', 'family = "deep groove ball"\nbore = "45 mm"')
+    (fault,) = faults_of(text)
+    assert "outside" in fault.expected
+    assert "width" in fault.expected
+
+
+def test_no_load_at_all_is_refused():
+    text = with_key(with_key(BASE, "duty", "radial_load", '"0 N"'), "duty", "axial_load", '"0 N"')
+    assert "above 0 N" in faults_of(text)[0].expected
+
+
+def test_two_duty_points_need_their_shares():
+    text = BASE + '\n[[duty]]\nspeed = "900 rpm"\nradial_load = "1 kN"\naxial_load = "0 N"\n'
+    assert [fault.key for fault in faults_of(text)] == ["duty[1].share", "duty[2].share"]
+
+
+def test_a_directory_and_a_missing_file_are_refused(tmp_path):
+    for path, word in ((tmp_path, "directory"), (tmp_path / "none.toml", "no such file"), ("a\0b", "not a file name")):
+        with pytest.raises(CaseError, match=word):
+            load_case(path)
+
+
+def test_a_shaft_in_hertz_turns_so_many_times_a_second():
+    case = read_case(with_key(BASE, "duty", "speed", '"25 Hz"'))
+    assert case.duty[0].speed == 1500.0
+
+
+@pytest.mark.parametrize(
+    ("table", "key", "value", "expected"),
+    [
+        ("surroundings", "ambient", '"104 degF"', 40.0),
+        ("surroundings", "ambient", '"313.15 K"', 40.0),
+        ("surroundings", "draught", '"196.8503937 ft/min"', 1.0),
+        ("housing", "void", '"3.661425 in^3"', 60.0),
+        ("housing", "void", '"60 ml"', 60.0),
+    ],
+)
+def test_any_unit_of_the_right_dimension_is_taken(table, key, value, expected):
+    case = read_case(with_key(BASE, table, key, value))
+    assert math.isclose(getattr(getattr(case, table), key), expected, rel_tol=1e-6)
+
+
+def test_an_inch_bearing_is_read_by_its_dimensions():
+    text = BASE.replace(
+        'designation = "6309"', 'family = "deep groove ball"\nbore = "1.75 in"\noutside = "3.75 in"\nwidth = "13/16"'
+    )
+    assert [fault.key for fault in faults_of(text)] == ["bearing.width"]
+    case = read_case(text.replace('"13/16"', '"0.8125 in"'))
+    assert math.isclose(case.bearing.bore, 44.45)
+
+
+def test_an_interval_in_weeks_runs_by_the_calendar_and_one_in_hours_does_not():
+    weeks = read_case(with_key(BASE, "grease", "interval", '"10 week"')).grease.interval
+    hours = read_case(with_key(BASE, "grease", "interval", '"1680 h"')).grease.interval
+    assert weeks.value == hours.value == 1680.0
+    assert (weeks.is_calendar, hours.is_calendar) == (True, False)
+
+
+def test_a_byte_order_mark_and_windows_line_ends_are_taken():
+    assert read_case(b"\xef\xbb\xbf" + BASE.replace("\n", "\r\n").encode()).bearing.bore == 45.0
+
+
+@pytest.mark.parametrize("path", sorted(EXAMPLES.glob("*.toml")), ids=lambda path: path.stem)
+def test_every_example_is_read(path: Path):
+    case = load_case(path)
+    assert case.title
+    assert case.given
+
+
+@pytest.mark.parametrize(("table", "key", "entry"), [(t, k, e) for t, form in TABLES.items() for k, e in entries(form)])
+def test_every_key_says_what_it_is_and_what_it_expects(table, key, entry):
+    assert len(entry.meaning) > 3, (table, key)
+    assert entry.expected
+    if entry.kinds and not entry.words:
+        assert entry.example, (table, key)
