@@ -1,0 +1,82 @@
+"""How figures are written for people: in SI or inch units, with as many digits as they are good for."""
+
+from __future__ import annotations
+
+import math
+
+from lubecheck.units import KINDS, Kind, from_house
+
+SYSTEMS = ("si", "inch")
+
+# The unit in which a kind is shown in inch practice; kinds that are not here keep their house unit.
+_INCH = {
+    "length": "in",
+    "area": "in^2",
+    "volume": "in^3",
+    "mass": "oz",
+    "velocity": "ft/min",
+    "force": "lbf",
+    "torque": "lbf*in",
+    "temperature": "degF",
+    "temperature difference": "delta_degF",
+}
+_KIND_OF_UNIT: dict[str, Kind] = {kind.unit: kind for kind in reversed(tuple(KINDS.values()))}
+
+
+def shown_unit(unit: str, system: str) -> str:
+    """Return the unit in which a figure of a house unit is shown; empty for a bare number."""
+    if unit == "1":
+        return ""
+    return _INCH.get(_KIND_OF_UNIT[unit].name, unit) if system == "inch" else unit
+
+
+def converted(value: float, unit: str, system: str) -> float:
+    """Return a value of a house unit in the unit it is shown in.
+
+    >>> round(converted(40.0, "degC", "inch"), 6)
+    104.0
+    """
+    word = shown_unit(unit, system)
+    return from_house(value, word, _KIND_OF_UNIT[unit]) if word and word != unit else value
+
+
+def number(value: float | None) -> str:
+    """Return a number with three or four digits, large ones with a thin gap left out; a dash where there is none.
+
+    >>> number(12345.6), number(0.71234), number(71.23), number(None)
+    ('12346', '0.712', '71.2', '-')
+    """
+    if value is None or not math.isfinite(value):
+        return "-"
+    size = abs(value)
+    if size >= 1e6:
+        return f"{value:.3g}"
+    if size >= 100 or value == 0:
+        return f"{value:.0f}"
+    return f"{value:.1f}" if size >= 10 else f"{value:.2f}" if size >= 1 else f"{value:.3f}"
+
+
+LONG_LIFE = 200_000.0  # h: a longer life says "not this" and no more, so it is not printed as if it were known
+
+
+def amount(value: float | None, unit: str, system: str) -> str:
+    """Return a value in the unit it is shown in, without the unit.
+
+    >>> amount(1.2e7, "h", "si"), amount(45.0, "mm", "inch")
+    ('over 200000', '1.77')
+    """
+    if unit == "h" and value is not None and value > LONG_LIFE:
+        return f"over {LONG_LIFE:.0f}"
+    return number(None if value is None else converted(value, unit, system))
+
+
+def figure(value: float | None, unit: str, system: str) -> str:
+    """Return a value with its unit as it is shown."""
+    if value is None:
+        return "-"
+    return f"{amount(value, unit, system)} {shown_unit(unit, system)}".rstrip()
+
+
+def printable(text: str) -> str:
+    """Return a user's text without control characters, which could steer a terminal."""
+    return "".join(c if c.isprintable() else " " for c in text)

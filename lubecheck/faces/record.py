@@ -1,0 +1,57 @@
+"""The record: a result as JSON, for other programs.
+
+Every key is declared by the result's own dataclasses; a figure is {"value", "unit"} with "low" and "high" where it has
+a band, null where it could not be worked out. NaN and infinity cannot leave: the writer refuses them.
+"""
+
+from __future__ import annotations
+
+import dataclasses
+import json
+from typing import Any
+
+from lubecheck.model.result import Figures, Result
+
+SCHEMA = "lubecheck/check/1"
+
+
+def figures(group: Figures | None) -> dict[str, Any] | None:
+    """Return a group of figures as it stands in the record."""
+    if group is None:
+        return None
+    record: dict[str, Any] = {}
+    for name, figure in group.figures.items():
+        record[name] = {"value": figure.value, "unit": figure.unit}
+        if figure.low is not None or figure.high is not None:
+            record[name] |= {"low": figure.low, "high": figure.high}
+    return record
+
+
+def of_result(result: Result) -> dict[str, Any]:
+    """Return a result as plain data by the schema."""
+    return {
+        "schema": SCHEMA,
+        "title": result.title,
+        "verdict": result.verdict,
+        "governing": result.governing,
+        "limits": [dataclasses.asdict(limit) for limit in result.limits],
+        "operating": figures(result.operating),
+        "duty": [figures(point) for point in result.duty],
+        "grease": figures(result.grease),
+        "life": figures(result.life),
+        "plan": dataclasses.asdict(result.plan),
+        "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
+        "notes": list(result.notes),
+        "cautions": list(result.cautions),
+        "inputs": {
+            "bearing": result.bearing,
+            "lubricant": result.lubricant,
+            "given": dict(result.given),
+            "assumed": [dataclasses.asdict(item) for item in result.assumed],
+        },
+    }
+
+
+def to_json(result: Result) -> str:
+    """Return a result as JSON text."""
+    return json.dumps(of_result(result), indent=2, allow_nan=False)

@@ -1,0 +1,200 @@
+"""The terminal verdict: the state in colour and in words, each limit, the operating point, the plan, what was assumed.
+
+Only prints a finished result. A user's text goes through rich's Text and never into markup.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+
+from rich.console import Console
+from rich.padding import Padding
+from rich.table import Table
+from rich.text import Text
+
+from lubecheck.faces.display import amount, figure, number, printable, shown_unit
+from lubecheck.model.result import Figures, Limit, PlanLine, Result
+from lubecheck.sources import cite
+
+# ISO 22324: green, yellow, red. What was not judged has no colour, and is said.
+STYLES = {"within": "green", "near": "yellow", "beyond": "red", "unknown": ""}
+_BAR = 10  # cells of a bar that is full at the limit
+_WIDE = 100  # columns from which sources stand beside the limits
+
+
+def print_result(result: Result, console: Console, system: str = "si") -> None:
+    """Print a result."""
+    _heading(result, console)
+    _limits(result, console, system)
+    _operating(result, console, system)
+    _plan(result, console, system)
+    _bullets("Notes", result.notes, console)
+    _bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
+    _bullets("Cautions", result.cautions, console)
+
+
+def _heading(result: Result, console: Console) -> None:
+    if result.title:
+        console.print(Text(printable(result.title), style="bold"))
+    console.print(Text(printable(f"{result.bearing}")))
+    console.print(Text(printable(f"{result.lubricant}")))
+    governing = result.limit(result.governing)
+    verdict = Text("\nVerdict: ")
+    style = STYLES[result.verdict]
+    verdict.append(f" {result.verdict.upper()} ", style=f"bold reverse {style}".strip())
+    verdict.append(f"  governed by {_words(result.governing)}, ")
+    verdict.append("which could not be judged" if governing.state == "unknown" else f"use {_use(governing)} of 1")
+    console.print(verdict)
+    console.print(Text(_meaning(result), style="italic"))
+
+
+def _meaning(result: Result) -> str:
+    """Say what the verdict asks of the reader."""
+    unknown = [_words(limit.name) for limit in result.limits if limit.state == "unknown"]
+    also = f" Not judged: {', '.join(unknown)}." if unknown else ""
+    return {
+        "within": "Every limit has room.",
+        "near": "No limit is passed, but little room is left: watch the governing one.",
+        "beyond": f"Do not run it like this: a limit is passed.{also}",
+        "unknown": f"Not good until it is judged: see what to state below.{also}",
+    }[result.verdict]
+
+
+def _limits(result: Result, console: Console, system: str) -> None:
+    table = Table(box=None, pad_edge=False, padding=(0, 2, 0, 0), title=None)
+    for heading, justify in (("Limit", "left"), ("State", "left"), ("Use", "right"), ("", "left"),
+                             ("Demand", "right"), ("Allowed", "right"), ("", "left")):  # fmt: skip
+        table.add_column(heading, justify=justify, no_wrap=True)  # type: ignore[arg-type]  # rich wants a Literal
+    is_wide = console.width >= _WIDE
+    if is_wide:
+        table.add_column("Source", no_wrap=True)
+    for limit in result.limits:
+        style = STYLES[limit.state]
+        cells = [
+            Text(_words(limit.name)),
+            Text(limit.state, style=style),
+            Text(_use(limit)),
+            _bar(limit, console),
+            Text(amount(limit.demand, limit.unit, system)),
+            Text(amount(limit.allowed, limit.unit, system)),
+            Text(shown_unit(limit.unit, system)),
+        ]
+        table.add_row(*cells, *([Text(limit.basis)] if is_wide else []))
+    console.print()
+    console.print(table)
+    notes = [(limit, limit.note) for limit in result.limits if limit.note]
+    why = Table(box=None, pad_edge=False, padding=(0, 2, 0, 2), show_header=False)
+    why.add_column(no_wrap=True)
+    why.add_column()
+    for limit, note in notes:
+        why.add_row(Text(_words(limit.name), style=STYLES[limit.state]), Text(printable(note)))
+    if notes:
+        console.print(Text("\nWhy", style="bold"))
+        console.print(why)
+    if not is_wide:
+        _bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console)
+
+
+def _is_plain(console: Console) -> bool:
+    """Tell a terminal that shows little more than ASCII."""
+    return not console.encoding.lower().startswith("utf")
+
+
+def _words(name: str) -> str:
+    return name.replace("_", " ")
+
+
+def _use(limit: Limit) -> str:
+    if limit.use is None:
+        return "-" if limit.state == "unknown" else "no end"
+    return f"{limit.use:.2f}" if limit.use < 100 else "over 99"
+
+
+def _bar(limit: Limit, console: Console) -> Text:
+    """Return a bar that is full at the limit; a part beyond it is marked with a plus."""
+    mark, blank = ("#", ".") if _is_plain(console) else ("\N{BLACK SQUARE}", "\N{MIDDLE DOT}")
+    if limit.state == "unknown":
+        return Text("?".ljust(_BAR + 1))
+    use = 2.0 if limit.use is None else limit.use
+    cells = min(_BAR, round(use * _BAR))
+    return Text(mark * cells + blank * (_BAR - cells) + ("+" if use > 1 else " "), style=STYLES[limit.state])
+
+
+def _operating(result: Result, console: Console, system: str) -> None:
+    console.print(Text("\nOperating point", style="bold"))
+    table = Table(box=None, pad_edge=False, padding=(0, 2, 0, 2), show_header=False)
+    for justify in ("left", "right", "left", "left"):
+        table.add_column(justify=justify, no_wrap=justify != "left")
+    groups: list[Figures] = [result.operating, result.life]
+    if result.grease is not None:
+        groups.append(result.grease)
+    for group in groups:
+        for name, item in group.figures.items():
+            if name in ("first_fill", "regrease_quantity", "regrease_interval"):
+                continue  # the plan line says them
+            band = ""
+            if item.low is not None and item.high is not None and number(item.low) != number(item.high):
+                band = f"({amount(item.low, item.unit, system)} to {amount(item.high, item.unit, system)})"
+            table.add_row(
+                Text(_words(name)),
+                Text(amount(item.value, item.unit, system)),
+                Text(shown_unit(item.unit, system)),
+                Text(band),
+            )
+    console.print(table)
+
+
+def _plan(result: Result, console: Console, system: str) -> None:
+    plan = result.plan
+    console.print(Text("\nFor the maintenance plan", style="bold"))
+    if result.verdict in ("beyond", "unknown"):
+        open_limits = [_words(limit.name) for limit in result.limits if limit.state == result.verdict]
+        console.print(Text(f"  Only once this is settled: {', '.join(open_limits)}", style=STYLES[result.verdict]))
+    console.print(
+        Padding(
+            Text((" | " if _is_plain(console) else " · ").join(plan_parts(plan, system)), style="bold"), (0, 0, 0, 2)
+        )
+    )
+    for i, step in enumerate(plan.steps, start=1):
+        console.print(Padding(Text(f"{i}. {step}"), (0, 0, 0, 2)))
+
+
+def plan_parts(plan: PlanLine, system: str) -> list[str]:
+    """Return the parts of the plan line in words."""
+    proposed = {
+        key: " (proposed)" if key in plan.is_proposed else "" for key in ("fill", "interval", "regrease_amount")
+    }
+    parts = [printable(plan.lubricant)]
+    if plan.first_fill_g is not None:
+        strokes = _strokes(plan.first_fill_strokes, plan.stroke_g, system)
+        parts.append(f"first fill {figure(plan.first_fill_g, 'g', system)}{strokes}{proposed['fill']}")
+    if plan.regrease_g is not None:
+        strokes = _strokes(plan.regrease_strokes, plan.stroke_g, system)
+        parts.append(f"regrease with {figure(plan.regrease_g, 'g', system)}{strokes}{proposed['regrease_amount']}")
+    if plan.interval_h is not None and plan.interval_weeks is not None:
+        weeks = f"{plan.interval_weeks:.1f}".removesuffix(".0")
+        verb = "every" if plan.regrease_g is not None else "change the oil every"
+        parts.append(
+            f"{verb} {weeks} weeks ({number(plan.interval_h)} running hours at {plan.hours_per_day:g} h a day)"
+            f"{proposed['interval']}"
+        )
+    return parts
+
+
+def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
+    if strokes is None or stroke_g is None:
+        return ""
+    return f" = {strokes} strokes of {figure(stroke_g, 'g', system)} ({figure(strokes * stroke_g, 'g', system)})"
+
+
+def _bullets(heading: str, lines: Iterable[str], console: Console) -> None:
+    lines = tuple(lines)
+    if not lines:
+        return
+    console.print(Text(f"\n{heading}", style="bold"))
+    table = Table(box=None, pad_edge=False, padding=(0, 1, 0, 0), show_header=False)
+    table.add_column(width=3, justify="right")
+    table.add_column()
+    for line in lines:
+        table.add_row(Text("-"), Text(printable(line)))
+    console.print(table)

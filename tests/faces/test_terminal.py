@@ -1,0 +1,89 @@
+"""The terminal verdict: words with every colour, both unit systems, 80 columns, and a user's text that is no markup."""
+
+from __future__ import annotations
+
+import io
+import re
+
+import pytest
+from conftest import BASE, EXAMPLES, ROOT, with_key
+from rich.console import Console
+
+import lubecheck
+from lubecheck.faces.terminal import STYLES, print_result
+from lubecheck.model.reader import read_case
+
+
+def printed(text_or_path, *, width=100, system="si", **options) -> str:
+    case = read_case(text_or_path) if isinstance(text_or_path, str) else lubecheck.load_case(text_or_path)
+    console = Console(file=io.StringIO(), width=width, _environ={}, **options)
+    print_result(lubecheck.check(case), console, system)
+    return console.file.getvalue()
+
+
+@pytest.mark.parametrize("width", [80, 120])
+@pytest.mark.parametrize("path", sorted(EXAMPLES.glob("*.toml")), ids=lambda path: path.stem)
+def test_no_line_is_wider_than_the_terminal(path, width):
+    assert all(len(line.rstrip()) <= width for line in printed(path, width=width).splitlines())
+
+
+@pytest.mark.parametrize("path", sorted(EXAMPLES.glob("*.toml")), ids=lambda path: path.stem)
+def test_every_limit_shows_its_state_in_words_and_its_source(path):
+    result = lubecheck.check(lubecheck.load_case(path))
+    for width in (80, 120):
+        text = printed(path, width=width)
+        for limit in result.limits:
+            assert re.search(rf"{limit.name.replace('_', ' ')}\s+{limit.state}", text), limit.name
+            assert limit.basis in text if width == 120 else limit.name.replace("_", " ") + ": " in text
+        assert result.verdict.upper() in text
+
+
+def test_the_colours_are_those_of_the_alert_standard_and_unknown_has_none():
+    assert STYLES == {"within": "green", "near": "yellow", "beyond": "red", "unknown": ""}
+
+
+def test_the_plan_line_has_grams_strokes_hours_and_weeks():
+    text = " ".join(printed(EXAMPLES / "new_motor.toml", width=200).split())
+    for part in ("first fill 15.0 g = 12 strokes of 1.20 g", "regrease with 12.0 g = 10 strokes", "every 52 weeks",
+                 "8736 running hours at 24 h a day"):  # fmt: skip
+        assert part in text
+
+
+def test_inch_units_convert_every_figure_that_has_a_dimension():
+    text = printed(EXAMPLES / "new_motor.toml", system="inch", width=120)
+    assert "degF" in text
+    assert " oz" in text
+    assert "lbf" in text
+    assert "in^3" in text
+    limits = text[text.index("Limit") : text.index("Why")]
+    assert "degC" not in limits
+    assert "248  degF" in limits  # 120 degC
+
+
+def test_a_users_text_is_never_markup_nor_steers_the_terminal():
+    title = 'title = "[bold red]x[/x] \\u001b[2J \\u0007 end"\n'
+    text = printed(title + BASE, force_terminal=True, color_system="standard")
+    assert "[bold red]x[/x]" in text
+    assert "\x1b[2J" not in text
+    assert "\x07" not in text
+
+
+def test_cautions_and_assumptions_are_always_there():
+    text = printed(BASE)
+    for heading in ("Not said, so assumed", "Cautions", "For the maintenance plan", "Operating point"):
+        assert heading in text
+    assert "lock out" in text
+
+
+def test_an_unknown_verdict_says_what_to_state_and_holds_the_plan_back():
+    text = printed(with_key(BASE, "surroundings", "coldest", None))
+    assert "UNKNOWN" in text
+    assert "state [surroundings] coldest" in text
+    assert "Only once this is settled: cold start" in text
+
+
+def test_the_picture_of_the_readme_is_what_the_command_prints():
+    import runpy
+
+    made = runpy.run_path(str(ROOT / "examples" / "make_picture.py"), run_name="picture")
+    assert (ROOT / "examples" / "new_motor.svg").read_text(encoding="utf-8") == made["picture"]()
