@@ -82,9 +82,7 @@ def test_a_coolant_is_as_a_printed_table_has_it(
 ) -> None:
     _, values = read(name)
     density, heat, viscosity, conductivity = values[values[:, 0] == 20.0][0, 1:5]
-    for found, expected, rel in zip(
-        (density, heat, viscosity * 1e3, conductivity), printed, accuracy, strict=True
-    ):
+    for found, expected, rel in zip((density, heat, viscosity * 1e3, conductivity), printed, accuracy, strict=True):
         assert found == pytest.approx(expected, rel=rel)
 
 
