@@ -60,6 +60,7 @@ def test_letters_and_case_do_not_matter(text):
         ("7205 A", {"contact_angle": 30.0, "load_rule": "angular contact 30"}),
         ("7205 C/P4", {"contact_angle": 15.0, "load_rule": "angular contact 15"}),
         ("7010 CDGA/P4A", {"contact_angle": 15.0}),
+        ("7309 C3 A", {"contact_angle": 40.0, "clearance": "C3"}),  # an angle stands first, else it is not one
         ("1210 EKTN9", {"cage": "polyamide", "family": "self-aligning ball"}),
         ("NA 4910", {"family": "needle roller"}),
         ("QJ 212 N2MA", {"family": "four-point contact ball", "cage": "brass"}),

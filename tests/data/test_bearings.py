@@ -127,6 +127,11 @@ def test_what_the_user_gives_wins_and_is_said_to_be_his():
     assert mine.basis["fatigue_limit"] == "iso-281"
 
 
+def test_opening_a_sealed_bearing_leaves_no_sealed_side():
+    mine = bearings.with_given(bearings.find("6309-2RS1"), seal="open")
+    assert (mine.seal, mine.sealed_sides) == ("open", 0)
+
+
 def test_a_given_fatigue_limit_stays():
     mine = bearings.with_given(bearings.find("6309"), static_rating=31500.0, fatigue_limit=1340.0)
     assert mine.fatigue_limit == 1340.0
@@ -193,6 +198,11 @@ def test_a_pair_back_to_back_carries_both_ways_and_a_tandem_does_not():
     tapered = bearings.find("30213 DF")
     assert tapered.load_rule == "spherical roller"  # X and Y of tapered pairs are those of spherical roller bearings
     assert tapered.dynamic_rating / bearings.find("30213").dynamic_rating == pytest.approx(2 ** (7 / 9))
+
+
+def test_friction_factors_of_a_series_that_the_standard_does_not_list_are_marked_as_estimates():
+    assert {"f0", "f1"} <= set(bearings.find("51108").estimated)
+    assert not {"f0", "f1"} & set(bearings.find("6309").estimated)
 
 
 def test_an_unnamed_contact_angle_is_marked_as_an_estimate():
