@@ -244,8 +244,8 @@ def _bearing_columns(bearing: Bearing, reading: Mapping[str, Any]) -> dict[str, 
         "minimum_load_share": family.minimum_load_share,
         "interval_family": INTERVAL_FAMILY[family.interval_factor],
         "free_volume": float(volume),
-        "is_sealed": float(bearing.seal != "open"),
-        "rubbing_seals": 2.0 if bearing.seal == "contact seals" else 0.0,
+        "is_sealed": float(bearing.sealed_sides == 2),
+        "rubbing_seals": float(bearing.sealed_sides) if bearing.seal == "contact seals" else 0.0,
     }
 
 

@@ -262,3 +262,9 @@ def test_the_duty_point_with_the_most_use_governs():
 def test_numpy_warnings_stay_silent_inside():
     with np.errstate(divide="raise", invalid="raise", over="raise"):
         lubecheck.check(read_case(BASE))
+
+
+def test_a_bearing_that_is_closed_on_one_side_can_be_regreased():
+    result = lubecheck.check(read_case(BASE.replace('designation = "6309"', 'designation = "6309-Z"')))
+    assert result.limit("interval").state == "within"
+    assert result.plan.regrease_g is not None
