@@ -16,7 +16,7 @@ KELVIN = 273.15
 
 @dataclass(frozen=True, slots=True)
 class Table:
-    """A table to make: the fluid in words and in CoolProp's, its pressure in Pa, its temperatures in degC, its columns."""
+    """A table to make: the fluid in words and by CoolProp's name, pressure in Pa, temperatures in degC, columns."""
 
     name: str
     words: str
