@@ -29,7 +29,8 @@ def run() -> None:
             print(f"lubecheck: {fault}", file=sys.stderr)
         sys.exit(REFUSED)
     except LubecheckError as refused:
-        print(f"lubecheck: {refused}", file=sys.stderr)
+        for line in str(refused).splitlines():  # a table of the user's tells all its faults, one a line
+            print(f"lubecheck: {line}", file=sys.stderr)
         sys.exit(REFUSED)
     except BrokenPipeError:
         # The reader of our output went away, such as `head`: stop in silence, as other tools do.

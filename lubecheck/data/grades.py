@@ -8,6 +8,15 @@ from __future__ import annotations
 import math
 from dataclasses import dataclass
 
+# The body and the edition that each table of grades below is of.
+EDITIONS = {
+    "ISO VG": "ISO 3448:1992",
+    "SAE engine": "SAE J300 of 2021",
+    "SAE gear": "SAE J306 of 2019",
+    "AGMA": "AGMA 9005-D94 of 1994",
+    "NLGI": "DIN 51818 of 1981, as ASTM D217",
+}
+
 # ISO 3448:1992, seen: middle of each grade in mm^2/s at 40 degC; limits are 10 % either side.
 ISO_VG = (2.2, 3.2, 4.6, 6.8, 10, 15, 22, 32, 46, 68, 100, 150, 220, 320, 460, 680, 1000, 1500, 2200, 3200)
 ISO_VG_TOLERANCE = 0.10
@@ -146,6 +155,26 @@ def agma_of(iso_vg: float) -> str | None:
     '5'
     """
     return next((number for number, grade in AGMA.items() if grade == iso_vg), None)
+
+
+def equivalents(nu_40: float, nu_100: float) -> dict[str, str]:
+    """Return the grades that an oil has by its viscosity alone, by the names of `EDITIONS`.
+
+    An SAE grade goes by the viscosity at 100 degC only: nothing is said of winter, service class or additives.
+
+    >>> equivalents(100.0, 11.1)
+    {'ISO VG': 'ISO VG 100', 'SAE engine': 'SAE 30', 'SAE gear': 'SAE 85', 'AGMA': 'AGMA 3'}
+    """
+    grade = iso_vg_of(nu_40)
+    engine, gear = sae_engine_of(nu_100), sae_gear_of(nu_100)
+    number = None if grade is None else agma_of(grade)
+    found = {
+        "ISO VG": None if grade is None else f"ISO VG {grade:g}",
+        "SAE engine": None if engine is None else f"SAE {engine}",
+        "SAE gear": None if gear is None else f"SAE {gear}",
+        "AGMA": None if number is None else f"AGMA {number}",
+    }
+    return {name: text for name, text in found.items() if text is not None}
 
 
 def _holds(limits: tuple[float, float], nu: float) -> bool:

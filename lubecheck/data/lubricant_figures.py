@@ -11,24 +11,13 @@ import math
 from collections.abc import Mapping
 from typing import Any
 
-import numpy as np
-
 from lubecheck.data import designations, grades
 from lubecheck.data.lubricant import FIELDS, WAYS, Lubricant
+from lubecheck.data.lubricant_viscosity import SAYBOLT, Figures, as_array, find_viscosities
 from lubecheck.errors import Fault, InputError, nearest, shown
 from lubecheck.physics import viscosity
 from lubecheck.sources import SOURCES
 
-# Usual viscosity index of a kind of (base) oil, as in the tables: base-oil-handbooks, from memory.
-USUAL_INDEX: Mapping[str, float] = {
-    "mineral": 95.0,
-    "hydrotreated": 110.0,
-    "PAO": 140.0,
-    "ester": 140.0,
-    "PAG": 205.0,
-    "PFPE": 120.0,
-    "linear PFPE": 330.0,
-}
 # Usual density at 15 degC (kg/m^3) and thermal expansion (1/K) of a kind of oil, as in the tables.
 USUAL_DENSITY: Mapping[str, tuple[float, float]] = {
     "mineral": (885.0, 7.0e-4),
@@ -69,12 +58,8 @@ LIFE_REFERENCE: Mapping[str, float] = {
     "clay": 60.0,
     "PTFE": 100.0,
 }
-INDEX_AGREES = 6.0  # a stated index may differ from that of the stated viscosities: rounding, and twice its precision
-SAYBOLT: Mapping[str, float] = {"saybolt_100": 340 / 9, "saybolt_210": 890 / 9}  # degC of 100 and 210 degF
 GREASE_ONLY = ("thickener", "nlgi", "yield_stress", "life_reference")
 OIL_ONLY = ("pour_point", "flash_point", "iso_vg")
-
-Figures = dict[str, Any]
 
 
 def from_figures(
@@ -108,7 +93,7 @@ def from_figures(
         else:
             figures["kind"] = found
     if not faults:
-        _viscosities(figures, spread, assumed, faults)
+        find_viscosities(figures, spread, assumed, faults)
     if not faults and not is_complete:
         _fill_in(figures, assumed)
     if not faults:
@@ -145,12 +130,12 @@ def with_given(lubricant: Lubricant, **given: Any) -> Lubricant:
     assumed = list(lubricant.assumed)
     measured = [name for name in ("nu_40", "nu_100", *SAYBOLT) if name in stated]
     if measured:
-        figures["nu_40"] = figures["nu_100"] = None
-        if measured != ["nu_100"]:
-            figures["iso_vg"] = None  # the grade was the table's
+        figures["nu_40"] = figures["nu_100"] = figures["iso_vg"] = None  # the grade was the table's
     if len(measured) == 1 and "index" not in stated:
         alone = measured[0]
-        index = float(viscosity.viscosity_index.plain(nu_40=_array(lubricant.nu_40), nu_100=_array(lubricant.nu_100)))
+        index = float(
+            viscosity.viscosity_index.plain(nu_40=as_array(lubricant.nu_40), nu_100=as_array(lubricant.nu_100))
+        )
         stated["index"] = index
         unit = FIELDS[alone].unit if alone in SAYBOLT else "mm^2/s"
         assumed.append(f"viscosity index {index:.0f} of {lubricant.key} kept for {alone} = {stated[alone]:g} {unit}")
@@ -207,10 +192,6 @@ def contradictions(lubricant: Lubricant) -> list[Fault]:
     return faults
 
 
-def _array(value: float) -> Any:
-    return np.asarray(value, dtype=np.float64)
-
-
 def _out_of_bounds(name: str, value: Any) -> list[Fault]:
     """Refuse a figure that is not finite or no lubricant's, and a word that is not of the field's."""
     entry = FIELDS[name]
@@ -249,92 +230,6 @@ def _expand(figures: Figures, spread: dict[str, tuple[float, float]], assumed: l
         high = limits.high if math.isfinite(limits.high) else limits.middle
         spread[name] = (limits.low, high)
         assumed.append(f"{name} = {limits.middle:.4g} mm^2/s, the middle of {read.text} ({limits.low:g} to {high:g})")
-
-
-def _viscosities(
-    figures: Figures, spread: dict[str, tuple[float, float]], assumed: list[str], faults: list[Fault]
-) -> None:
-    """Find nu_40 and nu_100 from whatever was stated of them."""
-    if "iso_vg" in figures and "nu_40" not in figures:
-        limits = grades.iso_vg_limits(figures["iso_vg"])
-        figures["nu_40"] = figures["iso_vg"]
-        spread["nu_40"] = (limits.low, limits.high)
-        assumed.append(
-            f"nu_40 = {figures['nu_40']:g} mm^2/s, the middle of ISO VG {figures['iso_vg']:g} "
-            f"({limits.low:g} to {limits.high:g})"
-        )
-    base_oil = figures.get("base_oil", "")
-    measured = [name for name in ("nu_40", "nu_100", *SAYBOLT) if name in figures]
-    if "index" not in figures and len(measured) == 1 and base_oil in USUAL_INDEX:
-        figures["index"] = USUAL_INDEX[base_oil]
-        assumed.append(f"viscosity index {figures['index']:g}, usual of {base_oil} oil")
-    if any(name in figures for name in SAYBOLT):
-        _from_saybolt(figures, faults)
-    index = figures.get("index")
-    if "nu_40" in figures and "nu_100" in figures:
-        if index is not None and figures["nu_100"] < figures["nu_40"] and figures["nu_100"] >= 2:
-            found = float(
-                viscosity.viscosity_index.plain(nu_40=_array(figures["nu_40"]), nu_100=_array(figures["nu_100"]))
-            )
-            if abs(found - index) > INDEX_AGREES:
-                faults.append(Fault("index", f"{index:g}", f"{found:.0f}, which nu_40 and nu_100 give"))
-    elif index is not None and "nu_40" in figures:
-        figures["nu_100"] = float(viscosity.nu_100_from_index.plain(_array(figures["nu_40"]), _array(index)))
-        if math.isnan(figures["nu_100"]):
-            faults.append(Fault("index", f"{index:g}", "nu_100 instead: the index is not defined for so thin an oil"))
-    elif index is not None and figures.get("nu_100", 0.0) >= 2:
-        figures["nu_40"] = float(viscosity.nu_40_from_index.plain(_array(figures["nu_100"]), _array(index)))
-    else:
-        given = [name for name in ("nu_40", "nu_100", "index") if name in figures]
-        wanted = "nu_40 and nu_100" if not given else "nu_40 or index" if "nu_100" in given else "nu_100 or index"
-        key = "nu_40" if "nu_40" not in figures else "nu_100"
-        oil = "base-oil viscosity, " if figures["kind"] == "grease" else "viscosity, "
-        hint = "" if base_oil or not given else " (or base_oil, whose usual index is then taken)"
-        faults.append(Fault(key, "nothing", f"{oil}{wanted}{hint}"))
-
-
-def _from_saybolt(figures: Figures, faults: list[Fault]) -> None:
-    """Turn Saybolt seconds at 100 and 210 degF, or one of them with an index or the other viscosity, into figures."""
-    points = [
-        (temperature, float(viscosity.kinematic_from_saybolt.plain(_array(figures[name]), _array(temperature))))
-        for name, temperature in SAYBOLT.items()
-        if name in figures
-    ]
-    points += [(degc, figures[name]) for name, degc in (("nu_40", 40.0), ("nu_100", 100.0)) if name in figures]
-    if len(points) == 1 and "index" in figures:
-        given = next(name for name in SAYBOLT if name in figures)
-        figures["nu_40"] = nu_40_through(points[0][1], degc=points[0][0], index=figures["index"])
-        if math.isnan(figures["nu_40"]):
-            faults.append(Fault(given, f"{figures[given]:g} s", "more seconds: for so thin an oil there is no index"))
-            del figures["nu_40"]
-        return
-    if len(points) == 1:
-        other = "saybolt_210" if "saybolt_100" in figures else "saybolt_100"
-        faults.append(Fault(other, "nothing", "seconds at the second temperature too, or index, nu_40 or nu_100"))
-        return
-    degc, nu = (np.array(column) for column in zip(*points, strict=True))
-    a, b, _ = viscosity.fit.plain(degc, nu)
-    if math.isnan(b):
-        faults.append(Fault("saybolt_100", f"{figures.get('saybolt_100')}", "more seconds cold than hot"))
-        return
-    for name, at in (("nu_40", 40.0), ("nu_100", 100.0)):
-        figures.setdefault(name, float(viscosity.viscosity_from_constants.plain(_array(at), a=a, b=b)))
-
-
-def nu_40_through(nu: float, *, degc: float, index: float) -> float:
-    """Return the viscosity at 40 degC of the oil of an index that has a viscosity at some other temperature.
-
-    Found by repeating nu_40 x (wanted/found): each round takes away at least a third of what is left of the error, as
-    the viscosity at 40 degC moves that at 100 degC by its 0.5th to 0.7th power. Not a number where there is none.
-    """
-    nu_40 = nu
-    for _ in range(60):
-        nu_100 = float(viscosity.nu_100_from_index.plain(_array(nu_40), _array(index)))
-        found = float(viscosity.kinematic_viscosity.plain(_array(degc), nu_40=_array(nu_40), nu_100=_array(nu_100)))
-        if not abs(found / nu - 1) > 1e-12:  # NaN ends it as well
-            return nu_40 if found == found else math.nan
-        nu_40 *= nu / found
-    return nu_40
 
 
 def _fill_in(figures: Figures, assumed: list[str]) -> None:

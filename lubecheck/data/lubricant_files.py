@@ -2,7 +2,8 @@
 
 A CSV column may carry its unit in its heading, "nu_40 [mm^2/s]", and its cells are then bare numbers; without one,
 every cell carries its own. "nu_40_range" holds how far lubricants of the kind spread, "95..125". Lines that begin with
-# are remarks. A TOML value is a text with its unit.
+# are remarks; cells are parted by commas, or by semicolons or tabs where the headings are. A TOML value is a text with
+its unit.
 """
 
 from __future__ import annotations
@@ -11,6 +12,7 @@ import csv
 import re
 import tomllib
 from collections.abc import Iterator, Mapping
+from dataclasses import dataclass
 from pathlib import Path
 from typing import Any
 
@@ -22,6 +24,7 @@ from lubecheck.units import KINDS, UnreadableText, example, from_house, is_quant
 _HEADING = re.compile(r"\s*([a-z0-9_]+)\s*(?:\[([^\]]+)\])?\s*")
 _RANGE = re.compile(r"\s*([^\s.][^\s]*?|\.\d+)\s*\.\.\s*(\S+)(?:\s+(\S+))?\s*")
 _KEY = re.compile(r"[a-z0-9]+(?:[-.][a-z0-9]+)*")
+KEY_EXPECTED = "small letters and digits with hyphens between"
 # What every row of the tables states, beyond what a user must.
 _NEEDS = (
     "key",
@@ -48,25 +51,37 @@ def read_file(path: Path, *, defaults: Mapping[str, Any] | None = None, is_compl
 
     Raises TableError with every fault, each with the file, the line, the entry and the column.
     """
-    entries = read_facts(path)
+    return read_lubricants(path, file_text(path), defaults=defaults, is_complete=is_complete)
+
+
+def read_lubricants(
+    path: Path, text: str, *, defaults: Mapping[str, Any] | None = None, is_complete: bool = False
+) -> list[Lubricant]:
+    """Read the lubricants of a text as `read_file` reads those of a file of this name.
+
+    Raises TableError with every fault.
+    """
     faults: list[str] = []
+    entries = list(_facts(path, text, faults))
     found: list[Lubricant] = []
     seen: dict[str, int] = {}
     for number, (line, facts) in enumerate(entries, start=1):
-        key = str(facts.get("key", "")) or f"entry {number}"
-        place = f"{path.name}{f':{line}' if line else ''}: row {key}, column"
+        key = str(facts.get("key", "")).strip()
+        place = f"{path.name}{f':{line}' if line else ''}: row {key or '(no key)'}, column"
         try:
             one = read_entry({**(defaults or {}), **facts}, is_complete=is_complete)
         except InputError as refused:
             faults += [f"{place} {fault}" for fault in refused.faults]
             continue
-        if key in seen:
+        if not key:
+            faults.append(f"{place} key: given nothing; expected a short name to call it by, such as mill-grease")
+        elif key in seen:
             faults.append(f"{place} key: given {shown(key)}; expected a key of its own, not that of entry {seen[key]}")
-        elif not _KEY.fullmatch(key):
-            faults.append(f"{place} key: given {shown(key)}; expected small letters and digits with hyphens between")
+        elif not is_key(key):
+            faults.append(f"{place} key: given {shown(key)}; expected {KEY_EXPECTED}")
         seen.setdefault(key, number)
         found.append(one)
-    if not entries:
+    if not entries and not faults:
         faults.append(f"{path.name}: no lubricant in it; expected a CSV with a row each or a TOML with [[lubricant]]")
     if faults:
         raise TableError("\n".join(faults))
@@ -78,13 +93,40 @@ def read_facts(path: Path) -> list[tuple[int | None, dict[str, Any]]]:
 
     Raises TableError where the file is no such table.
     """
+    faults: list[str] = []
+    found = list(_facts(path, file_text(path), faults))
+    if faults:
+        raise TableError("\n".join(faults))
+    return found
+
+
+def file_text(path: Path) -> str:
+    """Return the text of a file of lubricants.
+
+    Raises TableError where it cannot be read.
+    """
     try:
-        text = path.read_text(encoding="utf-8-sig")
-    except OSError as refused:
-        raise TableError(f"{path}: cannot be read: {refused.strerror}") from refused
+        return path.read_bytes().decode("utf-8-sig")
     except UnicodeDecodeError as refused:
-        raise TableError(f"{path}: is no text in UTF-8") from refused
-    return list(_toml(path.name, text) if path.suffix.lower() == ".toml" else _csv(path.name, text))
+        line = refused.object[: refused.start].count(b"\n") + 1
+        raise TableError(f"{path}:{line}: is no text in UTF-8") from refused
+    except (OSError, ValueError) as refused:
+        reason = refused.strerror if isinstance(refused, OSError) and refused.strerror else "not a file name"
+        raise TableError(f"{path}: cannot be read: {reason}") from refused
+
+
+def is_toml(path: Path) -> bool:
+    """Tell whether a file of lubricants is TOML, by its name; every other is CSV."""
+    return path.suffix.lower() == ".toml"
+
+
+def is_key(text: str) -> bool:
+    """Tell whether a text may be the key of a lubricant."""
+    return _KEY.fullmatch(text) is not None
+
+
+def _facts(path: Path, text: str, faults: list[str]) -> Iterator[tuple[int | None, dict[str, Any]]]:
+    return _toml(path.name, text) if is_toml(path) else _csv(path.name, text, faults)
 
 
 def read_entry(facts: Mapping[str, Any], *, is_complete: bool = False) -> Lubricant:
@@ -111,7 +153,7 @@ def read_entry(facts: Mapping[str, Any], *, is_complete: bool = False) -> Lubric
             elif is_range:
                 ranges[base] = _range(value, entry)
             else:
-                figures[name] = _value(value, entry)
+                figures[name] = read_value(value, entry)
         except UnreadableText as refused:
             faults.append(Fault(name, shown(value), refused.expected, nearest=refused.near))
     if is_complete:
@@ -130,27 +172,63 @@ def read_entry(facts: Mapping[str, Any], *, is_complete: bool = False) -> Lubric
     return from_figures(ranges=ranges, is_complete=is_complete, **figures)
 
 
-def _csv(name: str, text: str) -> Iterator[tuple[int, dict[str, Any]]]:
-    """Yield the line and the facts of each row."""
-    lines = [(number, line) for number, line in enumerate(text.splitlines(), start=1) if not line.startswith("#")]
-    lines = [(number, line) for number, line in lines if line.strip(" ,;\t")]
+@dataclass(frozen=True, slots=True)
+class CsvRows:
+    """The rows of a CSV text: what parts its cells, and each row with its first and its last line."""
+
+    delimiter: str
+    headings: tuple[tuple[str, str | None], ...]  # field, and its unit where the heading has one
+    lines: tuple[tuple[int, int], ...]  # of the heading row, then of each row
+    cells: tuple[tuple[str, ...], ...]  # of each row
+
+
+def csv_rows(name: str, text: str) -> CsvRows | None:
+    """Return the rows of a CSV text; None where there are none.
+
+    Raises TableError where its headings or its quotes are no table's.
+    """
+    lines = [(number, line) for number, line in enumerate(text.split("\n"), start=1) if not line.startswith("#")]
+    lines = [(number, line.removesuffix("\r")) for number, line in lines if line.strip(" ,;\t\r")]
     if not lines:
-        return
-    rows = list(zip((number for number, _ in lines), csv.reader(line for _, line in lines), strict=True))
+        return None
+    delimiter = next((mark for mark in ",;\t" if mark in lines[0][1]), ",")
+    reader = csv.reader((f"{line}\n" for _, line in lines), delimiter=delimiter, strict=True)
+    rows: list[tuple[str, ...]] = []
+    spans: list[tuple[int, int]] = []
+    first = 0
+    try:
+        for row in reader:
+            rows.append(tuple(row))
+            spans.append((lines[first][0], lines[reader.line_num - 1][0]))
+            first = reader.line_num
+    except csv.Error as refused:
+        raise TableError(f"{name}:{lines[min(first, len(lines) - 1)][0]}: no row of a CSV: {refused}") from refused
+    faults = []
     headings: list[tuple[str, str | None]] = []
-    for cell in rows[0][1]:
+    for cell in rows[0]:
         match = _HEADING.fullmatch(cell)
         if match is None:
-            raise TableError(f"{name}:{rows[0][0]}: column {shown(cell)}; expected a field, with its unit in brackets")
+            faults.append(f"column {shown(cell)}; expected a field, with its unit in brackets")
+            continue
+        if match[1] in [field for field, _ in headings]:
+            faults.append(f"column {match[1]} stands twice")
         headings.append((match[1], match[2]))
-    twice = [column for column, _ in headings if [other for other, _ in headings].count(column) > 1]
-    if twice:
-        raise TableError(f"{name}:{rows[0][0]}: column {twice[0]} stands twice")
-    for number, row in rows[1:]:
-        if len(row) != len(headings):
-            raise TableError(f"{name}:{number}: {len(row)} cells; expected {len(headings)}, one a column")
+    if faults:
+        raise TableError("\n".join(f"{name}:{spans[0][0]}: {fault}" for fault in faults))
+    return CsvRows(delimiter, tuple(headings), tuple(spans), tuple(rows[1:]))
+
+
+def _csv(name: str, text: str, faults: list[str]) -> Iterator[tuple[int, dict[str, Any]]]:
+    """Yield the line and the facts of each row; a row that has not its cells is noted and left out."""
+    rows = csv_rows(name, text)
+    if rows is None:
+        return
+    for (number, _), row in zip(rows.lines[1:], rows.cells, strict=True):
+        if len(row) != len(rows.headings):
+            faults.append(f"{name}:{number}: {len(row)} cells; expected {len(rows.headings)}, one a column")
+            continue
         facts = {}
-        for (column, unit), cell in zip(headings, row, strict=True):
+        for (column, unit), cell in zip(rows.headings, row, strict=True):
             stripped = cell.strip()
             facts[column] = f"{stripped} {unit}" if unit and unit != "1" and stripped else stripped
         yield number, facts
@@ -171,8 +249,11 @@ def _toml(name: str, text: str) -> Iterator[tuple[int | None, dict[str, Any]]]:
         yield (starts[i] if len(starts) == len(entries) else None), entry
 
 
-def _value(value: Any, entry: Field) -> Any:
-    """Read one value into the unit of its field."""
+def read_value(value: Any, entry: Field) -> Any:
+    """Read one value into the unit of its field.
+
+    Raises UnreadableText where it is not of the field's kind.
+    """
     if entry.kind == "flag":
         flag = value if isinstance(value, bool) else _FLAGS.get(str(value).strip().casefold())
         if flag is None:

@@ -110,6 +110,15 @@ def find(name: str, own: Iterable[Lubricant] = ()) -> Lubricant:
         raise InputError([Fault("name", shown(name), f"the figures too: {stated}", nearest=fitting or None)]) from None
 
 
+def is_same_name(name: str, other: str) -> bool:
+    """Tell whether `find` takes two names for one.
+
+    >>> is_same_name("Mineral VG 68", "mineral-vg-68"), is_same_name("mineral-vg-68", "mineral-vg-46")
+    (True, False)
+    """
+    return _folded(name) == _folded(other)
+
+
 def _folded(name: str) -> str:
     """Return a name as it is compared: letters and digits only; ISO VG, VG and nothing are the same."""
     words = re.findall(r"[^\W_]+", name.casefold())
@@ -120,7 +129,8 @@ def _folded(name: str) -> str:
 def _unknown(name: str, own: list[str]) -> Fault:
     keys = [*own, *_rows()]
     near = nearest(name, keys, count=3) or ", ".join(designations.nearest_readings(name)) or None
-    return Fault("name", shown(name), f"a lubricant of the tables ({len(keys)} names) or a designation", nearest=near)
+    where = "the tables or of your own" if own else "the tables"
+    return Fault("name", shown(name), f"a lubricant of {where} ({len(keys)} names) or a designation", nearest=near)
 
 
 def _fits(one: Lubricant, read: designations.Designation) -> bool:

@@ -2,17 +2,15 @@
 
 from __future__ import annotations
 
-import os
-import sys
 from enum import StrEnum
-from typing import TYPE_CHECKING, Annotated
+from typing import Annotated
 
 import typer
 
 from lubecheck import __version__
-
-if TYPE_CHECKING:
-    from rich.console import Console
+from lubecheck.faces.fluids_command import EPILOG as FLUIDS_EPILOG
+from lubecheck.faces.fluids_command import fluids
+from lubecheck.faces.options import LubricantsOption, Units, UnitsOption, console, own_lubricants
 
 WITHIN_OR_NEAR, BEYOND, REFUSED, UNKNOWN = range(4)  # exit codes
 
@@ -25,13 +23,6 @@ app = typer.Typer(
     pretty_exceptions_enable=False,
     context_settings={"help_option_names": ["-h", "--help"]},
 )
-
-
-class Units(StrEnum):
-    """Unit systems of the terminal."""
-
-    SI = "si"
-    INCH = "inch"
 
 
 class FailOn(StrEnum):
@@ -63,7 +54,8 @@ def _main(
 def check(
     case: Annotated[str, typer.Argument(metavar="CASE", help="A case file in TOML, or - for standard input.")],
     json: Annotated[bool, typer.Option("--json", help="Print the result as JSON.")] = False,
-    units: Annotated[Units, typer.Option(help="Units of the terminal; JSON keeps SI-derived units.")] = Units.SI,
+    units: UnitsOption = Units.SI,
+    lubricants: LubricantsOption = None,
     fail_on: Annotated[FailOn, typer.Option(help="The mildest state that gives exit code 1.")] = FailOn.BEYOND,
     exact_fluids: Annotated[
         bool, typer.Option("--exact-fluids", help="Ask CoolProp for air instead of the table (slower).")
@@ -74,7 +66,9 @@ def check(
     from lubecheck.model.check import check as judge
     from lubecheck.model.reader import load_case
 
-    result = judge(load_case(case), air_properties=air.exact if exact_fluids else air.properties)
+    result = judge(
+        load_case(case, own=own_lubricants(lubricants)), air_properties=air.exact if exact_fluids else air.properties
+    )
     if json:
         from lubecheck.faces.record import to_json
 
@@ -82,8 +76,11 @@ def check(
     else:
         from lubecheck.faces.terminal import print_result
 
-        print_result(result, _console(), units.value)
+        print_result(result, console(), units.value)
     raise typer.Exit(exit_code(result.verdict, fail_on.value))
+
+
+app.command(epilog=FLUIDS_EPILOG)(fluids)
 
 
 def exit_code(verdict: str, fail_on: str = "beyond") -> int:
@@ -95,11 +92,3 @@ def exit_code(verdict: str, fail_on: str = "beyond") -> int:
     if verdict == fail_on:
         return BEYOND
     return {"within": WITHIN_OR_NEAR, "near": WITHIN_OR_NEAR, "beyond": BEYOND, "unknown": UNKNOWN}[verdict]
-
-
-def _console() -> Console:
-    """Return the console of standard output; NO_COLOR and CLICOLOR=0 turn colour off."""
-    from rich.console import Console
-
-    no_color = bool(os.environ.get("NO_COLOR")) or os.environ.get("CLICOLOR") == "0"
-    return Console(file=sys.stdout, no_color=no_color or None, highlight=False, soft_wrap=False)

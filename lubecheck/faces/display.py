@@ -43,16 +43,18 @@ def converted(value: float, unit: str, system: str) -> float:
 def number(value: float | None) -> str:
     """Return a number with three or four digits, large ones with a thin gap left out; a dash where there is none.
 
-    >>> number(12345.6), number(0.71234), number(71.23), number(None)
-    ('12346', '0.712', '71.2', '-')
+    >>> number(12345.6), number(0.71234), number(71.23), number(99.99999999), number(7e-4), number(None)
+    ('12346', '0.712', '71.2', '100', '0.0007', '-')
     """
     if value is None or not math.isfinite(value):
         return "-"
-    size = abs(value)
+    size = float(f"{abs(value):.6g}")  # so that a hair under 100 is written as 100 is
     if size >= 1e6:
         return f"{value:.3g}"
     if size >= 100 or value == 0:
         return f"{value:.0f}"
+    if size < 0.01:
+        return f"{value:.3g}"
     return f"{value:.1f}" if size >= 10 else f"{value:.2f}" if size >= 1 else f"{value:.3f}"
 
 

@@ -25,6 +25,8 @@ HOUSING_AREA = {
 SMALLEST_AREA = min(low for low, _, _ in HOUSING_AREA.values())
 
 HOTTEST_SHAFT = 120.0  # degC, of a machine that nobody described: common practice for hot fans and motors, estimate
+# mm, where 0.00411 (1 - 3.8974/Dpw^(1/3)) and 0.00617 (1 - 4.06/Dpw^(1/3)) of ISO 281, Annex A, meet
+DIRTIEST_CODE_FROM = 84.3
 LARGEST_ALTITUDE = 5000e3  # mm, the highest that a case may state
 
 
@@ -70,6 +72,15 @@ def _no_altitude(case: Case) -> bool:
     return case.surroundings.altitude is None and case.housing.conductance is None
 
 
+def _no_setting(case: Case) -> bool:
+    return case.setting is None and not case.is_beyond_settings
+
+
+def _is_worse_in_a_bath(case: Case) -> bool:
+    """Tell whether e_C of the dirtiest oil code is below that of "very severe": from a pitch diameter of 84 mm up."""
+    return not case.is_grease and (case.bearing.bore + case.bearing.outside) / 2 > DIRTIEST_CODE_FROM
+
+
 FACTS: tuple[Fact, ...] = (
     Fact("surroundings", "draught", 0.0, 0.0, "still air", "common-practice", THERMAL,
          lambda case: case.surroundings.draught is None and case.housing.conductance is None),
@@ -96,7 +107,9 @@ FACTS: tuple[Fact, ...] = (
     Fact("oil", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
          _missing("oil", "hours_per_day", grease=False)),
     Fact("cleanliness", "setting", "normal", "very severe", "normal cleanliness", "iso-281:annex A", ("fatigue_life",),
-         _missing("cleanliness", "setting")),
+         lambda case: _no_setting(case) and not _is_worse_in_a_bath(case)),
+    Fact("cleanliness", "setting", "normal", "bath -/21/18", "normal cleanliness", "iso-281:annex A", ("fatigue_life",),
+         lambda case: _no_setting(case) and _is_worse_in_a_bath(case)),
 )  # fmt: skip
 
 

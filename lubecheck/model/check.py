@@ -113,7 +113,7 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
         given=case.given,
         assumed=wording.assumed(case, variants.facts),
         bearing=wording.bearing(case.bearing),
-        lubricant=wording.lubricant(case.lubricant),
+        lubricant=wording.lubricant(case.lubricant, case.analysis),
         converged_in=outcome.state.steps,
         residual=_finite(outcome.state.residual[hottest]),
     )

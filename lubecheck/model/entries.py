@@ -14,6 +14,8 @@ from typing import Any
 
 from lubecheck.data import families, lubricants
 from lubecheck.data.bearings import Bearing
+from lubecheck.data.cleanliness import setting_of
+from lubecheck.data.oil_analysis import OilAnalysis
 from lubecheck.physics import fatigue, grease_life
 from lubecheck.units import KINDS
 
@@ -141,6 +143,12 @@ class LubricantTable:
         example='"12 mm^2/s"',
     )
     index: float | None = _entry("fact", "number", 0, 400, meaning="viscosity index", example="95")
+    saybolt_100: float | None = _entry(
+        "fact", "Saybolt viscosity", 33, 1e5, meaning="Saybolt Universal seconds at 100 degF", example='"315 SUS"'
+    )
+    saybolt_210: float | None = _entry(
+        "fact", "Saybolt viscosity", 33, 1e4, meaning="Saybolt Universal seconds at 210 degF", example='"54 SUS"'
+    )
     thickener: str | None = _entry("fact", words=lubricants.THICKENERS, meaning="thickener of the grease")
     base_oil: str | None = _entry("fact", words=lubricants.BASE_OILS, meaning="kind of base oil")
     nlgi: str | None = _entry(
@@ -164,6 +172,17 @@ class LubricantTable:
         "fact", "density", 600, 2200, meaning="density at 15 degC", example='"890 kg/m^3"'
     )
     ep: bool | None = _entry("fact", meaning="proven EP additive: true or false")
+    measured_viscosity: str | None = _entry(
+        "fact",
+        meaning="viscosity of the oil in use by analysis; replaces the fresh one",
+        example='"98 mm^2/s at 40 degC"',
+    )
+    water: float | None = _entry(
+        "fact", "share", 0, 0.1, meaning="water in the oil in use by analysis, by mass", example='"200 ppm"'
+    )
+    iso_code: str | None = _entry(
+        "fact", meaning="cleanliness of the oil in use by analysis, ISO 4406", example='"19/17/14"'
+    )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -353,12 +372,25 @@ class Case:
     oil: OilPlan = OilPlan()
     cleanliness: Cleanliness = Cleanliness()
     limits: Requirements = Requirements()
+    analysis: OilAnalysis | None = None  # of the oil in use; `lubricant` is then the oil as it is now
     given: tuple[tuple[str, str], ...] = ()  # "table.key" and the text the user wrote, in their order
 
     @property
     def is_grease(self) -> bool:
         """The position is grease lubricated."""
         return self.lubricant.kind == "grease"
+
+    @property
+    def setting(self) -> str | None:
+        """The cleanliness as stated, or else by the code of the oil in use."""
+        if self.cleanliness.setting is not None or self.analysis is None or self.analysis.code is None:
+            return self.cleanliness.setting
+        return setting_of(self.analysis.code)
+
+    @property
+    def is_beyond_settings(self) -> bool:
+        """The oil in use is dirtier than ISO 281 has a setting for, and nothing else is stated."""
+        return self.setting is None and self.analysis is not None and self.analysis.code is not None
 
 
 TABLES: dict[str, type] = {

@@ -11,7 +11,7 @@ from lubecheck.data import air
 from lubecheck.model import limits
 from lubecheck.model.equilibrium import Air, Equilibrium, solve
 from lubecheck.model.limits import Judged
-from lubecheck.model.points import Codes, Flags, Points
+from lubecheck.model.points import BEYOND_SETTINGS, Codes, Flags, Points
 from lubecheck.physics import fatigue, film, grease_amount, grease_life, loads
 from lubecheck.units import DAY_H, Array
 
@@ -119,7 +119,7 @@ def _life_factor(points: Points, state: Equilibrium, kappa: Array) -> tuple[Arra
     ]
     factor = fatigue.factor_with_additive.plain(without=factors[0], with_additive=factors[1])
     factor = np.where(p.additive > 0, factor, factors[0])
-    is_valid = ~fatigue.contamination_factor.outside(viscosity_ratio=kappa)
+    is_valid = ~fatigue.contamination_factor.outside(viscosity_ratio=kappa) & (p.setting != BEYOND_SETTINGS)
     return np.where(is_valid, e_c, np.nan), np.where(is_valid, factor, np.nan)
 
 

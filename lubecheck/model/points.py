@@ -59,6 +59,7 @@ STREAM_CONTACT = 0.5  # share of its warming that circulating oil takes at the b
 RUN_IN_GREASE = 0.5  # of the oil-bath f0, Harris, range 0.35 to 0.7
 MIST = 0.5  # of the oil-bath f0, Harris
 VERTICAL_BATH = 2.0  # of the oil-bath f0 for a vertical shaft in a bath or jet, Harris
+BEYOND_SETTINGS = -1  # Points.setting of oil dirtier than ISO 281 has a setting for
 PROPOSED_HOUSING_FILL = 0.4  # common practice, 30 to 50 %
 
 
@@ -333,10 +334,10 @@ def _requirement_columns(case: Case, reading: Mapping[str, Any], family: Family)
     limits = case.limits
     vibration = case.surroundings.vibration or reading.get("[surroundings] vibration")
     service = limits.service or ("shock" if vibration == grease_life.VIBRATION[-1].word else "normal")
-    setting = case.cleanliness.setting or reading["[cleanliness] setting"]
+    setting = None if case.is_beyond_settings else case.setting or reading["[cleanliness] setting"]
     hours = _hours_per_day(case, reading)
     return {
-        "setting": fatigue.SETTINGS.index(setting),
+        "setting": BEYOND_SETTINGS if setting is None else fatigue.SETTINGS.index(setting),
         "life_target": limits.life or DEFAULT_LIFE,
         "reliability": limits.reliability or DEFAULT_RELIABILITY,
         "least_kappa": limits.least_viscosity_ratio or DEFAULT_KAPPA,

@@ -12,7 +12,7 @@ import math
 import re
 import sys
 import tomllib
-from collections.abc import Iterator, Mapping
+from collections.abc import Iterable, Iterator, Mapping
 from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any, TypeVar
@@ -20,6 +20,7 @@ from typing import Any, TypeVar
 from lubecheck.data import bearings, lubricants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
+from lubecheck.data.oil_analysis import OilAnalysis, analyse
 from lubecheck.errors import CaseError, Fault, InputError, nearest, shown
 from lubecheck.model.entries import (
     TABLES,
@@ -41,13 +42,16 @@ from lubecheck.model.toml_lines import key_lines
 from lubecheck.units import KINDS, UnreadableText, split_text, to_house
 
 STANDARD_INPUT = "-"
+_ANALYSED = ("measured_viscosity", "water", "iso_code")  # keys of [lubricant] that are of the oil in use
 _LARGEST_FILE = 1_000_000  # bytes; a case is a page of text, so more is a slip of the hand
 
 T = TypeVar("T")
 
 
-def load_case(path: str | Path) -> Case:
+def load_case(path: str | Path, *, own: Iterable[Lubricant] = ()) -> Case:
     """Read a case file; "-" reads standard input.
+
+    own: lubricants of the user's own, such as `lubricants.load("ours.toml").values()`, found by name before the tables
 
     Raises CaseError, which holds every fault found.
     """
@@ -61,11 +65,11 @@ def load_case(path: str | Path) -> Case:
     except (OSError, ValueError) as refused:
         reason = refused.strerror if isinstance(refused, OSError) and refused.strerror else "not a file name"
         raise _whole_file(name, reason, "a readable case file in TOML") from None
-    return read_case(raw, name)
+    return read_case(raw, name, own=own)
 
 
-def read_case(raw: bytes | str, name: str = "case") -> Case:
-    """Read the text of a case; `name` is how messages call it.
+def read_case(raw: bytes | str, name: str = "case", *, own: Iterable[Lubricant] = ()) -> Case:
+    """Read the text of a case; `name` is how messages call it, `own` as in `load_case`.
 
     Raises CaseError, which holds every fault found.
     """
@@ -76,7 +80,7 @@ def read_case(raw: bytes | str, name: str = "case") -> Case:
         raise CaseError([_toml_fault(str(refused), text, name)]) from None
     except RecursionError:
         raise _whole_file(name, "values nested too deeply", "a case file in TOML") from None
-    reading = _Reading(name, key_lines(text))
+    reading = _Reading(name, key_lines(text), tuple(own))
     case = reading.case(document)
     if reading.faults or case is None:
         raise CaseError(sorted(reading.faults, key=lambda fault: fault.line or 0))
@@ -117,6 +121,7 @@ class _Reading:
 
     name: str
     lines: Mapping[tuple[str | int, ...], int]
+    own: tuple[Lubricant, ...] = ()
     faults: list[Fault] = field(default_factory=list)
     given: list[tuple[str, str]] = field(default_factory=list)
 
@@ -136,7 +141,9 @@ class _Reading:
                 self.fault((key,), key, f"one of {', '.join(known)}", nearest(key, known))
         title, note = (self._text(document, key) for key in ("title", "note"))
         bearing = self._bearing(self._table(document, "bearing", BearingTable, is_need=True))
-        lubricant = self._lubricant(self._table(document, "lubricant", LubricantTable, is_need=True))
+        lubricant_table = self._table(document, "lubricant", LubricantTable, is_need=True)
+        lubricant = self._lubricant(lubricant_table)
+        analysis = self._analysis(lubricant_table, lubricant)
         duty = self._duty(document)
         surroundings = self._table(document, "surroundings", Surroundings, is_need=True)
         housing = self._table(document, "housing", Housing) or Housing()
@@ -153,11 +160,16 @@ class _Reading:
                 )
             if surroundings is not None and isinstance(cleanliness.setting, str):
                 self._setting_fits(cleanliness.setting, lubricant, oil)
+            if analysis is not None and analysis.code is not None and oil.supply == "mist":
+                self.fault(
+                    ("lubricant", "iso_code"), str(analysis.code), "no such key for mist: ISO 281 has no setting"
+                )
         if bearing is None or lubricant is None or not duty or surroundings is None:
             return None
         return Case(
-            title=title, note=note, bearing=bearing, lubricant=lubricant, duty=duty, surroundings=surroundings,
-            housing=housing, grease=grease, oil=oil, cleanliness=cleanliness, limits=limits, given=tuple(self.given),
+            title=title, note=note, bearing=bearing, lubricant=analysis.used if analysis else lubricant, duty=duty,
+            surroundings=surroundings, housing=housing, grease=grease, oil=oil, cleanliness=cleanliness, limits=limits,
+            analysis=analysis, given=tuple(self.given),
         )  # fmt: skip
 
     def _text(self, document: Mapping[str, Any], key: str) -> str:
@@ -296,7 +308,8 @@ class _Reading:
         if table is None:
             return None
         path: tuple[str | int, ...] = ("lubricant",)
-        inline = [name for name, _ in entries(LubricantTable) if name not in ("name", "designation", "index")]
+        apart = ("name", "designation", "index", *_ANALYSED)
+        inline = [name for name, _ in entries(LubricantTable) if name not in apart]
         stated = {key: getattr(table, key) for key in inline if getattr(table, key) is not None}
         if table.name is not None and table.designation is not None:
             self.fault((*path, "designation"), table.designation, "a name or a designation, not both")
@@ -306,12 +319,21 @@ class _Reading:
                 if table.index is not None:
                     self.fault((*path, "index"), table.index, "no such key beside a name, which already says it")
                     return None
-                return lubricants.with_given(lubricants.find(table.name), **stated)
+                return lubricants.with_given(lubricants.find(table.name, self.own), **stated)
             if any(fault.key.startswith("lubricant.") for fault in self.faults):
                 return None
             return lubricants.from_figures(designation=table.designation, index=table.index, **stated)
         except InputError as refused:
             self._carry(path, refused)
+            return None
+
+    def _analysis(self, table: LubricantTable | None, lubricant: Lubricant | None) -> OilAnalysis | None:
+        if table is None or lubricant is None:
+            return None
+        try:
+            return analyse(lubricant, **{key: getattr(table, key) for key in _ANALYSED})
+        except InputError as refused:
+            self._carry(("lubricant",), refused)
             return None
 
     def _carry(self, path: tuple[str | int, ...], refused: InputError) -> None:
@@ -348,7 +370,8 @@ class _Reading:
         supply = "grease" if lubricant.kind == "grease" else (oil.supply or "bath")
         circuit, _, _code = setting.partition(" -/")
         is_oil_setting = " -/" in setting
-        if is_oil_setting and circuit != supply:
+        # The codes of a bath hold for circulating oil that is filtered off-line as well (ISO 281, Annex A).
+        if is_oil_setting and circuit != supply and (circuit, supply) != ("bath", "circulating"):
             self.fault(
                 ("cleanliness", "setting"),
                 setting,

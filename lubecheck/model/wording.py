@@ -12,11 +12,14 @@ import numpy as np
 
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
+from lubecheck.data.oil_analysis import OilAnalysis
+from lubecheck.model import oil_words
 from lubecheck.model.assumptions import FACTS, Fact
 from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
 from lubecheck.model.kernel import Outcome, takes_loads
 from lubecheck.model.points import (
+    BEYOND_SETTINGS,
     DEFAULT_KAPPA,
     DEFAULT_LIFE,
     DEFAULT_RELIABILITY,
@@ -194,6 +197,8 @@ def _outside_life(outcome: Outcome) -> str:
         reasons.append("kappa is under 0.1")
     if np.nanmax(outcome.load_ratio) > fatigue.GREATEST_LOAD_RATIO:
         reasons.append("P is over 0.5 C")
+    if (outcome.points.setting == BEYOND_SETTINGS).any():
+        reasons.append("the oil is dirtier than it has a setting for")
     if not takes_loads(outcome.points).all():
         reasons.append("the family takes no load in one of the stated directions")
     return ", ".join(reasons) or "no equilibrium temperature"
@@ -232,6 +237,7 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
     if churned > 0:
         power = float(outcome.state.friction_power[0])
         said.append(f"churning makes {churned:.1f} of {power:.1f} W: the surplus cannot leave and will not run in")
+    said += oil_words.notes(case)
     return tuple(said)
 
 
@@ -265,6 +271,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         unit = _BEARING_UNITS.get(key, "")
         said.append(Assumed(f"[bearing] {key}", f"{value:.4g} {unit}, {low:.2f} to {high:.2f} times that", source))
     said += [Assumed("[lubricant]", text, "common-practice") for text in case.lubricant.assumed]
+    said += oil_words.assumed(case)
     if case.bearing.cage is None:
         said.append(Assumed("[bearing] cage", "metal", "common-practice"))
     return tuple(said)
@@ -276,7 +283,11 @@ def bearing(bearing: Bearing) -> str:
     return f"{name}{bearing.family}, {bearing.bore:g} x {bearing.outside:g} x {bearing.width:g} mm"
 
 
-def lubricant(lubricant: Lubricant) -> str:
-    """Return a lubricant in words."""
+def lubricant(lubricant: Lubricant, analysis: OilAnalysis | None = None) -> str:
+    """Return a lubricant in words, with the fresh oil's figures where an analysis has replaced them."""
     kind = f"{lubricant.kind}, " if lubricant.kind not in lubricant.name else ""
-    return f"{lubricant.name} ({kind}{lubricant.nu_40:g} mm^2/s at 40 degC, {lubricant.nu_100:.3g} at 100 degC)"
+    figures = f"{lubricant.nu_40:.4g} mm^2/s at 40 degC, {lubricant.nu_100:.3g} at 100 degC"
+    if analysis is not None and analysis.change is not None:
+        fresh = analysis.fresh
+        figures += f", in use by analysis; fresh {fresh.nu_40:.4g} and {fresh.nu_100:.3g}"
+    return f"{lubricant.name} ({kind}{figures})"

@@ -36,9 +36,11 @@ __all__ = [
     "pressure_coefficient_by_slope",
     "saybolt_from_kinematic",
     "sheared_viscosity",
+    "temperature_of_viscosity",
     "viscosity_from_constants",
     "viscosity_index",
     "walther_constants",
+    "walther_ordinate",
 ]
 
 _KELVIN = 273.15
@@ -82,6 +84,21 @@ def _from_log_z(log_z: Array) -> Array:
     if low.any():
         w[low] = _without_term(w[low])
     return w[()]
+
+
+@method(source="astm-d341", valid={"nu": _NU})
+def walther_ordinate(nu: Mm2PerS) -> Number:
+    """Ordinate of the charts of ASTM D341, ln ln Z: over ln T[K] an oil is a straight line.
+
+    Z = nu + 0.7 + exp(-1.47 - 1.84 nu - 0.51 nu^2).
+
+    nu [mm^2/s]: kinematic viscosity, any shape
+    returns [1]
+
+    >>> walther_ordinate("100 mm^2/s").round(3)
+    <Quantity(1.529, 'dimensionless')>
+    """
+    return _log_log(nu)
 
 
 @method(source="astm-d341", valid={"nu_40": _NU, "nu_100": _NU})
@@ -145,6 +162,28 @@ def kinematic_viscosity(temperature: DegC, *, nu_40: Mm2PerS, nu_100: Mm2PerS) -
     """
     a, b = walther_constants.plain(nu_40=nu_40, nu_100=nu_100)
     return viscosity_from_constants.plain(temperature, a=a, b=b)
+
+
+@method(source="astm-d341", valid={"nu": _NU, "nu_40": _NU, "nu_100": _NU})
+def temperature_of_viscosity(*, nu: Mm2PerS, nu_40: Mm2PerS, nu_100: Mm2PerS) -> DegC:
+    """Temperature at which an oil has a viscosity: the inverse of `kinematic_viscosity` (ASTM D341, full form).
+
+    T[K] = 10^((A - log10 log10 Z)/B). A result outside -70 to 370 degC is outside the charts of the standard. Not a
+    number where nu_100 is not below nu_40.
+
+    nu [mm^2/s]: kinematic viscosity, any shape
+    nu_40 [mm^2/s]: kinematic viscosity at 40 degC, broadcasts with nu
+    nu_100 [mm^2/s]: kinematic viscosity at 100 degC, broadcasts with nu
+    returns [degC]
+
+    >>> temperature_of_viscosity(nu="27.2 mm^2/s", nu_40="100 mm^2/s", nu_100="11.1 mm^2/s").round(0)
+    <Quantity(70.0, 'degree_Celsius')>
+    """
+    at_40 = _log_log(nu_40)
+    slope = (at_40 - _log_log(nu_100)) / (_LOG_100 - _LOG_40)
+    slope = np.where(slope > 0, slope, np.nan)
+    kelvin: Array = np.exp(_LOG_40 + (at_40 - _log_log(nu)) / slope)
+    return kelvin - _KELVIN
 
 
 @method(source="astm-d341", valid={"temperature": _TEMPERATURE, "nu": _NU})

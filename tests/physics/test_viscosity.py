@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 import pytest
-from hypothesis import given
+from hypothesis import assume, given
 from hypothesis import strategies as st
 
 from lubecheck.errors import ArgumentError, OutOfRange
@@ -23,9 +23,11 @@ from lubecheck.physics.viscosity import (
     pressure_coefficient_by_slope,
     saybolt_from_kinematic,
     sheared_viscosity,
+    temperature_of_viscosity,
     viscosity_from_constants,
     viscosity_index,
     walther_constants,
+    walther_ordinate,
 )
 
 VISCOSITIES = st.floats(0.3, 5000)
@@ -219,3 +221,20 @@ def test_a_sheared_oil_lies_between_fresh_and_base_and_a_derating_is_what_was_st
     assert derated_viscosity.plain(100.0, 0.15) == pytest.approx(85.0)
     with pytest.raises(OutOfRange):
         derated_viscosity("100 mm^2/s", "95 %")
+
+
+@given(nu_40=st.floats(4.2, 3000.0), share=st.floats(0.05, 0.9), temperature=st.floats(-30.0, 200.0))
+def test_the_temperature_of_a_viscosity_is_the_one_it_was_taken_at(
+    nu_40: float, share: float, temperature: float
+) -> None:
+    nu_100 = nu_40 * share
+    nu = kinematic_viscosity.plain(temperature, nu_40=nu_40, nu_100=nu_100)
+    assume(0.21 <= nu <= 2e7)
+    assert temperature_of_viscosity.plain(nu=nu, nu_40=nu_40, nu_100=nu_100) == pytest.approx(temperature, abs=1e-4)
+
+
+def test_oils_are_straight_lines_on_the_ordinate_of_the_chart() -> None:
+    kelvin = np.geomspace(273.15, 423.15, 7)  # even steps of ln T
+    for nu_40, nu_100 in ((68.0, 8.5), (3.0, 1.1), (460.0, 31.0)):
+        ordinate = walther_ordinate.plain(kinematic_viscosity.plain(kelvin - 273.15, nu_40=nu_40, nu_100=nu_100))
+        assert np.diff(ordinate) == pytest.approx(np.diff(ordinate)[0], rel=1e-8)

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import itertools
+import re
 
 import pytest
 
@@ -86,3 +87,27 @@ def test_consistency_grades_are_30_wide_and_15_apart() -> None:
     assert spans[0] == (445, 475)
     assert all(high - low == 30 for low, high in spans)
     assert all(softer[0] - harder[0] == 45 for softer, harder in itertools.pairwise(spans))
+
+
+def test_every_table_of_grades_names_its_body_and_its_edition() -> None:
+    assert set(grades.EDITIONS) == {"ISO VG", "SAE engine", "SAE gear", "AGMA", "NLGI"}
+    for edition in grades.EDITIONS.values():
+        assert re.match(r"(ISO|SAE|AGMA|DIN) ", edition)
+        assert re.search(r"\b(19|20)\d\d\b", edition), edition
+
+
+# SAE J306 of 2019, memory: 70 5.0 (before: 4.1), 75 6.5 (4.1), 80 8.5 (7.0), 85 11.0, 90 13.5, 110 18.5, 140 24.0, 190
+# 32.5, 250 41.0 mm^2/s at 100 degC; the edition that split 65 and 70 off.
+@pytest.mark.parametrize(
+    ("grade", "low"),
+    [("65", 3.8), ("70", 5.0), ("75", 6.5), ("80", 8.5), ("85", 11.0), ("90", 13.5), ("110", 18.5), ("140", 24.0),
+     ("190", 32.5), ("250", 41.0)],
+)  # fmt: skip
+def test_an_sae_gear_grade_begins_where_its_edition_says(grade: str, low: float) -> None:
+    assert grades.SAE_GEAR[grade][0] == low
+
+
+def test_an_oil_has_its_grades_by_viscosity_alone() -> None:
+    assert grades.equivalents(220.0, 18.8)["AGMA"] == "AGMA 5"
+    assert "ISO VG" not in grades.equivalents(80.0, 9.0)  # between two grades there is none
+    assert grades.equivalents(2.2, 0.9) == {"ISO VG": "ISO VG 2.2"}
