@@ -90,8 +90,8 @@ def _steps(case: Case, *, is_sealed: bool, has_room: bool) -> tuple[str, ...]:
         return ("Do not regrease: the bearing is closed on both sides; replace it at the end of its grease life",)
     if not has_room:
         return (
-            "Do not regrease: nothing can leave. Open a way out and run it clear, or clean bearing and housing out; then "
-            "fill anew with the first fill of this line",
+            "Do not regrease: nothing can leave. Open a way out and run it clear, or clean bearing and housing out; "
+            "then fill anew with the first fill of this line",
         )
     relief = {
         "open": "Open the relief plug and clear it of hard grease",
