@@ -130,7 +130,7 @@ def _operating(result: Result, console: Console, system: str) -> None:
         groups.append(result.grease)
     for group in groups:
         for name, item in group.figures.items():
-            if name in ("first_fill", "regrease_quantity", "regrease_interval"):
+            if name in ("first_fill", "fill_share", "regrease_quantity", "regrease_interval"):
                 continue  # the plan line says them
             band = ""
             if item.low is not None and item.high is not None and number(item.low) != number(item.high):
@@ -184,6 +184,8 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
 def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
     if strokes is None or stroke_g is None:
         return ""
+    if strokes == 0:
+        return f" (less than one stroke of {figure(stroke_g, 'g', system)}: weigh it)"
     return f" = {strokes} strokes of {figure(stroke_g, 'g', system)} ({figure(strokes * stroke_g, 'g', system)})"
 
 

@@ -96,7 +96,7 @@ FACTS: tuple[Fact, ...] = (
     Fact("housing", "kind", "pedestal", "smallest", "pedestal", "own-estimate", THERMAL, _no_cooling),
     Fact("housing", "machine_heat", 0.0, HOTTEST_SHAFT, "none", "own-estimate", THERMAL, _no_machine_heat),
     Fact("housing", "void", None, 0.0, "as much as the bearing's free volume", "own-estimate",
-         ("fill", *THERMAL), _missing("housing", "void", grease=True)),
+         ("fill", "regrease_amount", *THERMAL), _missing("housing", "void", grease=True)),
     Fact("housing", "relief", "closed", "closed", "closed", "common-practice", ("fill", *THERMAL),
          _missing("housing", "relief", grease=True)),
     Fact("grease", "fill", 0.5, 1.0, "30 to 100 %", "common-practice", ("fill", *THERMAL),

@@ -19,7 +19,7 @@ from lubecheck.model.assumptions import Fact, missing, uncertain
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import Outcome, judge
-from lubecheck.model.limits import BEYOND, NEAR_CODE, STATES, UNKNOWN
+from lubecheck.model.limits import NEAR_CODE, STATES, UNKNOWN
 from lubecheck.model.plan import plan_line
 from lubecheck.model.points import Points, from_rows, join, rows_of
 from lubecheck.model.result import Grease, Life, Limit, Operating, PlanLine, Result
@@ -164,13 +164,12 @@ def _limit(variants: Variants, name: str) -> Limit:
 
 
 def _governing(judged: Sequence[Limit], verdict: str) -> str:
-    """The limit with the greatest use; where the verdict is `unknown`, the first that could not be judged."""
+    """Of the limits that are in the state of the verdict the one with the greatest use; the first of the unknown."""
+    inside = [limit for limit in judged if limit.state == verdict]
     if verdict == STATES[UNKNOWN]:
-        return next(limit.name for limit in judged if limit.state == verdict)
-    if verdict == STATES[BEYOND]:
-        # A use that is not finite is the greatest there is.
-        judged = [limit for limit in judged if limit.state == verdict]
-    return max(judged, key=lambda limit: float("inf") if limit.use is None else limit.use).name
+        return inside[0].name
+    # A use that is not finite is the greatest there is.
+    return max(inside, key=lambda limit: float("inf") if limit.use is None else limit.use).name
 
 
 def _operating(variants: Variants, row: int) -> Operating:

@@ -42,13 +42,15 @@ class Entry:
     def expected(self) -> str:
         """What the key takes, in words for a message."""
         parts = []
-        if self.kinds:
+        if len(self.kinds) > 1:
+            units = " or ".join(KINDS[name].unit for name in self.kinds if not KINDS[name].is_bare)
+            share = ", or a share of at most 100 %" if "share" in self.kinds else ""
+            named = " or ".join(name for name in self.kinds if name != "share")
+            parts.append(f"a {named}, {self.low:g} to {self.high:g} {units}{share}, such as {self.example}")
+        elif self.kinds:
             kind = KINDS[self.kinds[0]]
             unit = "" if kind.is_bare else f" {kind.unit}"
-            named = " or ".join(
-                "number" if name in ("share", "number") and len(self.kinds) == 1 else name for name in self.kinds
-            )
-            parts.append(f"a {named}, {self.low:g} to {self.high:g}{unit}, such as {self.example}")
+            parts.append(f"a {kind.name}, {self.low:g} to {self.high:g}{unit}, such as {self.example}")
         if self.words:
             parts.append("one of " + ", ".join(self.words) if not self.kinds else f"or {' or '.join(self.words)}")
         return " ".join(parts) or "a text"

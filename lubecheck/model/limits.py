@@ -85,12 +85,16 @@ def temperature(points: Points, state: Equilibrium) -> Use:
 
 
 def cold_start(points: Points) -> Use:
-    """Depth below 20 degC over the depth that the lubricant may be used at."""
-    depth = COLD_REFERENCE - points.coldest
+    """Depth below 20 degC over the depth that the lubricant may be used at.
+
+    A start is never warmer than the air that the position stands in.
+    """
+    coldest = np.minimum(points.coldest, points.ambient)
+    depth = COLD_REFERENCE - coldest
     allowed = COLD_REFERENCE - points.lowest
     use = np.where(allowed > 0, np.maximum(0.0, depth) / allowed, np.where(depth <= allowed, 0.0, np.inf))
     use = np.where(np.isnan(depth) | np.isnan(allowed), np.nan, use)
-    return Use(points.coldest, points.lowest, use, np.ones(len(points), dtype=bool))
+    return Use(coldest, points.lowest, use, np.ones(len(points), dtype=bool))
 
 
 def fill(points: Points) -> Use:
@@ -114,13 +118,20 @@ def oil_level(points: Points) -> Use:
     return Use(points.level, np.copysign(allowed, points.level), np.abs(points.level) / allowed, points.is_bath > 0)
 
 
+def room_for_grease(points: Points) -> Array:
+    """Mass of grease in g that bearing and housing can still take before it is held and churned; endless when open."""
+    p = points
+    bearing = (churning.CLEAR_SHARE - np.minimum(np.nan_to_num(p.fill), 1.0)) * p.free_volume
+    room = np.maximum(0.0, bearing + (1.0 - p.housing_fill) * p.void) * p.density / 1000
+    return np.where(p.is_open > 0, np.inf, room)
+
+
 def regrease(points: Points) -> Use:
-    """Grease given at each regreasing against a band round the side rule, never more than what can clear."""
+    """Grease given at each regreasing against a band round the side rule, never more than there is room for."""
     p = points
     dose = grease_amount.regrease_quantity.plain(outside=p.outside, width=p.width)
     low, high = REGREASE_RANGE
-    room = (1.0 - churning.CLEAR_SHARE) * p.free_volume * p.density / 1000
-    upper = np.minimum(high * dose, np.maximum(room, dose))
+    upper = np.minimum(high * dose, room_for_grease(p))
     applies = (p.is_grease > 0) & ~np.isnan(p.regrease_mass) & (p.is_sealed == 0)
     return _two_sided(p.regrease_mass, low * dose, upper, applies)
 

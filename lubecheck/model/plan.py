@@ -6,20 +6,21 @@ import math
 
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
+from lubecheck.model.limits import room_for_grease
 from lubecheck.model.points import volume_of
 from lubecheck.model.result import PlanLine
 
 
 def strokes_of(grams: float | None, grams_per_stroke: float | None) -> int | None:
-    """Return whole strokes of the gun that give no more than the grams, at least one.
+    """Return whole strokes of the gun that give no more than the grams; none where one stroke is too much.
 
-    >>> strokes_of(12.5, 1.2)
-    10
+    >>> strokes_of(12.5, 1.2), strokes_of(1.0, 3.0)
+    (10, 0)
     """
     if grams is None or grams_per_stroke is None:
         return None
     # A hair is added before rounding down, so that 12 g at 1.2 g a stroke are 10 strokes and not 9.
-    return max(1, math.floor(grams / grams_per_stroke + 1e-9))
+    return math.floor(grams / grams_per_stroke + 1e-9)
 
 
 def weeks_of(hours: float | None, hours_per_day: float) -> float | None:
@@ -54,6 +55,8 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
         stated = math.nan if case.grease.fill is None or isinstance(case.grease.fill, str) else points.fill[0]
         fill = chosen("fill", stated * grams, points.proposed_fill[0] * grams)
         regrease = chosen("regrease_amount", points.regrease_mass[0], outcome.proposed_regrease[0])
+        if regrease is not None and room_for_grease(points)[0] < regrease:
+            regrease = None  # no dose is right until there is a way out
         if case.grease.stroke is not None:
             stroke = volume_of(case.grease.stroke, 1.0, density) * density
     if outcome.judged["interval"].applies[0]:
@@ -72,11 +75,11 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
         interval_weeks=weeks_of(interval, hours_per_day),
         hours_per_day=hours_per_day,
         is_proposed=tuple(proposed),
-        steps=_steps(case, is_sealed=bool(points.is_sealed[0])),
+        steps=_steps(case, is_sealed=bool(points.is_sealed[0]), has_room=regrease is not None),
     )
 
 
-def _steps(case: Case, *, is_sealed: bool) -> tuple[str, ...]:
+def _steps(case: Case, *, is_sealed: bool, has_room: bool) -> tuple[str, ...]:
     """Return what to do, in order."""
     if not case.is_grease:
         return (
@@ -85,6 +88,11 @@ def _steps(case: Case, *, is_sealed: bool) -> tuple[str, ...]:
         )
     if is_sealed:
         return ("Do not regrease: the bearing is closed on both sides; replace it at the end of its grease life",)
+    if not has_room:
+        return (
+            "Do not regrease: nothing can leave. Open a way out and run it clear, or clean bearing and housing out; "
+            "then fill anew with the first fill of this line",
+        )
     relief = {
         "open": "Open the relief plug and clear it of hard grease",
         "closed": "There is no open relief: give no more than the stated amount, in several small portions",

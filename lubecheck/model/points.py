@@ -215,7 +215,17 @@ def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dic
         row |= _amount_columns(case, reading, row)
         row |= {"case": number, "cooling_factor": 1.0, "f0_factor": 1.0, "f1_factor": 1.0, "churning_factor": 1.0}
         rows.append(row)
+    _propose_one_fill(case, rows)
     return rows
+
+
+def _propose_one_fill(case: Case, rows: list[dict[str, float]]) -> None:
+    """A bearing is filled once: what is proposed for its fastest duty point is proposed for all."""
+    least = min(row["proposed_fill"] for row in rows)
+    for row in rows:
+        row["proposed_fill"] = least
+        if case.is_grease and case.grease.fill is None:
+            row["fill"] = least
 
 
 def _known(value: float | None) -> float:

@@ -12,7 +12,7 @@ import math
 import re
 import sys
 import tomllib
-from collections.abc import Iterable, Iterator, Mapping
+from collections.abc import Iterable, Iterator, Mapping, Sequence
 from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any, TypeVar
@@ -204,6 +204,7 @@ class _Reading:
             return ()
         points = [self._keys(("duty", i), item, Duty) for i, item in enumerate(value)]
         read = tuple(point for point in points if point is not None)
+        self._shares(value)
         if len(read) < len(points):
             return ()
         for i, point in enumerate(read):
@@ -211,25 +212,26 @@ class _Reading:
                 self.fault(
                     ("duty", i, "radial_load"), "no load at all", "a radial or an axial load above 0 N", plain=True
                 )
-        if len(read) > 1 or read[0].share is not None:
-            total = 0.0
-            for i, point in enumerate(read):
-                if point.share is None:
-                    self.fault(
-                        ("duty", i, "share"),
-                        "nothing",
-                        "a share of the running time, since there are several",
-                        plain=True,
-                    )
-                total += point.share or 0.0
-            if all(point.share is not None for point in read) and not math.isclose(total, 1.0, abs_tol=1e-3):
-                self.fault(
-                    ("duty", len(read) - 1, "share"),
-                    f"shares that add up to {total:.4g}",
-                    "shares that add up to 1 (100 %)",
-                    plain=True,
-                )
         return read
+
+    def _shares(self, points: Sequence[Mapping[str, Any]]) -> None:
+        """Several duty points need their shares of the running time, and the shares have to add up."""
+        entry = dict(entries(Duty))["share"]
+        total = 0.0
+        missing = [i for i, point in enumerate(points) if "share" not in point]
+        for i in missing if len(points) > 1 else ():
+            self.fault(("duty", i, "share"), "nothing",
+                       "a share of the running time, since there are several duty points", plain=True)  # fmt: skip
+        if missing:
+            return
+        for point in points:
+            try:
+                total += float(_value(point["share"], entry))
+            except UnreadableText:
+                return  # told already, where the key was read
+        if not math.isclose(total, 1.0, abs_tol=1e-3):
+            self.fault(("duty", len(points) - 1, "share"), f"shares that add up to {total:.4g}",
+                       "shares that add up to 1 (100 %)", plain=True)  # fmt: skip
 
     def _keys(self, path: tuple[str | int, ...], values: Mapping[str, Any], table: type[T]) -> T | None:
         """Read the keys of one table."""

@@ -13,7 +13,7 @@ import numpy as np
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis
-from lubecheck.model import oil_words
+from lubecheck.model import limits, oil_words
 from lubecheck.model.assumptions import FACTS, Fact
 from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
@@ -209,12 +209,26 @@ def _duty(case: Case, row: int) -> str:
     return f"at duty point {row % len(case.duty) + 1}" if len(case.duty) > 1 else ""
 
 
+def _regrease(case: Case, outcome: Outcome, row: int) -> str:
+    points = outcome.points
+    room = float(limits.room_for_grease(points)[row])
+    dose = float(points.regrease_mass[row])
+    if math.isinf(room):
+        return ""
+    if room < dose:
+        return f"room for {room:.1f} g only: open a way out, or clean out, before it is greased again"
+    return (
+        f"without an open relief the housing is full after {math.floor(room / dose)} regreasings: clean it out by then"
+    )
+
+
 _NOTES = {
     "film": _film,
     "temperature": _temperature,
     "cold_start": _cold,
     "fill": _fill,
     "interval": _interval,
+    "regrease_amount": _regrease,
     "minimum_load": _minimum_load,
     "static_load": _static,
     "fatigue_life": _life,
@@ -254,11 +268,11 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         if fact.is_missing(case):
             worst = " (judged at its worst as well)" if fact.name in judged_too else ""
             said.append(Assumed(fact.name, fact.text + worst, fact.basis))
-    limits = case.limits
+    own = case.limits
     defaults = (
-        ("[limits] life", limits.life, f"{DEFAULT_LIFE:.0f} h, continuous service", "common-practice"),
-        ("[limits] reliability", limits.reliability, f"{DEFAULT_RELIABILITY * 100:.0f} %", "iso-281"),
-        ("[limits] least_viscosity_ratio", limits.least_viscosity_ratio, f"{DEFAULT_KAPPA:g}", "common-practice"),
+        ("[limits] life", own.life, f"{DEFAULT_LIFE:.0f} h, continuous service", "common-practice"),
+        ("[limits] reliability", own.reliability, f"{DEFAULT_RELIABILITY * 100:.0f} %", "iso-281"),
+        ("[limits] least_viscosity_ratio", own.least_viscosity_ratio, f"{DEFAULT_KAPPA:g}", "common-practice"),
     )
     said += [Assumed(name, text, source) for name, value, text, source in defaults if value is None]
     if case.is_grease and case.grease.housing_fill is None:

@@ -268,3 +268,38 @@ def test_a_bearing_that_is_closed_on_one_side_can_be_regreased():
     result = lubecheck.check(read_case(BASE.replace('designation = "6309"', 'designation = "6309-Z"')))
     assert result.limit("interval").state == "within"
     assert result.plan.regrease_g is not None
+
+
+def test_doses_that_find_no_room_are_beyond_and_the_plan_gives_none():
+    text = with_key(with_key(BASE, "housing", "void", '"5 cm^3"'), "grease", "regrease_amount", '"12 g"')
+    result = lubecheck.check(read_case(text))
+    assert result.limit("regrease_amount").state == "beyond"
+    assert result.plan.regrease_g is None
+    assert result.plan.steps[0].startswith("Do not regrease")
+    opened = lubecheck.check(read_case(with_key(text, "housing", "relief", '"open"')))
+    assert opened.limit("regrease_amount").state == "within"
+
+
+def test_a_start_is_never_warmer_than_the_air():
+    result = lubecheck.check(read_case(with_key(BASE, "surroundings", "ambient", '"-40 degC"')))
+    assert result.limit("cold_start").demand == -40.0
+    assert result.limit("cold_start").state == "beyond"
+
+
+def test_one_fill_is_proposed_for_all_duty_points():
+    text = with_key(with_key(BASE, "grease", "fill", None), "duty", "share", "0.5")
+    text += '\n[[duty]]\nspeed = "60 rpm"\nradial_load = "1.9 kN"\naxial_load = "0 N"\nshare = "50 %"\n'
+    proposed = lubecheck.check(read_case(text)).grease.fill_share.m
+    fast = lubecheck.check(read_case(with_key(BASE, "grease", "fill", None))).grease.fill_share.m
+    assert proposed == fast
+
+
+def test_the_governing_limit_is_in_the_state_of_the_verdict(results):
+    for result in results.values():
+        assert result.limit(result.governing).state == result.verdict
+
+
+def test_a_stroke_that_is_more_than_the_dose_is_not_rounded_up():
+    text = with_key(with_key(BASE, "grease", "regrease_amount", '"12 g"'), "grease", "stroke", '"20 g"')
+    result = lubecheck.check(read_case(text))
+    assert result.plan.regrease_strokes == 0
