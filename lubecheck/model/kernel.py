@@ -79,6 +79,7 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
             "interval": limits.of_positions(p, interval, allowed, has_interval),
             "regrease_amount": limits.reduce(p, limits.regrease(p)),
             "speed": limits.reduce(p, limits.rotational_speed(p)),
+            "acceleration": limits.reduce(p, limits.acceleration(p)),
             "minimum_load": limits.reduce(p, limits.minimum_load(p, state)),
             "static_load": limits.reduce(p, limits.static_load(p)),
             "fatigue_life": limits.of_positions(p, p.life_target[p.starts], modified, everywhere),
