@@ -166,7 +166,8 @@ class _Reading:
             return None
         case = Case(
             title=title, note=note, bearing=bearing, lubricant=lubricant, duty=duty, surroundings=surroundings,
-            shaft=shaft, opposed=opposed, housing=housing, grease=grease, oil=oil, cleanliness=cleanliness, limits=limits, given=tuple(self.given),
+            shaft=shaft, opposed=opposed, housing=housing, grease=grease, oil=oil, cleanliness=cleanliness,
+            limits=limits, given=tuple(self.given),
         )  # fmt: skip
         self._shaft(duty_faults(case))
         return case

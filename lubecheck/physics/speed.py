@@ -242,9 +242,9 @@ def thermal_safe_speed(
     return _balance_speed(f0, f1, nu=nu, load=load, pitch_diameter=pitch_diameter, heat=heat_flow)
 
 
-# Kinematic limit, a rule of the trade. Cages: what the family's oil limit is for is a pressed steel cage; machined brass
-# and polyamide cages run faster, which is not counted on here; without a cage the elements rub on each other, and
-# handbooks give 0.3 to 0.5 of the speed of the same bearing with one.
+# Kinematic limit, a rule of the trade. Cages: the oil limit of a family is for a pressed steel cage; machined brass and
+# polyamide cages run faster, which is not counted on here; without a cage the elements rub on each other, and handbooks
+# give 0.3 to 0.5 of the speed of the same bearing with one.
 CAGE_FACTORS = {"steel": 1.0, "brass": 1.0, "polyamide": 1.0, "full complement": 0.4}
 # Sliding speed of a bearing's own contact seal of nitrile rubber, m/s. Fitted to the limiting speeds that handbooks
 # print for sealed bearings (from memory: 6205 8500, 6309 4500, 6312 3400, 6220 2400 rpm); range 12 to 15.
