@@ -130,6 +130,9 @@ def uncertain(case: Case) -> Iterator[tuple[str, float, float]]:
     yield "f1_factor", *F1_RANGE
     if case.housing.shaft_temperature is not None:
         yield "shaft_conductance", *SHAFT_RANGE
+    for key in ("dynamic_rating", "static_rating", "fatigue_limit"):
+        if key in case.bearing.estimated:
+            yield key, *case.bearing.estimated[key]
     if case.is_grease:
         yield "churning_factor", *CHURNING_RANGE
 
