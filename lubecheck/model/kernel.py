@@ -141,7 +141,15 @@ def takes_loads(points: Points) -> Flags:
     """Return where the load rule of the family counts every load that there is."""
     p = points
     axial_counts = loads.TAKES_AXIAL[p.rule] | (p.axial_load == 0)
-    flags: Flags = axial_counts & (loads.TAKES_RADIAL[p.rule] | (p.radial_load == 0))
+    flags: Flags = axial_counts & (loads.TAKES_RADIAL[p.rule] | (p.radial_load == 0)) & ~parts_rows(p)
+    return flags
+
+
+def parts_rows(points: Points) -> Flags:
+    """Return where the radial load on a thrust spherical roller bearing is so great that its washers part."""
+    p = points
+    share = loads.GREATEST_THRUST_SPHERICAL_RADIAL
+    flags: Flags = (p.rule == loads.RULES.index("thrust spherical")) & (p.radial_load > share * np.abs(p.axial_load))
     return flags
 
 

@@ -15,7 +15,7 @@ from lubecheck.data.lubricants import Lubricant
 from lubecheck.model.assumptions import FACTS, Fact
 from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
-from lubecheck.model.kernel import Outcome, takes_loads
+from lubecheck.model.kernel import Outcome, parts_rows, takes_loads
 from lubecheck.model.points import (
     DEFAULT_KAPPA,
     DEFAULT_LIFE,
@@ -223,7 +223,9 @@ def _outside_life(outcome: Outcome) -> str:
         reasons.append("kappa is under 0.1")
     if np.nanmax(outcome.load_ratio) > fatigue.GREATEST_LOAD_RATIO:
         reasons.append("P is over 0.5 C")
-    if not takes_loads(outcome.points).all():
+    if parts_rows(outcome.points).any():
+        reasons.append("the radial load is over 0.55 of the axial one, so that the washers part")
+    elif not takes_loads(outcome.points).all():
         reasons.append("the family takes no load in one of the stated directions")
     return ", ".join(reasons) or "no equilibrium temperature"
 

@@ -104,3 +104,11 @@ def test_the_part_of_a_designation_that_is_not_understood_is_named():
 
 def test_clearance_is_read():
     assert case_of("6309-2Z/C3").bearing.clearance == "C3"
+
+
+@pytest.mark.parametrize(("radial", "is_judged"), [("500 N", True), ("600 N", False)])
+def test_a_thrust_spherical_bearing_takes_radial_load_up_to_055_of_the_axial_one(radial, is_judged):
+    loads = {"duty__radial_load": f'"{radial}"', "duty__axial_load": '"1 kN"', "duty__speed": '"600 rpm"'}
+    limit = limit_of("29412", "fatigue_life", **loads)
+    assert ("washers part" in limit.note) is not is_judged
+    assert (limit.state == "unknown") is not is_judged
