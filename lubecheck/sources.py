@@ -36,6 +36,8 @@ SOURCES: Mapping[str, Source] = {
     "iso-281": Source("ISO 281:2007, dynamic load ratings and rating life", "checked"),
     "iso-tr-1281-2": Source("ISO/TR 1281-2:2008, notes on ISO 281, modified rating life", "memory"),
     "bearing-handbooks": Source("rolling bearing handbooks, figures they agree on", "memory"),
+    "shigley": Source("Shigley, Mechanical Engineering Design, shafts and tapered roller bearings", "memory"),
+    "statics": Source("statics of a beam on two supports, engineering handbooks", "checked"),
     "iso-76": Source("ISO 76:2006, static load ratings", "memory"),
     "iso-15": Source("ISO 15, radial bearings, boundary dimensions", "memory"),
     "iso-355": Source("ISO 355, tapered roller bearings, boundary dimensions", "memory"),

@@ -34,6 +34,7 @@ LBF_N = POUND_G / 1000 * GRAVITY
 US_GALLON_CM3 = 231 * INCH_MM**3 / 1000
 HORSEPOWER_W = 550 * LBF_N * FOOT_MM / 1000  # mechanical
 DAY_H = 24.0
+HOUR_S = 3600.0
 YEAR_H = 365.25 * DAY_H  # Julian year, as pint has it
 
 
@@ -163,6 +164,7 @@ KINDS: Mapping[str, Kind] = {
         _kind("shear stress", "Pa", {"kPa": 1000, "N/m^2": 1}),
         _kind("feed", "g/h", {"g/d": 1 / DAY_H, "g/day": 1 / DAY_H, "g/week": 1 / (7 * DAY_H), "mg/h": 1e-3}),
         _kind("Saybolt viscosity", "s", {"SUS": 1, "SSU": 1}),  # Saybolt Universal seconds: a viscosity, not a time
+        _kind("angular acceleration", "rad/s^2", {"rpm/s": math.pi / 30}),
         _kind("angle", "deg", {"rad": 180 / math.pi}),
         _kind("share", "1", {"%": 0.01, "percent": 0.01, "ppm": 1e-6}),
         _kind("number", "1", {}),
@@ -321,6 +323,7 @@ PerGPa = Annotated[Array, Unit("pressure coefficient")]
 LPerMin = Annotated[Array, Unit("flow")]
 GramPerHour = Annotated[Array, Unit("feed")]
 Deg = Annotated[Array, Unit("angle")]
+RadPerS2 = Annotated[Array, Unit("angular acceleration")]
 PerSecond = Annotated[Array, Unit("shear rate")]
 Pa = Annotated[Array, Unit("shear stress")]
 Share = Annotated[Array, Unit("share")]

@@ -74,3 +74,16 @@ def with_key(text: str, table: str, key: str, value: str | None) -> str:
 def base() -> str:
     """The text of a whole and good case."""
     return BASE
+
+
+def pytest_terminal_summary(terminalreporter):
+    """Report how far the estimated ratings are off, family by family: tests record it as the property "worst"."""
+    lines = [
+        f"{report.nodeid.partition('[')[2].rstrip(']')}: {value}"
+        for report in terminalreporter.stats.get("passed", ())
+        for name, value in getattr(report, "user_properties", ())
+        if name == "worst"
+    ]
+    if lines:
+        terminalreporter.section("worst deviation of estimated from published ratings", sep="-")
+        terminalreporter.write_line("\n".join(dict.fromkeys(lines)))

@@ -24,6 +24,7 @@ class Internals:
     static_rating: float
     f0_load: float
     mass: float
+    elements_mass: float  # of all rolling elements together
 
 
 def estimate(
@@ -38,22 +39,26 @@ def estimate(
     angle = 0.0 if contact_angle is None else contact_angle
     scale = (min(max(pitch, _LEAST_PITCH), _GREATEST_PITCH) / 100) ** series.shape.growth
     diameter = series.shape.diameter * scale * (outside - bore) / 2
+    length = series.shape.length * scale * width * series.rows / rows
+    count = series.shape.filling * math.pi / math.asin(min(1.0, diameter / pitch))
     dynamic, static = load_ratings(
         family.name,
         diameter=diameter,
-        length=series.shape.length * scale * width * series.rows / rows,
+        length=length,
         pitch=pitch,
         angle=angle,
-        count=series.shape.filling * math.pi / math.asin(min(1.0, diameter / pitch)),
+        count=count,
         # a ball in four contacts carries like two rows, in either direction: handbook ratings of the family say so
         rows=2 if series.family == "four-point contact ball" else rows,
     )
+    volume = math.pi / 4 * diameter**2 * length if family.is_roller else math.pi / 6 * diameter**3
     gamma = diameter * math.cos(math.radians(angle)) / pitch
     return Internals(
         dynamic_rating=dynamic,
         static_rating=static,
         f0_load=float(ratings.static_factor.plain(np.asarray(gamma))),
         mass=STEEL_DENSITY * (1 - family.free_share) * math.pi / 4 * (outside**2 - bore**2) * width,
+        elements_mass=STEEL_DENSITY * volume * count * rows,
     )
 
 

@@ -68,6 +68,7 @@ class Bearing:
     static_rating: float
     fatigue_limit: float
     mass: float
+    elements_mass: float  # of all rolling elements together, g
     clearance: str = "CN"
     seal: str = "open"
     sealed_sides: int = 0
@@ -115,7 +116,7 @@ def assemble(
     }
     basis = {
         **dict.fromkeys(("bore", "outside", "width"), dimensions),
-        **dict.fromkeys(("dynamic_rating", "static_rating", "mass", "f0_load"), "own-estimate"),
+        **dict.fromkeys(("dynamic_rating", "static_rating", "mass", "f0_load", "elements_mass"), "own-estimate"),
         "fatigue_limit": "iso-281",
         **dict.fromkeys(("f0", "f1"), family.friction_source),
         "load_rule": "iso-281",
@@ -142,6 +143,7 @@ def assemble(
         static_rating=inside.static_rating,
         fatigue_limit=fatigue_limit(inside.static_rating, (bore + outside) / 2, series.family),
         mass=inside.mass,
+        elements_mass=inside.elements_mass,
         f0=f0,
         f1=f1,
         f0_load=inside.f0_load,

@@ -83,6 +83,53 @@ def check(
 app.command(epilog=FLUIDS_EPILOG)(fluids)
 
 
+@app.command(
+    epilog='Example: lubecheck bearings 6309 22218 "NU 310". Without a designation: the families, or with --family the '
+    "sizes of one. A case file stands for its bearing. Exit codes: 0 shown, 2 a designation was not found."
+)
+def bearings(
+    designations: Annotated[
+        list[str] | None,
+        typer.Argument(metavar="[DESIGNATION]...", help="Designations, or case files in TOML (- for standard input)."),
+    ] = None,
+    family: Annotated[str, typer.Option(help="List the sizes of this family.")] = "",
+    json: Annotated[bool, typer.Option("--json", help="Print as JSON.")] = False,
+    units: Annotated[Units, typer.Option(help="Units of the terminal; JSON keeps SI-derived units.")] = Units.SI,
+) -> None:
+    """Show bearings: dimensions, ratings, limits, free volume, usual fill, and where each figure comes from."""
+    from lubecheck.errors import Fault, InputError, shown
+    from lubecheck.faces import bearing_list
+    from lubecheck.model import bearing_sheet
+
+    if designations and family:
+        raise InputError([Fault("--family", shown(family), "no --family beside designations, which say it")])
+    if not designations:
+        if family:
+            listed = bearing_sheet.listing(family)
+            if json:
+                typer.echo(bearing_list.record(listed=listed))
+            else:
+                bearing_list.print_listing(listed, console(), units.value)
+        elif json:
+            typer.echo(bearing_list.record(families=bearing_sheet.families()))
+        else:
+            bearing_list.print_families(bearing_sheet.families(), console())
+        return
+    found: list[bearing_sheet.BearingSheet] = []
+    faults: list[Fault] = []
+    for text in designations:
+        try:
+            found.append(bearing_sheet.named(text))
+        except InputError as refused:
+            faults += refused.faults
+    if json:
+        typer.echo(bearing_list.record(found))
+    else:
+        bearing_list.print_sheets(found, console(), units.value)
+    if faults:
+        raise InputError(faults)
+
+
 def exit_code(verdict: str, fail_on: str = "beyond") -> int:
     """Return the exit code of a verdict.
 

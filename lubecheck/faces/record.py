@@ -39,6 +39,8 @@ def of_result(result: Result) -> dict[str, Any]:
         "duty": [figures(point) for point in result.duty],
         "grease": figures(result.grease),
         "life": figures(result.life),
+        "loads": figures(result.loads),
+        "speeds": figures(result.speeds),
         "plan": dataclasses.asdict(result.plan),
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
         "notes": list(result.notes),

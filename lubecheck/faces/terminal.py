@@ -125,13 +125,15 @@ def _operating(result: Result, console: Console, system: str) -> None:
     table = Table(box=None, pad_edge=False, padding=(0, 2, 0, 2), show_header=False)
     for justify in ("left", "right", "left", "left"):
         table.add_column(justify=justify, no_wrap=justify != "left")
-    groups: list[Figures] = [result.operating, result.life]
+    groups: list[Figures] = [result.operating, result.life, result.loads, result.speeds]
     if result.grease is not None:
         groups.append(result.grease)
     for group in groups:
         for name, item in group.figures.items():
             if name in ("first_fill", "fill_share", "regrease_quantity", "regrease_interval"):
                 continue  # the plan line says them
+            if group in (result.loads, result.speeds) and not item.value:
+                continue  # not every position has them, or needs a preload
             band = ""
             if item.low is not None and item.high is not None and number(item.low) != number(item.high):
                 band = f"({amount(item.low, item.unit, system)} to {amount(item.high, item.unit, system)})"

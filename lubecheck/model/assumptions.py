@@ -27,6 +27,11 @@ SMALLEST_AREA = min(low for low, _, _ in HOUSING_AREA.values())
 HOTTEST_SHAFT = 120.0  # degC, of a machine that nobody described: common practice for hot fans and motors, estimate
 # mm, where 0.00411 (1 - 3.8974/Dpw^(1/3)) and 0.00617 (1 - 4.06/Dpw^(1/3)) of ISO 281, Annex A, meet
 DIRTIEST_CODE_FROM = 84.3
+# Time from rest to speed. The rule of the shortest is an estimate: unloaded motors started direct on line need about
+# 0.05 s with small bearings and 0.3 s with large ones, since inertia grows faster with size than torque. A case may not
+# state less, so that leaving it unsaid is never milder than saying it.
+ORDINARY_RUN_UP = 5.0  # s: estimate, a start that nobody calls rapid takes 2 to 20 s
+SHORTEST_RUN_UP = 1e-3  # s a mm of mean diameter
 LARGEST_ALTITUDE = 5000e3  # mm, the highest that a case may state
 
 
@@ -46,7 +51,7 @@ class Fact:
     @property
     def name(self) -> str:
         """The key as a user writes it."""
-        return f"[{self.table}] {self.key}"
+        return f"[[duty]] {self.key}" if self.table == "duty" else f"[{self.table}] {self.key}"
 
 
 THERMAL = ("film", "temperature", "interval", "fatigue_life")
@@ -106,6 +111,8 @@ FACTS: tuple[Fact, ...] = (
     Fact("oil", "supply", "bath", "bath", "bath", "common-practice", THERMAL, _missing("oil", "supply", grease=False)),
     Fact("oil", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
          _missing("oil", "hours_per_day", grease=False)),
+    Fact("duty", "acceleration", "ordinary", "shortest", f"no rapid starts or stops, {ORDINARY_RUN_UP:g} s to speed",
+         "own-estimate", ("acceleration",), lambda case: any(duty.acceleration is None for duty in case.duty)),
     Fact("cleanliness", "setting", "normal", "very severe", "normal cleanliness", "iso-281:annex A", ("fatigue_life",),
          lambda case: _no_setting(case) and not _is_worse_in_a_bath(case)),
     Fact("cleanliness", "setting", "normal", "bath -/21/18", "normal cleanliness", "iso-281:annex A", ("fatigue_life",),
@@ -136,6 +143,9 @@ def uncertain(case: Case) -> Iterator[tuple[str, float, float]]:
     yield "f1_factor", *F1_RANGE
     if case.housing.shaft_temperature is not None:
         yield "shaft_conductance", *SHAFT_RANGE
+    for key in ("dynamic_rating", "static_rating", "fatigue_limit"):
+        if key in case.bearing.estimated:
+            yield key, *case.bearing.estimated[key]
     if case.is_grease:
         yield "churning_factor", *CHURNING_RANGE
 

@@ -14,7 +14,7 @@ from typing import Any
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import limits, wording
+from lubecheck.model import limits, side_figures, wording
 from lubecheck.model.assumptions import Fact, missing, uncertain
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
@@ -35,6 +35,7 @@ LIMITS: Mapping[str, tuple[str, str]] = {
     "interval": ("h", "grease-handbooks"),
     "regrease_amount": ("g", "neale:A20.5"),
     "speed": ("rpm", "common-practice"),
+    "acceleration": ("rad/s^2", "own-estimate"),
     "minimum_load": ("N", "common-practice"),
     "static_load": ("1", "iso-76"),
     "fatigue_life": ("h", "iso-281:9.3"),
@@ -106,6 +107,8 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
         duty=tuple(operating),
         grease=_grease(outcome, plan) if case.is_grease else None,
         life=_life(variants),
+        loads=side_figures.loads_at(case, outcome),
+        speeds=side_figures.speeds_at(case, outcome, variants.rows),
         plan=plan,
         remedies=(),
         notes=wording.notes(case, outcome),

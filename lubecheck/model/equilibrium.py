@@ -17,7 +17,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model.points import Flags, Points
+from lubecheck.model.points import Flags, Points, seal_diameter
 from lubecheck.physics import churning, cooling, friction, loads, viscosity
 from lubecheck.units import Array
 
@@ -80,7 +80,7 @@ class Balance:
         )
         self.load_torque = p.f1_factor * friction.load_torque.plain(p.f1, self.equivalent_load, p.pitch_diameter)
         self.seal_torque = friction.seal_torque.plain(
-            seal_diameter(p), p.rubbing_seals, friction.SEAL_LINE_FRICTION.nominal
+            seal_diameter(p.bore, p.outside), p.rubbing_seals, friction.SEAL_LINE_FRICTION.nominal
         )
         # Oil bearings have no fill: nothing is held.
         fill = np.where(p.is_grease > 0, np.minimum(np.nan_to_num(p.fill), 1.0), 0.0)
@@ -142,14 +142,6 @@ class Balance:
         radiation = cooling.radiation.plain(surface=temperature, surroundings=p.ambient, emissivity=EMISSIVITY)
         by_area = (convection + radiation) * self.area + p.fin_conductance
         return p.cooling_factor * np.where(self.is_by_area, by_area, p.conductance)
-
-
-def seal_diameter(points: Points) -> Array:
-    """Return the diameter that a contact seal rubs on: the shoulder of the inner ring, estimated.
-
-    A fifth of the section height above the bore; 0.15 to 0.3 by series.
-    """
-    return points.bore + 0.2 * (points.outside - points.bore)
 
 
 def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:

@@ -79,6 +79,7 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
             "interval": limits.of_positions(p, interval, allowed, has_interval),
             "regrease_amount": limits.reduce(p, limits.regrease(p)),
             "speed": limits.reduce(p, limits.rotational_speed(p)),
+            "acceleration": limits.reduce(p, limits.acceleration(p)),
             "minimum_load": limits.reduce(p, limits.minimum_load(p, state)),
             "static_load": limits.reduce(p, limits.static_load(p)),
             "fatigue_life": limits.of_positions(p, p.life_target[p.starts], modified, everywhere),
@@ -140,7 +141,15 @@ def takes_loads(points: Points) -> Flags:
     """Return where the load rule of the family counts every load that there is."""
     p = points
     axial_counts = loads.TAKES_AXIAL[p.rule] | (p.axial_load == 0)
-    flags: Flags = axial_counts & (loads.TAKES_RADIAL[p.rule] | (p.radial_load == 0))
+    flags: Flags = axial_counts & (loads.TAKES_RADIAL[p.rule] | (p.radial_load == 0)) & ~parts_rows(p)
+    return flags
+
+
+def parts_rows(points: Points) -> Flags:
+    """Return where the radial load on a thrust spherical roller bearing is so great that its washers part."""
+    p = points
+    share = loads.GREATEST_THRUST_SPHERICAL_RADIAL
+    flags: Flags = (p.rule == loads.RULES.index("thrust spherical")) & (p.radial_load > share * np.abs(p.axial_load))
     return flags
 
 

@@ -13,7 +13,7 @@ import numpy as np
 
 from lubecheck.model.equilibrium import Equilibrium
 from lubecheck.model.points import Codes, Flags, Points
-from lubecheck.physics import churning, grease_amount, loads
+from lubecheck.physics import churning, fatigue, grease_amount, loads, speed
 from lubecheck.units import Array
 
 NEAR = 0.85  # of a limit: from here on the state is `near`
@@ -146,9 +146,25 @@ def _two_sided(amount: Array, lower: Array, upper: Array, applies: Flags) -> Use
 
 
 def rotational_speed(points: Points) -> Use:
-    """Speed parameter n dm over what the family takes with this lubricant."""
-    use = points.speed / points.speed_limit
-    return Use(points.speed, points.speed_limit, use, np.ones(len(points), dtype=bool))
+    """Speed over what the family takes with this lubricant (n dm), or cage and seals where that is less.
+
+    The thermally safe speed of DIN 732 is told beside it and not judged here: it is the same heat that `temperature`
+    judges with the heat paths that the position really has, and not with those that the standard takes for granted.
+    """
+    allowed = np.minimum(points.speed_limit, points.kinematic_limit)
+    return Use(points.speed, allowed, points.speed / allowed, np.ones(len(points), dtype=bool))
+
+
+_ELEMENT_OF_KIND = np.array([tuple(speed.ELEMENTS).index(kind.split()[1]) for kind in fatigue.KINDS])
+
+
+def acceleration(points: Points) -> Use:
+    """Angular acceleration over the one up to which the rolling elements follow without sliding."""
+    allowed = speed.greatest_acceleration.plain(
+        load=np.hypot(points.radial_load, points.axial_load), elements_mass=points.elements_mass,
+        pitch_diameter=points.pitch_diameter, traction=speed.TRACTION, element=_ELEMENT_OF_KIND[points.kind],
+    )  # fmt: skip
+    return Use(points.acceleration, allowed, points.acceleration / allowed, np.ones(len(points), dtype=bool))
 
 
 def minimum_load(points: Points, state: Equilibrium) -> Use:

@@ -19,7 +19,8 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
 from lubecheck.model.assumptions import HOTTEST_SHAFT, HOUSING_AREA, SMALLEST_AREA
 from lubecheck.model.entries import Amount, Case, Duty
-from lubecheck.physics import cooling, fatigue, grease_amount, grease_life, loads, viscosity
+from lubecheck.model.shaft import acceleration_of, loads_of
+from lubecheck.physics import cooling, fatigue, grease_amount, grease_life, loads, speed, viscosity
 from lubecheck.units import Array
 
 Codes = NDArray[np.intp]
@@ -73,6 +74,7 @@ class Points:
     speed: Array
     radial_load: Array
     axial_load: Array
+    acceleration: Array  # rad/s^2 of starts and stops
     # bearing
     bore: Array
     outside: Array
@@ -90,6 +92,8 @@ class Points:
     f1: Array
     minimum_load_share: Array
     speed_limit: Array  # rpm, of the family with the lubricant at hand
+    kinematic_limit: Array  # rpm, of cage and contact seals
+    elements_mass: Array  # g, of all rolling elements
     interval_family: Codes
     free_volume: Array
     is_sealed: Array  # shielded or sealed on both sides
@@ -255,9 +259,31 @@ def _bearing_columns(bearing: Bearing, reading: Mapping[str, Any]) -> dict[str, 
         "minimum_load_share": family.minimum_load_share,
         "interval_family": INTERVAL_FAMILY[family.interval_factor],
         "free_volume": float(volume),
+        "kinematic_limit": kinematic_limit(bearing),
+        "elements_mass": bearing.elements_mass,
         "is_sealed": float(bearing.sealed_sides == 2),
         "rubbing_seals": float(bearing.sealed_sides) if bearing.seal == "contact seals" else 0.0,
     }
+
+
+def kinematic_limit(bearing: Bearing) -> float:
+    """Return the speed that cage and contact seals stand whatever the lubricant, rpm: rules of the trade."""
+    family = FAMILIES[bearing.family]
+    is_named = bearing.family.startswith("full complement")  # the family's own limit is that of no cage
+    cage = 1.0 if is_named else speed.CAGE_FACTORS[bearing.cage or "steel"]
+    limit = cage * family.oil_speed_limit / bearing.pitch_diameter
+    if bearing.seal == "contact seals":
+        rubbing = seal_diameter(bearing.bore, bearing.outside)
+        limit = min(limit, float(speed.seal_speed_limit.plain(rubbing, speed.SEAL_SPEED)))
+    return limit
+
+
+def seal_diameter(bore: Any, outside: Any) -> Any:
+    """Return the diameter that a contact seal rubs on: the shoulder of the inner ring, estimated.
+
+    A fifth of the section height above the bore; 0.15 to 0.3 by series.
+    """
+    return bore + 0.2 * (outside - bore)
 
 
 def _lubricant_columns(case: Case) -> dict[str, float]:
@@ -375,11 +401,13 @@ def _duty_columns(case: Case, duty: Duty, reading: Mapping[str, Any], row: Mappi
     is_path = shaft is not None or is_hot or (case.housing.machine_heat is None and case.housing.conductance is None)
     if shaft is None:
         shaft = max(ambient, HOTTEST_SHAFT) if is_hot else ambient
+    on_bearing = loads_of(case, duty)
     return {
         "share": 1.0 if duty.share is None else duty.share,
         "speed": duty.speed,
-        "radial_load": duty.radial_load,
-        "axial_load": duty.axial_load,
+        "radial_load": on_bearing.radial,
+        "axial_load": on_bearing.axial,
+        "acceleration": acceleration_of(duty, case.bearing, reading.get("[[duty]] acceleration", "ordinary")),
         "ambient": ambient,
         "draught": draught or 0.0,
         "shaft_temperature": shaft,

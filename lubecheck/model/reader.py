@@ -35,9 +35,11 @@ from lubecheck.model.entries import (
     LubricantTable,
     OilPlan,
     Requirements,
+    Shaft,
     Surroundings,
     entries,
 )
+from lubecheck.model.shaft import Problem, duty_faults, faults, opposed_faults
 from lubecheck.model.toml_lines import key_lines
 from lubecheck.units import KINDS, UnreadableText, split_text, to_house
 
@@ -146,6 +148,13 @@ class _Reading:
         analysis = self._analysis(lubricant_table, lubricant)
         duty = self._duty(document)
         surroundings = self._table(document, "surroundings", Surroundings, is_need=True)
+        shaft = self._table(document, "shaft", Shaft) or Shaft()
+        opposed = self._opposed(shaft, bearing)
+        before = len(self.faults)
+        self._shaft(faults(shaft, duty, surroundings))
+        if bearing is not None and (opposed is not None or shaft.opposed is None):
+            self._shaft(opposed_faults(shaft, duty, bearing, opposed))
+        is_whole = len(self.faults) == before and (opposed is not None or shaft.opposed is None)
         housing = self._table(document, "housing", Housing) or Housing()
         grease = self._table(document, "grease", GreasePlan) or GreasePlan()
         oil = self._table(document, "oil", OilPlan) or OilPlan()
@@ -164,13 +173,37 @@ class _Reading:
                 self.fault(
                     ("lubricant", "iso_code"), str(analysis.code), "no such key for mist: ISO 281 has no setting"
                 )
-        if bearing is None or lubricant is None or not duty or surroundings is None:
+        if bearing is None or lubricant is None or not duty or surroundings is None or not is_whole:
             return None
-        return Case(
+        case = Case(
             title=title, note=note, bearing=bearing, lubricant=analysis.used if analysis else lubricant, duty=duty,
-            surroundings=surroundings, housing=housing, grease=grease, oil=oil, cleanliness=cleanliness, limits=limits,
-            analysis=analysis, given=tuple(self.given),
+            surroundings=surroundings, shaft=shaft, opposed=opposed, housing=housing, grease=grease, oil=oil,
+            cleanliness=cleanliness, limits=limits, analysis=analysis, given=tuple(self.given),
         )  # fmt: skip
+        self._shaft(duty_faults(case))
+        return case
+
+    def _shaft(self, problems: Iterator[Problem]) -> None:
+        """Note what is wrong with the loads, once each: keys of [shaft] hold for all duty points."""
+        for path, given, expected in dict.fromkeys(problems):
+            self.fault(path, given, expected, plain=True)
+
+    def _opposed(self, shaft: Shaft, bearing: Bearing | None) -> Bearing | None:
+        """Find the bearing that [shaft] opposed names."""
+        if shaft.opposed is None:
+            return None
+        if shaft.opposed.casefold() == "same":
+            return bearing
+        try:
+            return bearings.find(shaft.opposed)
+        except InputError as refused:
+            self.faults += [
+                dataclasses.replace(
+                    fault, key="shaft.opposed", where=self.name, line=self.lines.get(("shaft", "opposed"))
+                )
+                for fault in refused.faults
+            ]
+            return None
 
     def _text(self, document: Mapping[str, Any], key: str) -> str:
         value = document.get(key, "")
@@ -207,11 +240,6 @@ class _Reading:
         self._shares(value)
         if len(read) < len(points):
             return ()
-        for i, point in enumerate(read):
-            if point.radial_load == 0 and point.axial_load == 0:
-                self.fault(
-                    ("duty", i, "radial_load"), "no load at all", "a radial or an axial load above 0 N", plain=True
-                )
         return read
 
     def _shares(self, points: Sequence[Mapping[str, Any]]) -> None:

@@ -112,6 +112,29 @@ class Life(Figures):
     modified_life = Declared("h", "modified rating life at the wanted reliability")
 
 
+@dataclass(frozen=True)
+class Loads(Figures):
+    """Loads at the duty point whose load comes nearest to being too small."""
+
+    radial_load = Declared("N", "radial load on this bearing, as stated or by statics")
+    axial_load = Declared("N", "axial load on this bearing, thrust of the opposed bearing included")
+    equivalent_load = Declared("N", "dynamic equivalent load P")
+    minimum_load = Declared("N", "least load under which the rolling elements roll")
+    needed_preload = Declared("N", "axial preload that would bring P to that least load; 0 where none is needed")
+    other_radial_load = Declared("N", "radial load on the other bearing of the shaft, where it follows from [shaft]")
+    induced_thrust = Declared("N", "axial force that the radial load sets free in this bearing")
+
+
+@dataclass(frozen=True)
+class Speeds(Figures):
+    """Speed limits beside the one that is judged, at the duty point that runs hottest."""
+
+    lubricant_limit = Declared("rpm", "speed that the family takes with this kind of lubricant, by n dm")
+    kinematic_limit = Declared("rpm", "speed that cage and contact seals stand, rules of the trade")
+    thermal_reference_speed = Declared("rpm", "thermal reference speed of ISO 15312; none for thrust ball bearings")
+    thermally_safe_speed = Declared("rpm", "thermally safe speed of DIN 732 at this load, oil and highest temperature")
+
+
 @dataclass(frozen=True, slots=True)
 class Limit:
     """One limit and how much of it is used."""
@@ -176,6 +199,8 @@ class Result:
     duty: tuple[Operating, ...]  # the same figures for each duty point
     grease: Grease | None  # None for oil
     life: Life
+    loads: Loads
+    speeds: Speeds
     plan: PlanLine
     remedies: tuple[Remedy, ...]
     notes: tuple[str, ...]

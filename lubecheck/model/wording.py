@@ -17,7 +17,7 @@ from lubecheck.model import limits, oil_words
 from lubecheck.model.assumptions import FACTS, Fact
 from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
-from lubecheck.model.kernel import Outcome, takes_loads
+from lubecheck.model.kernel import Outcome, parts_rows, takes_loads
 from lubecheck.model.points import (
     BEYOND_SETTINGS,
     DEFAULT_KAPPA,
@@ -27,6 +27,8 @@ from lubecheck.model.points import (
     PROPOSED_HOUSING_FILL,
 )
 from lubecheck.model.result import Assumed
+from lubecheck.model.shaft import loads_of
+from lubecheck.model.side_figures import curing_preload, safe_speed
 from lubecheck.physics import fatigue, grease_life
 from lubecheck.units import KINDS
 
@@ -170,9 +172,36 @@ def _interval(case: Case, outcome: Outcome, row: int) -> str:
     return join(said, chain, capped, short, "1 % of bearings have failed by then (L01)")
 
 
+def _speed(case: Case, outcome: Outcome, row: int) -> str:
+    points = outcome.points
+    part = "cage or contact seals, not the lubricant, set it" if (
+        points.kinematic_limit[row] < points.speed_limit[row]
+    ) else ""  # fmt: skip
+    safe = safe_speed(case, points, slice(row, row + 1))[0]
+    heat = ""
+    if points.speed[row] > safe:
+        heat = f"above the thermally safe speed of DIN 732, {safe:.0f} rpm: look at the temperature"
+    return join(part, heat, _duty(case, row) if part or heat else "")
+
+
+def _acceleration(case: Case, outcome: Outcome, row: int) -> str:
+    points = outcome.points
+    load, mass = math.hypot(points.radial_load[row], points.axial_load[row]), points.elements_mass[row]
+    held = f"traction of {load:.0f} N has to bring {mass:.3g} g of rolling elements up to speed (estimate)"
+    advice = "the elements may slide at every start: start softer, or preload" if (
+        outcome.judged["acceleration"].use[0] > 1
+    ) else ""  # fmt: skip
+    return join(held, advice, _duty(case, row))
+
+
 def _minimum_load(case: Case, outcome: Outcome, row: int) -> str:
     judged = outcome.judged["minimum_load"]
-    advice = "the elements may slide: preload, or a smaller bearing" if judged.use[0] > 1 else ""
+    advice = ""
+    if judged.use[0] > 1:
+        preload = curing_preload(outcome.points, row)
+        advice = "the elements may slide: a smaller bearing, or more load; no axial preload helps this family"
+        if math.isfinite(preload):
+            advice = f"the elements may slide: an axial preload of {preload:.0f} N, or a smaller bearing, would cure it"
     return join(f"P is {judged.allowed[0]:.0f} N, at least {judged.demand[0]:.0f} N", advice, _duty(case, row))
 
 
@@ -199,7 +228,9 @@ def _outside_life(outcome: Outcome) -> str:
         reasons.append("P is over 0.5 C")
     if (outcome.points.setting == BEYOND_SETTINGS).any():
         reasons.append("the oil is dirtier than it has a setting for")
-    if not takes_loads(outcome.points).all():
+    if parts_rows(outcome.points).any():
+        reasons.append("the radial load is over 0.55 of the axial one, so that the washers part")
+    elif not takes_loads(outcome.points).all():
         reasons.append("the family takes no load in one of the stated directions")
     return ", ".join(reasons) or "no equilibrium temperature"
 
@@ -229,6 +260,8 @@ _NOTES = {
     "fill": _fill,
     "interval": _interval,
     "regrease_amount": _regrease,
+    "speed": _speed,
+    "acceleration": _acceleration,
     "minimum_load": _minimum_load,
     "static_load": _static,
     "fatigue_life": _life,
@@ -245,6 +278,7 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
         said.append(f"estimated, not the maker's figures: {named}; give them under [bearing] where you have them")
     if len(case.duty) > 1:
         said.append(f"operating point: the hottest of {len(case.duty)} duty points")
+    said += _loads(case)
     if case.is_grease and case.grease.stroke is None:
         said.append("weigh ten strokes of your grease gun and state [grease] stroke: guns give 0.8 to 3 g a stroke")
     churned = float(outcome.state.churning_power[0])
@@ -253,6 +287,31 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
         said.append(f"churning makes {churned:.1f} of {power:.1f} W: the surplus cannot leave and will not run in")
     said += oil_words.notes(case)
     return tuple(said)
+
+
+def _loads(case: Case) -> list[str]:
+    """Say how the loads came about where the case does not state them."""
+    said = []
+    for i, duty in enumerate(case.duty):
+        on_bearing = loads_of(case, duty)
+        place = f" at duty point {i + 1}" if len(case.duty) > 1 else ""
+        if on_bearing.down is not None and on_bearing.across is not None and on_bearing.other_radial is not None:
+            said.append(
+                f"radial load by statics{place}: {on_bearing.radial:.0f} N ({on_bearing.down:.0f} N down, "
+                f"{abs(on_bearing.across):.0f} N across); the other bearing carries {on_bearing.other_radial:.0f} N"
+            )
+        if case.opposed is not None and abs(on_bearing.axial - duty.axial_load) > 0.5:
+            said.append(
+                f"axial load with the thrust of opposed bearings{place}: {on_bearing.axial:.0f} N, from "
+                f"{duty.axial_load:.0f} N of the shaft, {on_bearing.own_thrust:.0f} N set free here and "
+                f"{on_bearing.other_thrust:.0f} N in the opposed bearing"
+            )
+        elif case.opposed is None and on_bearing.own_thrust > abs(duty.axial_load):
+            said.append(
+                f"axial load{place} taken as {on_bearing.own_thrust:.0f} N, the thrust that the radial load sets free "
+                "in this bearing; state [shaft] opposed to count that of the other"
+            )
+    return said
 
 
 def cautions(case: Case) -> tuple[str, ...]:

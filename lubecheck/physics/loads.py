@@ -199,6 +199,86 @@ def induced_thrust(radial_load: Newton, contact_angle: Deg, rule: RuleCode) -> N
     return force
 
 
+@method(
+    source="bearing-handbooks",
+    valid={"external": (-1e9, 1e9), "own_thrust": (0.0, 1e9), "other_thrust": (0.0, 1e9)},
+)
+def opposed_axial_load(*, external: Newton, own_thrust: Newton, other_thrust: Newton) -> Newton:
+    """Axial load on one of two opposed single row bearings, adjusted without play or preload, max(S1, S2 + Ka).
+
+    Of the two thrusts that the radial loads set free the shaft lets the greater sum act: this bearing carries its own
+    thrust, or the other's and the external force where those are more. The other bearing carries max(S2, S1 - Ka).
+
+    external [N]: axial force of the shaft Ka, positive towards this bearing, any shape
+    own_thrust [N]: `induced_thrust` of this bearing, broadcasts
+    other_thrust [N]: `induced_thrust` of the opposed bearing, broadcasts
+    returns [N]
+
+    >>> opposed_axial_load(external="1690 N", own_thrust="680 N", other_thrust="832 N").round(6)
+    <Quantity(2522.0, 'newton')>
+    """
+    load: Array = np.maximum(own_thrust, other_thrust + external)
+    return load
+
+
+_BISECTIONS = 60  # each halves the bracket: the last digit of a load is reached whatever the rule
+
+
+@method(
+    source="iso-281",
+    valid={
+        "radial_load": (0.0, 1e9),
+        "wanted": (0.0, 1e9),
+        "static_rating": (1e-3, 1e9),
+        "f0_load": (1.0, 30.0),
+        "contact_angle": (0.0, 90.0),
+    },
+)
+def axial_load_for(
+    *,
+    radial_load: Newton,
+    wanted: Newton,
+    static_rating: Newton,
+    f0_load: Number,
+    contact_angle: Deg,
+    rule: RuleCode,
+) -> Newton:
+    """Axial load that brings the equivalent load P of a bearing to a wanted one: the preload that cures a light load.
+
+    The inverse of `dynamic_equivalent_load`, which never falls as the axial load grows, by bisection with a fixed count
+    of steps. Zero where the radial load alone is enough; not a number where the rule counts no axial load.
+
+    radial_load [N]: radial load Fr, any shape
+    wanted [N]: equivalent load that is wanted, broadcasts
+    static_rating [N]: basic static load rating C0, broadcasts
+    f0_load [1]: the factor f0 of ISO 76, broadcasts
+    contact_angle [deg]: nominal contact angle, broadcasts
+    rule: one of `RULES`, broadcasts
+    returns [N]
+
+    >>> light = {"radial_load": "100 N", "wanted": "530 N", "static_rating": "31.5 kN", "f0_load": 13.0}
+    >>> axial_load_for(**light, contact_angle="0 deg", rule="deep groove").round(1)
+    <Quantity(206.1, 'newton')>
+    """
+    takes = TAKES_AXIAL[rule]
+
+    def equivalent(axial: Array) -> Array:
+        return dynamic_equivalent_load.plain(
+            radial_load=radial_load, axial_load=axial, static_rating=static_rating, f0_load=f0_load,
+            contact_angle=contact_angle, rule=rule,
+        )  # fmt: skip
+
+    # No rule's steepest line is flatter than Y 0.4: five times the wanted load is above the root for all of them.
+    low = np.zeros(np.broadcast(radial_load, wanted, rule).shape)
+    high = low + 5.0 * wanted
+    is_enough = equivalent(low) >= wanted
+    for _ in range(_BISECTIONS):
+        middle = (low + high) / 2
+        is_above = equivalent(middle) >= wanted
+        low, high = np.where(is_above, low, middle), np.where(is_above, middle, high)
+    return np.where(is_enough, 0.0, np.where(takes, high, np.nan))
+
+
 @method(source="common-practice", valid={"dynamic_rating": (1e-3, 1e9), "share": (0.0, 0.2)})
 def minimum_load(*, dynamic_rating: Newton, share: Share) -> Newton:
     """Least load under which the rolling elements roll and do not slide.

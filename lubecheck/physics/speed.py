@@ -14,7 +14,22 @@ import numpy as np
 from numpy.typing import NDArray
 
 from lubecheck.method import method
-from lubecheck.units import Array, Choice, DeltaDegC, LPerMin, Mm, Mm2, Mm2PerS, Newton, Number, Rpm, Watt
+from lubecheck.units import (
+    Array,
+    Choice,
+    DeltaDegC,
+    Gram,
+    LPerMin,
+    Mm,
+    Mm2,
+    Mm2PerS,
+    MPerS,
+    Newton,
+    Number,
+    RadPerS2,
+    Rpm,
+    Watt,
+)
 
 
 @dataclass(frozen=True, slots=True)
@@ -225,3 +240,70 @@ def thermal_safe_speed(
     <Quantity(4363.0, 'revolutions_per_minute')>
     """
     return _balance_speed(f0, f1, nu=nu, load=load, pitch_diameter=pitch_diameter, heat=heat_flow)
+
+
+# Kinematic limit, a rule of the trade. Cages: the oil limit of a family is for a pressed steel cage; machined brass and
+# polyamide cages run faster, which is not counted on here; without a cage the elements rub on each other, and handbooks
+# give 0.3 to 0.5 of the speed of the same bearing with one.
+CAGE_FACTORS = {"steel": 1.0, "brass": 1.0, "polyamide": 1.0, "full complement": 0.4}
+# Sliding speed of a bearing's own contact seal of nitrile rubber, m/s. Fitted to the limiting speeds that handbooks
+# print for sealed bearings (from memory: 6205 8500, 6309 4500, 6312 3400, 6220 2400 rpm); range 12 to 15.
+SEAL_SPEED = 13.5
+
+
+@method(source="common-practice", valid={"diameter": (1.0, 1e4), "sliding_speed": (0.1, 60.0)})
+def seal_speed_limit(diameter: Mm, sliding_speed: MPerS) -> Rpm:
+    """Speed at which a contact seal slides as fast as it may.
+
+    diameter [mm]: diameter that the seal rubs on, any shape
+    sliding_speed [m/s]: sliding speed that it stands, broadcasts
+    returns [rpm]
+
+    >>> seal_speed_limit("56 mm", "13.5 m/s").round(0)
+    <Quantity(4604.0, 'revolutions_per_minute')>
+    """
+    return 60_000 / math.pi * sliding_speed / diameter
+
+
+# Moment of inertia of a rolling element over m r^2: solid ball, solid roller.
+ELEMENTS = {"ball": 0.4, "roller": 0.5}
+_INERTIA = np.array(list(ELEMENTS.values()))
+Element = Annotated[NDArray[np.intp], Choice(tuple(ELEMENTS))]
+# Traction coefficient of a lubricated rolling contact before it slides: 0.02 to 0.06 (Harris, from memory).
+TRACTION = 0.03
+
+
+@method(
+    source="own-estimate",
+    valid={
+        "load": (0.0, 1e9),
+        "elements_mass": (1e-3, 1e9),
+        "pitch_diameter": (1.0, 1e4),
+        "traction": (1e-3, 0.3),
+    },
+)
+def greatest_acceleration(
+    *, load: Newton, elements_mass: Gram, pitch_diameter: Mm, traction: Number, element: Element
+) -> RadPerS2:
+    """Angular acceleration of the shaft up to which the rolling elements follow without sliding.
+
+    Pure rolling with a ring at rest speeds up the orbit of an element by alpha/2 and its spin by alpha dm/(2 Dw). With
+    J = k m (Dw/2)^2 the contact with the turning ring has to give the force (1 + k)/8 m dm alpha. An element outside
+    the loaded zone is brought along by the cage, so that the lightest one has its share F/Z of the traction of all:
+    alpha = 8 mu F/((1 + k) M dm), M being the mass of all elements. The normal forces add up to at least F, so this is
+    on the safe side; the drag of stiff grease, which the loaded elements have to overcome too, is left out.
+
+    load [N]: load of the bearing F, the root of Fr^2 + Fa^2, any shape
+    elements_mass [g]: mass of all rolling elements, broadcasts
+    pitch_diameter [mm]: pitch diameter dm, broadcasts
+    traction [1]: traction coefficient mu, broadcasts
+    element: one of `ELEMENTS`, broadcasts
+    returns [rad/s^2]
+
+    >>> balls = {"elements_mass": "176 g", "pitch_diameter": "72.5 mm", "traction": 0.03}
+    >>> greatest_acceleration(load="530 N", **balls, element="ball").round(0)
+    <Quantity(7120.0, 'radian / second ** 2')>
+    """
+    force_per_acceleration = (1 + _INERTIA[element]) / 8 * elements_mass * pitch_diameter * 1e-6  # g mm to kg m
+    limit: Array = traction * load / force_per_acceleration
+    return limit

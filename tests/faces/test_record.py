@@ -18,6 +18,10 @@ GREASE = {"free_volume": "cm^3", "first_fill": "g", "fill_share": "1", "regrease
           "regrease_interval": "h"}  # fmt: skip
 LIFE = {"load_ratio": "1", "rating_life": "h", "contamination_factor": "1", "life_modification_factor": "1",
         "modified_life": "h"}  # fmt: skip
+LOADS = {"radial_load": "N", "axial_load": "N", "equivalent_load": "N", "minimum_load": "N", "needed_preload": "N",
+         "other_radial_load": "N", "induced_thrust": "N"}  # fmt: skip
+SPEEDS = {"lubricant_limit": "rpm", "kinematic_limit": "rpm", "thermal_reference_speed": "rpm",
+          "thermally_safe_speed": "rpm"}  # fmt: skip
 KEYS = ["schema", "title", "verdict", "governing", "limits", "operating", "grease", "life", "remedies", "notes",
         "cautions", "inputs"]  # fmt: skip
 LIMIT = {"name", "state", "use", "demand", "allowed", "unit", "basis", "note"}
@@ -33,7 +37,8 @@ def test_every_key_of_the_schema_is_there(record):
     assert all(set(limit) >= LIMIT for limit in record["limits"])
 
 
-@pytest.mark.parametrize(("group", "units"), [("operating", OPERATING), ("grease", GREASE), ("life", LIFE)])
+@pytest.mark.parametrize(("group", "units"), [("operating", OPERATING), ("grease", GREASE), ("life", LIFE),
+                                             ("loads", LOADS), ("speeds", SPEEDS)])  # fmt: skip
 def test_every_figure_has_its_unit(record, group, units):
     if record[group] is None:
         assert group == "grease"

@@ -142,3 +142,52 @@ def test_a_tapered_bearing_without_contact_angle_is_refused():
 def test_an_unknown_rule_is_refused_with_the_nearest():
     with pytest.raises(ArgumentError, match="nearest: spherical roller"):
         loads.induced_thrust("1 kN", "10 deg", "spherical rollers")
+
+
+@given(forces, forces, ratings, st.integers(0, len(RULES) - 1))
+def test_the_axial_load_that_is_asked_for_gives_the_wanted_equivalent_load(radial, wanted, rating, rule):
+    axial = loads.axial_load_for.plain(
+        radial_load=radial, wanted=wanted, static_rating=rating, f0_load=14.0, contact_angle=ANGLES[rule], rule=rule
+    )
+    if dynamic(radial, 0.0, rule, rating) >= wanted:
+        assert axial == 0
+    elif not loads.TAKES_AXIAL[rule]:
+        assert np.isnan(axial)
+    else:
+        assert dynamic(radial, axial, rule, rating) == pytest.approx(wanted, rel=1e-9)
+
+
+def test_the_axial_load_that_is_asked_for_does_not_depend_on_the_rows_beside():
+    codes = np.arange(len(RULES))
+    given = {"radial_load": 100.0, "wanted": 900.0, "static_rating": 3e4, "f0_load": 13.0}
+    together = loads.axial_load_for.plain(**given, contact_angle=ANGLES, rule=codes)
+    alone = [float(loads.axial_load_for.plain(**given, contact_angle=ANGLES[code], rule=code)) for code in codes]
+    assert together == pytest.approx(alone, rel=1e-14, nan_ok=True)
+
+
+@given(st.floats(-1e5, 1e5), forces, forces)
+def test_opposed_bearings_carry_the_force_of_the_shaft_between_them(external, own, other):
+    here = loads.opposed_axial_load.plain(external=external, own_thrust=own, other_thrust=other)
+    there = loads.opposed_axial_load.plain(external=-external, own_thrust=other, other_thrust=own)
+    assert here - there == pytest.approx(external, abs=1e-6)
+    assert here >= own
+    assert there >= other
+    # no preload: one of the two carries no more than the thrust of its own radial load
+    assert here == own or there == other
+
+
+# Rows of the handbook table of opposed bearings: Ka towards this one, thrust of this and the other, Fa here and there.
+@pytest.mark.parametrize(
+    ("external", "own", "other", "here", "there"),
+    [
+        (0, 500, 800, 800, 800),
+        (0, 800, 500, 800, 800),
+        (1000, 500, 800, 1800, 800),
+        (100, 800, 500, 800, 700),
+        (-100, 500, 800, 700, 800),
+        (-1000, 500, 800, 500, 1500),
+    ],
+)
+def test_axial_loads_of_opposed_bearings_by_the_handbook_table(external, own, other, here, there):
+    assert loads.opposed_axial_load.plain(external=external, own_thrust=own, other_thrust=other) == here
+    assert loads.opposed_axial_load.plain(external=-external, own_thrust=other, other_thrust=own) == there

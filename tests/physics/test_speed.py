@@ -63,3 +63,30 @@ def test_positions_in_one_call_use_their_own_reference():
     assert areas == pytest.approx([np.pi * 17 * 145, np.pi / 2 * (85**2 - 60**2)])
     flows = speed.seat_heat_flow.plain(areas, 50.0, np.array([0, 1]))
     assert flows == pytest.approx([0.016 * areas[0], 0.020 * areas[1]])
+
+
+# Limiting speeds that handbooks print for bearings with two rubbing seals (from memory): bore, outside, rpm.
+@pytest.mark.parametrize(
+    ("bore", "outside", "printed"), [(25, 52, 8500), (45, 100, 4500), (60, 130, 3400), (100, 180, 2400)]
+)
+def test_the_seal_rule_is_near_the_limiting_speeds_of_handbooks(bore, outside, printed):
+    rubbing = bore + 0.2 * (outside - bore)
+    assert speed.seal_speed_limit.plain(rubbing, speed.SEAL_SPEED) == pytest.approx(printed, rel=0.1)
+
+
+@pytest.mark.parametrize(("element", "inertia"), [("ball", 2 / 5), ("roller", 1 / 2)])
+def test_the_greatest_acceleration_is_what_the_forces_on_one_element_allow(element, inertia):
+    """By hand, for one of 12 elements of 8 g and 12 mm at a pitch diameter of 60 mm, each loaded with 50 N.
+
+    Force: the two contacts push with T1 + T2 = m r alpha/2. Moment: (T1 - T2) Dw/2 = J alpha dm/(2 Dw). T1 is that of
+    the driving ring and may be mu Q.
+    """
+    mass, diameter, pitch, alpha, q, mu = 0.008, 0.012, 0.060, 1000.0, 50.0, 0.03
+    total = mass * pitch / 2 * alpha / 2
+    difference = 2 / diameter * inertia * mass * (diameter / 2) ** 2 * alpha * pitch / (2 * diameter)
+    first = (total + difference) / 2
+    by_hand = alpha * mu * q / first
+    ours = speed.greatest_acceleration(
+        load="600 N", elements_mass="96 g", pitch_diameter="60 mm", traction=mu, element=element
+    )
+    assert ours.to("rad/s^2").magnitude == pytest.approx(by_hand, rel=1e-12)

@@ -69,6 +69,14 @@ def test_bad_usage_is_2_without_a_traceback(arguments):
     assert done.stderr
 
 
+def test_a_designation_that_is_not_in_the_tables_is_2_with_the_nearest():
+    done = run("bearings", "22218", "22291")
+    assert done.returncode == 2
+    assert "22218 spherical roller" in done.stdout
+    assert done.stderr.startswith("lubecheck: designation: given")
+    assert "nearest: 222" in done.stderr
+
+
 def test_standard_input_is_read():
     by_name = run("check", "examples/new_motor.toml", "--json")
     by_stream = run("check", "-", "--json", stdin=(EXAMPLES / "new_motor.toml").read_text(encoding="utf-8"))
@@ -77,7 +85,7 @@ def test_standard_input_is_read():
 
 def test_version_and_help_with_an_example():
     assert run("--version").stdout.startswith("lubecheck 0.")
-    for arguments in (("--help",), ("check", "--help")):
+    for arguments in (("--help",), ("check", "--help"), ("bearings", "--help")):
         done = run(*arguments)
         assert done.returncode == 0
         assert "Example" in done.stdout
