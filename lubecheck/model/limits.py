@@ -129,7 +129,7 @@ def room_for_grease(points: Points) -> Array:
 def regrease(points: Points) -> Use:
     """Grease given at each regreasing against a band round the side rule, never more than there is room for."""
     p = points
-    dose = grease_amount.regrease_quantity.plain(outside=p.outside, width=p.width)
+    dose = grease_amount.regrease_quantity_by_rule.plain(outside=p.outside, width=p.width, rule=p.regrease_rule)
     low, high = REGREASE_RANGE
     upper = np.minimum(high * dose, room_for_grease(p))
     applies = (p.is_grease > 0) & ~np.isnan(p.regrease_mass) & (p.is_sealed == 0)
