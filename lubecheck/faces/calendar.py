@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import datetime
 import hashlib
+from collections import Counter
 from collections.abc import Sequence
 
 from lubecheck.model.schedule import PlanRow
@@ -14,18 +15,22 @@ _LINE = 75  # octets, RFC 5545 3.1
 def to_ics(rows: Sequence[PlanRow], start: datetime.date) -> bytes:
     """Return a plan as a calendar: one repeated all-day event a position that has a date."""
     lines = ["BEGIN:VCALENDAR", "VERSION:2.0", "PRODID:-//lubecheck//plan//EN", "CALSCALE:GREGORIAN"]
-    for number, row in enumerate(rows):
+    seen: Counter[str] = Counter()
+    for row in rows:
         if row.next_due is not None and row.planned_days is not None:
-            lines += _event(number, row, start)
+            # The same position keeps its name from plan to plan, so that a calendar renews its event and adds none.
+            key = f"{row.position}\n{row.action}"
+            lines += _event(f"{key}\n{seen[key]}", row, start)
+            seen[key] += 1
     lines.append("END:VCALENDAR")
     return "".join(f"{_folded(line)}\r\n" for line in lines).encode("utf-8")
 
 
-def _event(number: int, row: PlanRow, start: datetime.date) -> list[str]:
+def _event(key: str, row: PlanRow, start: datetime.date) -> list[str]:
     days, due = row.planned_days or 1, row.next_due or start
     weeks, rest = divmod(days, 7)
     rule = f"FREQ=WEEKLY;INTERVAL={weeks}" if rest == 0 else f"FREQ=DAILY;INTERVAL={days}"
-    name = hashlib.sha256(f"{number}\n{row.position}\n{row.action}".encode()).hexdigest()[:24]
+    name = hashlib.sha256(key.encode()).hexdigest()[:24]
     said = (f"{row.lubricant}: {_amount(row)}", *row.steps, *row.notes, *row.cautions)
     return [
         "BEGIN:VEVENT",

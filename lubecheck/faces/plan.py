@@ -125,8 +125,7 @@ def to_markdown(rows: Sequence[PlanRow], start: datetime.date) -> bytes:
     lines = [f"# Lubrication plan from {start.isoformat()}", ""]
     lines.append("| " + " | ".join(_SHOWN.values()) + " |")
     lines.append("|" + " --- |" * len(_SHOWN))
-    for row in rows:
-        lines.append("| " + " | ".join(_escaped(_short(getattr(row, name))) for name in _SHOWN) + " |")
+    lines.extend("| " + " | ".join(_escaped(_short(getattr(row, name))) for name in _SHOWN) + " |" for row in rows)
     for row in rows:
         lines += ["", f"## {_escaped(row.position)}", ""]
         lines.extend(f"{i}. {_escaped(step)}" for i, step in enumerate(row.steps, start=1))

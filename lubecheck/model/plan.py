@@ -83,6 +83,9 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
     if case.is_grease and interval is not None and interval < CONTINUOUS_BELOW_DAYS * hours_per_day:
         feeding = feed(case)[1]
     kept = case.grease if case.is_grease else case.oil
+    # An interval that the user plans by the calendar has the standstills in it already.
+    is_by_calendar = kept.interval is not None and kept.interval.is_calendar and "interval" not in proposed
+    shutdown = 0.0 if is_by_calendar else kept.shutdown or 0.0
     if case.is_grease and points.is_sealed[0]:
         regrease = interval = None
         feeding = None
@@ -102,7 +105,7 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
         housing_fill_g=housing_fill(case, outcome)[1],
         feed_g_per_h=feeding,
         oil_change_cm3=None if case.is_grease else case.oil.volume,
-        calendar_days=calendar_days_of(interval, hours_per_day, kept.shutdown or 0.0),
+        calendar_days=calendar_days_of(interval, hours_per_day, shutdown),
         last_done=kept.last_done,
         hours_run=kept.hours_run,
     )

@@ -502,14 +502,20 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
         fill = reading["[grease] fill"]
     else:
         fill = volume_of(plan.fill, volume, grams_per_cm3) / volume
-    fill = fill_found(plan, fill, volume, grams_per_cm3)
+    room = volume if void is None else void
+    housing_fill = PROPOSED_HOUSING_FILL if plan.housing_fill is None else plan.housing_fill
+    if plan.given is not None:
+        # What the bearing has no room for went into the space beside it.
+        found = fill_found(plan, fill, volume, grams_per_cm3)
+        fill, over = min(found, 1.0), max(0.0, found - 1.0) * volume
+        housing_fill = min(1.0, housing_fill + (over / room if room else 0.0))
     relief = case.housing.relief or reading.get("[housing] relief")
     interval = case.grease.interval if case.is_grease else case.oil.interval
     mass = math.nan if plan.regrease_amount is None else volume_of(plan.regrease_amount, volume, grams_per_cm3)
     return {
         "fill": fill if case.is_grease else math.nan,
-        "void": volume if void is None else void,
-        "housing_fill": PROPOSED_HOUSING_FILL if plan.housing_fill is None else plan.housing_fill,
+        "void": room,
+        "housing_fill": housing_fill,
         "is_open": float(relief == "open"),
         "proposed_fill": float(proposed) if case.is_grease else math.nan,
         "is_proposed_fill": float(plan.fill is None and plan.given is None),
@@ -525,8 +531,8 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
 def fill_found(plan: GreasePlan, before: float, free_volume: float, grams_per_cm3: float) -> float:
     """Return the fill that is found after what was given: what was there, the regreasings since, and the last dose.
 
-    All that was given is taken to be there still; where a way out is open, or room beside the bearing, the balance of
-    churning lets it clear.
+    A share of the free volume, above 1 where more was given than it holds: all that was given is taken to be there
+    still, in the bearing or beside it.
     """
     if plan.given is None:
         return before
