@@ -128,7 +128,7 @@ def _classical_note(outcome: Outcome, row: int, *, is_sealed: bool) -> str:
         return "load or temperature outside its range"
     raw = float(grease_life.classical_interval.plain(p.speed[row], p.bore[row], p.interval_family[row]))
     many = " (linear damage over all states)" if (p.case == 0).sum() > 1 else ""
-    return f"{raw:.0f} h before the factors{many}; published motor tables lie within 15 % of it"
+    return f"{raw:.0f} h before the factors{many}; published motor tables give 0.9 to 2.3 times that"
 
 
 def _booser_note(outcome: Outcome, row: int, *, is_sealed: bool) -> str:

@@ -437,7 +437,7 @@ def _grease_failed(case: Case) -> float:
     wanted = case.limits.grease_reliability
     if wanted is not None:
         return 1.0 - wanted
-    return grease_life.L01 if case.bearing.seal == "open" else grease_life.L10
+    return grease_life.L10 if case.bearing.sealed_sides == 2 else grease_life.L01
 
 
 def _hours_per_day(case: Case, reading: Mapping[str, Any]) -> float:

@@ -298,11 +298,11 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     if case.is_grease and around.air_flow is None:
         said.append(Assumed("[surroundings] air_flow", "no air is drawn through the bearing", "common-practice"))
     if case.is_grease and case.limits.grease_reliability is None:
-        share = "99 %, open bearings" if case.bearing.seal == "open" else "90 %, closed bearings"
+        share = "90 %, closed bearings" if case.bearing.sealed_sides == 2 else "99 %, bearings that are regreased"
         said.append(Assumed("[limits] grease_reliability", share, "grease-handbooks"))
-    if case.is_grease and case.bearing.seal == "open" and case.grease.cartridge is None:
+    if case.is_grease and case.bearing.sealed_sides != 2 and case.grease.cartridge is None:
         said.append(Assumed("[grease] cartridge", f"{CARTRIDGE_G:g} g", "common-practice"))
-    if case.is_grease and case.bearing.seal == "open" and case.grease.rule is None:
+    if case.is_grease and case.bearing.sealed_sides != 2 and case.grease.rule is None:
         said.append(Assumed("[grease] rule", "side: the grease goes in beside the bearing", "neale:A20.5"))
     if not case.is_grease and case.oil.volume is None and case.oil.supply != "mist":
         said.append(Assumed("[oil] volume", "not known, so no change quantity", "common-practice"))
