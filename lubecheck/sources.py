@@ -73,6 +73,8 @@ SOURCES: Mapping[str, Source] = {
     "bath-handbooks": Source(
         "oil change of baths with temperature, handbooks (12 months at 50 degC, 3 at 100 degC)", "seen"
     ),
+    "whitby": Source("Whitby, Tribology & Lubrication Technology, November 2009, oil ageing by temperature", "seen"),
+    "temperature-notes": Source("field notes on bearing temperature after regreasing, 2016", "seen"),
     "stefan-boltzmann": Source("Stefan-Boltzmann law, constant of CODATA 2018", "checked"),
     "reliability-handbooks": Source(
         "correction factors of the grease interval for dust, moisture, vibration and attitude, reliability handbooks",

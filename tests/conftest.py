@@ -70,20 +70,25 @@ def with_key(text: str, table: str, key: str, value: str | None) -> str:
     return text.replace(f"{head}\n", f"{head}\n{line}")
 
 
+REPORT = pytest.StashKey[list[str]]()
+
+
+@pytest.fixture
+def report(request: pytest.FixtureRequest) -> list[str]:
+    """Lines that the tests' report closes with, whether or not a test failed."""
+    return request.config.stash.setdefault(REPORT, [])
+
+
+def pytest_terminal_summary(terminalreporter: pytest.TerminalReporter, config: pytest.Config) -> None:
+    """Print the tables that tests compare with published ones."""
+    lines = config.stash.get(REPORT, [])
+    if lines:
+        terminalreporter.section("beside published tables")
+        for line in lines:
+            terminalreporter.write_line(line)
+
+
 @pytest.fixture
 def base() -> str:
     """The text of a whole and good case."""
     return BASE
-
-
-def pytest_terminal_summary(terminalreporter):
-    """Report how far the estimated ratings are off, family by family: tests record it as the property "worst"."""
-    lines = [
-        f"{report.nodeid.partition('[')[2].rstrip(']')}: {value}"
-        for report in terminalreporter.stats.get("passed", ())
-        for name, value in getattr(report, "user_properties", ())
-        if name == "worst"
-    ]
-    if lines:
-        terminalreporter.section("worst deviation of estimated from published ratings", sep="-")
-        terminalreporter.write_line("\n".join(dict.fromkeys(lines)))

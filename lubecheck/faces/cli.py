@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
+from datetime import datetime
 from enum import StrEnum
+from pathlib import Path
 from typing import Annotated
 
 import typer
@@ -23,6 +25,14 @@ app = typer.Typer(
     pretty_exceptions_enable=False,
     context_settings={"help_option_names": ["-h", "--help"]},
 )
+
+
+class Route(StrEnum):
+    """Rhythms of a lubrication route."""
+
+    WEEKLY = "weekly"
+    MONTHLY = "monthly"
+    QUARTERLY = "quarterly"
 
 
 class FailOn(StrEnum):
@@ -78,6 +88,64 @@ def check(
 
         print_result(result, console(), units.value)
     raise typer.Exit(exit_code(result.verdict, fail_on.value))
+
+
+@app.command(
+    epilog="Example: lubecheck plan examples/new_motor.toml examples/slow_roller.toml --route monthly --to plan.xlsx. "
+    "Exit codes: as check, for the worst position; nothing is written when a case is refused."
+)
+def plan(
+    cases: Annotated[list[str], typer.Argument(metavar="CASE...", help="Case files in TOML; one may be - for stdin.")],
+    to: Annotated[
+        Path | None, typer.Option("--to", help="Write the plan: a name that ends in .csv, .xlsx, .ics or .md.")
+    ] = None,
+    json: Annotated[bool, typer.Option("--json", help="Print the plan as JSON.")] = False,
+    start: Annotated[
+        datetime | None, typer.Option("--from", formats=["%Y-%m-%d"], help="Day the plan begins; today if not given.")
+    ] = None,
+    route: Annotated[
+        Route | None, typer.Option(help="Fit intervals to the rhythm of a route: rounded down, never up.")
+    ] = None,
+    stagger: Annotated[bool, typer.Option("--stagger", help="Spread first due dates, by moving some earlier.")] = False,
+    units: UnitsOption = Units.SI,
+    fail_on: Annotated[FailOn, typer.Option(help="The mildest state that gives exit code 1.")] = FailOn.BEYOND,
+    lubricants: LubricantsOption = None,
+) -> None:
+    """Make the maintenance plan of one or many positions: grease, amount, strokes, interval, next due, steps."""
+    from datetime import date
+
+    from lubecheck.errors import CaseError, Fault, InputError
+    from lubecheck.faces import plan as face
+    from lubecheck.model.check import check as judge
+    from lubecheck.model.reader import load_case
+    from lubecheck.model.schedule import schedule
+
+    if to is not None:
+        face.maker(to)  # a bad name is refused before anything is worked out
+    faults: list[Fault] = []
+    read = []
+    own = own_lubricants(lubricants)
+    for case in cases:
+        try:
+            read.append(load_case(case, own=own))
+        except InputError as refused:
+            faults += refused.faults
+    if faults:
+        raise CaseError(faults)
+    results = [judge(case) for case in read]
+    first = date.today() if start is None else start.date()
+    rows = schedule(results, first, None if route is None else route.value, is_staggered=stagger)
+    if to is not None:
+        face.write(rows, to, first)
+        typer.echo(f"lubecheck: wrote {len(rows)} lines to {to}", err=True)
+    if json:
+        typer.echo(face.to_json(rows))
+    elif to is None:
+        face.print_plan(rows, console(), units.value)
+    raise typer.Exit(max((exit_code(result.verdict, fail_on.value) for result in results), key=_GRAVITY.index))
+
+
+_GRAVITY = (WITHIN_OR_NEAR, UNKNOWN, BEYOND)  # beyond is the worst that a plan may hold
 
 
 app.command(epilog=FLUIDS_EPILOG)(fluids)

@@ -8,6 +8,7 @@ from __future__ import annotations
 
 import dataclasses
 import json
+import math
 from typing import Any
 
 from lubecheck.model.result import Figures, Result
@@ -27,6 +28,10 @@ def figures(group: Figures | None) -> dict[str, Any] | None:
     return record
 
 
+def _finite(value: float) -> float | None:
+    return value if math.isfinite(value) else None
+
+
 def of_result(result: Result) -> dict[str, Any]:
     """Return a result as plain data by the schema."""
     return {
@@ -41,6 +46,12 @@ def of_result(result: Result) -> dict[str, Any]:
         "life": figures(result.life),
         "loads": figures(result.loads),
         "speeds": figures(result.speeds),
+        "interval_lines": [
+            dataclasses.asdict(line) | {"factors": {name: _finite(factor) for name, factor in line.factors}}
+            for line in result.interval_lines
+        ],
+        "interval_spread": result.interval_spread,
+        "amounts": figures(result.amounts),
         "plan": dataclasses.asdict(result.plan),
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
         "notes": list(result.notes),

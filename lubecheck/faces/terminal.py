@@ -27,6 +27,7 @@ def print_result(result: Result, console: Console, system: str = "si") -> None:
     _heading(result, console)
     _limits(result, console, system)
     _operating(result, console, system)
+    _interval_lines(result, console)
     _plan(result, console, system)
     _bullets("Notes", result.notes, console)
     _bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
@@ -144,6 +145,24 @@ def _operating(result: Result, console: Console, system: str) -> None:
                 Text(band),
             )
     console.print(table)
+
+
+def _interval_lines(result: Result, console: Console) -> None:
+    """Print the lines of lubricant life side by side, whether or not they govern."""
+    if not result.interval_lines:
+        return
+    console.print(Text("\nInterval, line by line", style="bold"))
+    table = Table(box=None, pad_edge=False, padding=(0, 2, 0, 2), show_header=False)
+    for justify in ("left", "right", "left", "left"):
+        table.add_column(justify=justify, no_wrap=justify == "right")
+    for line in result.interval_lines:
+        use = "governs" if line.governs else "applies" if line.applies else "does not apply"
+        hours = "not read" if line.hours is None else f"{amount(line.hours, 'h', 'si')} h"
+        factors = " x ".join(f"{name} {number(factor)}" for name, factor in line.factors)
+        told = "; ".join(part for part in (factors if line.applies else "", line.note) if part)
+        table.add_row(Text(line.name), Text(hours), Text(use), Text(told))
+    console.print(table)
+    console.print(Padding(Text(result.interval_spread), (0, 0, 0, 2)))
 
 
 def _plan(result: Result, console: Console, system: str) -> None:

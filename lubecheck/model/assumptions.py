@@ -86,6 +86,14 @@ def _is_worse_in_a_bath(case: Case) -> bool:
     return not case.is_grease and (case.bearing.bore + case.bearing.outside) / 2 > DIRTIEST_CODE_FROM
 
 
+def _no_grease_hours(case: Case) -> bool:
+    return case.is_grease and case.grease.hours_per_day is None
+
+
+def _plans_running_hours(case: Case) -> bool:
+    return case.grease.interval is not None and not case.grease.interval.is_calendar
+
+
 FACTS: tuple[Fact, ...] = (
     Fact("surroundings", "draught", 0.0, 0.0, "still air", "common-practice", THERMAL,
          lambda case: case.surroundings.draught is None and case.housing.conductance is None),
@@ -93,7 +101,7 @@ FACTS: tuple[Fact, ...] = (
     Fact("surroundings", "dust", "normal", "very dusty", "normal", "common-practice", ("interval",),
          _missing("surroundings", "dust", grease=True)),
     Fact("surroundings", "water", "dry", "wet", "dry", "common-practice", ("interval",),
-         _missing("surroundings", "water", grease=True)),
+         lambda case: case.surroundings.water is None and (case.is_grease or case.oil.supply != "mist")),
     Fact("surroundings", "vibration", "smooth", "severe", "smooth", "common-practice", ("interval", "static_load"),
          _missing("surroundings", "vibration")),
     Fact("surroundings", "orientation", "horizontal", "vertical", "horizontal", "common-practice", THERMAL,
@@ -107,7 +115,10 @@ FACTS: tuple[Fact, ...] = (
     Fact("grease", "fill", 0.5, 1.0, "30 to 100 %", "common-practice", ("fill", *THERMAL),
          lambda case: case.is_grease and case.grease.fill == "unknown"),
     Fact("grease", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
-         _missing("grease", "hours_per_day", grease=True)),
+         lambda case: _no_grease_hours(case) and not _plans_running_hours(case)),
+    # Grease ages at rest too: an interval in running hours is worst for a machine that hardly runs.
+    Fact("grease", "hours_per_day", 24.0, 0.1, "24 h", "common-practice", ("interval",),
+         lambda case: _no_grease_hours(case) and _plans_running_hours(case)),
     Fact("oil", "supply", "bath", "bath", "bath", "common-practice", THERMAL, _missing("oil", "supply", grease=False)),
     Fact("oil", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
          _missing("oil", "hours_per_day", grease=False)),

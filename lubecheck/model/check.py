@@ -14,7 +14,8 @@ from typing import Any
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import limits, side_figures, wording
+from lubecheck.model import interval_lines, limits, side_figures, wording
+from lubecheck.model.amounts import amounts
 from lubecheck.model.assumptions import Fact, missing, uncertain
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
@@ -98,13 +99,14 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
     operating = [_operating(variants, row) for row in range(variants.rows)]
     hottest = int(outcome.hottest[0])
     plan = plan_line(case, outcome)
+    lines = interval_lines.lines(case, outcome)
     return Result(
         title=case.title,
         verdict=verdict,
         governing=_governing(judged, verdict),
         limits=judged,
         operating=operating[hottest],
-        duty=tuple(operating),
+        duty=_hottest_seasons(operating, len(case.duty)),
         grease=_grease(outcome, plan) if case.is_grease else None,
         life=_life(variants),
         loads=side_figures.loads_at(case, outcome),
@@ -119,6 +121,9 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
         lubricant=wording.lubricant(case.lubricant, case.analysis),
         converged_in=outcome.state.steps,
         residual=_finite(outcome.state.residual[hottest]),
+        amounts=amounts(case, outcome, plan),
+        interval_lines=lines,
+        interval_spread=interval_lines.spread(lines),
     )
 
 
@@ -191,6 +196,16 @@ def _operating(variants: Variants, row: int) -> Operating:
     }
     made: Operating = Operating.of({name: variants.row_band(array, row) for name, array in arrays.items()})
     return made
+
+
+def _hottest_seasons(operating: Sequence[Operating], duties: int) -> tuple[Operating, ...]:
+    """Return each duty point in the season in which it runs hottest; rows are season by season."""
+
+    def heat(point: Operating) -> float:
+        value = point.figures["temperature"].value
+        return float("inf") if value is None else value
+
+    return tuple(max(operating[duty::duties], key=heat) for duty in range(duties))
 
 
 def _grease(outcome: Outcome, plan: PlanLine) -> Grease:

@@ -16,7 +16,7 @@ from lubecheck.data import families, lubricants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.cleanliness import setting_of
 from lubecheck.data.oil_analysis import OilAnalysis
-from lubecheck.physics import fatigue, grease_life
+from lubecheck.physics import fatigue, grease_amount, grease_corrections, grease_life
 from lubecheck.units import KINDS
 
 SUPPLIES = ("bath", "circulating", "mist")
@@ -37,11 +37,18 @@ class Entry:
     meaning: str
     example: str
     is_need: bool
+    form: str = ""  # "date", "months" or "strokes" where the value is read in a way of its own
 
     @property
     def expected(self) -> str:
         """What the key takes, in words for a message."""
+        if self.form == "date":
+            return f"a date as year-month-day, such as {self.example}"
+        if self.form == "months":
+            return f"twelve temperatures, January first, {self.low:g} to {self.high:g} degC, such as {self.example}"
         parts = []
+        if self.form == "strokes":
+            parts.append(f"a count of strokes such as {self.example}, or")
         if len(self.kinds) > 1:
             units = " or ".join(KINDS[name].unit for name in self.kinds if not KINDS[name].is_bare)
             share = ", or a share of at most 100 %" if "share" in self.kinds else ""
@@ -70,9 +77,10 @@ def _entry(
     meaning: str,
     example: str = "",
     need: bool = False,
+    form: str = "",
 ) -> Any:
     kinds = (kinds,) if isinstance(kinds, str) else kinds
-    entry = Entry(role, kinds, low, high, words, meaning, example, need)
+    entry = Entry(role, kinds, low, high, words, meaning, example, need, form)
     if need:
         return dataclasses.field(metadata={"entry": entry})
     return dataclasses.field(default=None, metadata={"entry": entry})
@@ -323,8 +331,37 @@ class Surroundings:
     )
     dust: str | None = _entry("fact", words=_words(grease_life.DUST), meaning="dust at the position")
     water: str | None = _entry("fact", words=_words(grease_life.WATER), meaning="water at the position")
-    vibration: str | None = _entry("fact", words=_words(grease_life.VIBRATION), meaning="vibration of the machine")
+    vibration: str | float | None = _entry(
+        "fact",
+        "velocity",
+        0,
+        1,
+        words=_words(grease_life.VIBRATION),
+        meaning="vibration of the machine: a class, or the peak velocity on the bearing housing",
+        example='"7 mm/s"',
+    )
     orientation: str | None = _entry("fact", words=_words(grease_life.ORIENTATION), meaning="how the shaft lies")
+    turning_ring: str | None = _entry(
+        "fact", words=_words(grease_corrections.TURNING_RING), meaning="which ring of the bearing turns"
+    )
+    air_flow: str | None = _entry(
+        "fact", words=_words(grease_corrections.AIR_FLOW), meaning="air that passes through the bearing"
+    )
+    months: tuple[float, ...] | None = _entry(
+        "fact",
+        "temperature",
+        -60,
+        150,
+        form="months",
+        meaning="mean ambient of the twelve months, January first; goes before `ambient`",
+        example='["-3 degC", "-1 degC", ...]',
+    )
+    ambient_lowest: float | None = _entry(
+        "fact", "temperature", -60, 150, meaning="mean ambient of the coldest month", example='"-3 degC"'
+    )
+    ambient_highest: float | None = _entry(
+        "fact", "temperature", -60, 150, meaning="mean ambient of the warmest month", example='"31 degC"'
+    )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -391,6 +428,34 @@ class GreasePlan:
         example='"1.2 g"',
         meaning="what one stroke of your grease gun gives, weighed",
     )
+    rule: str | None = _entry(
+        "decision",
+        words=tuple(grease_amount.REGREASE_GRAMS),
+        meaning="rule of the regrease amount: from the side, through the ring's groove, or a weekly or monthly rhythm",
+    )
+    cartridge: Amount | None = _entry(
+        "fact", ("mass", "volume"), 10, 50_000, meaning="what a cartridge holds", example='"400 g"'
+    )
+    shutdown: float | None = _entry(
+        "fact", "time", 0, 8000, meaning="standstill of the plant in a year", example='"3 week"'
+    )
+    last_done: str | None = _entry("fact", form="date", meaning="day of the last regreasing", example='"2026-05-04"')
+    hours_run: float | None = _entry(
+        "fact", "time", 0, 1e6, meaning="hour meter: running hours since the last regreasing", example='"1200 h"'
+    )
+    given: Amount | None = _entry(
+        "fact",
+        ("mass", "volume"),
+        0,
+        1e7,
+        form="strokes",
+        meaning="grease that was given on top of `fill`: strokes, mass or volume",
+        example='"12 strokes"',
+    )
+    given_on: str | None = _entry("fact", form="date", meaning="day that it was given", example='"2026-11-27"')
+    regreasings: float | None = _entry(
+        "fact", "number", 0, 10_000, meaning="regreasings since the first fill, before `given`", example="3"
+    )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -414,6 +479,16 @@ class OilPlan:
         "decision", "time", 1, 400_000, meaning="time between oil changes", example='"6 month"'
     )
     hours_per_day: float | None = _entry("fact", "time", 0.1, 24, meaning="running time in a day", example='"16 h"')
+    volume: float | None = _entry(
+        "fact", "volume", 1, 1e8, meaning="oil in the bath or circuit: the change quantity", example='"1.2 l"'
+    )
+    last_done: str | None = _entry("fact", form="date", meaning="day of the last oil change", example='"2026-05-04"')
+    hours_run: float | None = _entry(
+        "fact", "time", 0, 1e6, meaning="hour meter: running hours since the last oil change", example='"1200 h"'
+    )
+    shutdown: float | None = _entry(
+        "fact", "time", 0, 8000, meaning="standstill of the plant in a year", example='"3 week"'
+    )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -432,6 +507,14 @@ class Requirements:
     )
     reliability: float | None = _entry(
         "requirement", "share", 0.9, 0.9995, meaning="reliability of that life", example='"90 %"'
+    )
+    grease_reliability: float | None = _entry(
+        "requirement",
+        "share",
+        0.5,
+        0.999,
+        example='"99 %"',
+        meaning="share of bearings whose grease still serves at the end of its interval or life",
     )
     highest_temperature: float | None = _entry(
         "requirement", "temperature", 20, 350, example='"95 degC"', meaning="highest bearing temperature"

@@ -8,12 +8,12 @@ from dataclasses import dataclass
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import limits
+from lubecheck.model import intervals, limits
 from lubecheck.model.equilibrium import Air, Equilibrium, solve
 from lubecheck.model.limits import Judged
 from lubecheck.model.points import BEYOND_SETTINGS, Codes, Flags, Points
-from lubecheck.physics import fatigue, film, grease_amount, grease_life, loads
-from lubecheck.units import DAY_H, Array
+from lubecheck.physics import fatigue, film, grease_amount, loads
+from lubecheck.units import Array
 
 PROPOSED_SHARE = 0.8  # of the allowed interval that is proposed: leaves a fifth for what varies, so that it is `within`
 
@@ -34,10 +34,11 @@ class Outcome:
     hottest: Codes  # row of the operating point
     rating_life: Array
     modified_life: Array
+    lines: intervals.Lines
     allowed_interval: Array  # running hours, before any plan
     interval: Array  # planned, or proposed
     proposed_interval: Array
-    proposed_regrease: Array  # g, by the side rule
+    proposed_regrease: Array  # g, by the rule of the case
     reliability_factor: Array  # a1
     judged: Mapping[str, Judged]
     verdict: Codes  # position in limits.STATES
@@ -59,7 +60,8 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         e_c, factor = _life_factor(p, state, kappa)
         load_ratio = state.equivalent_load / p.dynamic_rating
         rating, modified = _lives(p, state, load_ratio, factor)
-        allowed = _allowed_interval(p, state, load_ratio)
+        lines = intervals.of(p, state.temperature, load_ratio)
+        allowed = lines.allowed
         planned = p.interval[p.starts]
         is_grease = p.is_grease[p.starts] > 0
         is_sealed = is_grease & (p.is_sealed[p.starts] > 0)
@@ -68,7 +70,8 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         wanted = np.where(is_sealed, p.life_target[p.starts], proposed)
         interval = np.where(np.isnan(planned), wanted, planned)
         allowed = np.where(is_sealed & ~np.isnan(planned), 0.0, allowed)
-        has_interval = is_grease | (p.is_bath[p.starts] > 0) | ~np.isnan(planned)
+        is_oil_kept = (p.is_bath[p.starts] > 0) | (p.is_circulating[p.starts] > 0)
+        has_interval = is_grease | is_oil_kept | ~np.isnan(planned)
         everywhere = np.ones(p.cases, dtype=bool)
         judged = {
             "film": limits.reduce(p, limits.film(p, kappa)),
@@ -96,10 +99,13 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         hottest=_hottest(p, state),
         rating_life=rating,
         modified_life=modified,
+        lines=lines,
         allowed_interval=allowed,
         interval=interval,
         proposed_interval=proposed,
-        proposed_regrease=grease_amount.regrease_quantity.plain(outside=p.outside[p.starts], width=p.width[p.starts]),
+        proposed_regrease=grease_amount.regrease_quantity_by_rule.plain(
+            outside=p.outside[p.starts], width=p.width[p.starts], rule=p.regrease_rule[p.starts]
+        ),
         reliability_factor=fatigue.reliability_factor.plain(p.reliability[p.starts]),
         judged=judged,
         verdict=verdict,
@@ -134,7 +140,7 @@ def _lives(points: Points, state: Equilibrium, load_ratio: Array, factor: Array)
     a1 = fatigue.reliability_factor.plain(p.reliability)
     modified = fatigue.modified_life.plain(basic_life=hours, reliability_factor=a1, life_modification_factor=factor)
     modified = np.where((load_ratio <= fatigue.GREATEST_LOAD_RATIO) & takes_loads(p), modified, np.nan)
-    return _damage_sum(p, hours), _damage_sum(p, modified)
+    return intervals.damage_sum(p, hours), intervals.damage_sum(p, modified)
 
 
 def takes_loads(points: Points) -> Flags:
@@ -153,57 +159,10 @@ def parts_rows(points: Points) -> Flags:
     return flags
 
 
-def _damage_sum(points: Points, hours: Array) -> Array:
-    """Return the time in which the shares of damage of a position's rows add up to one."""
-    rate: Array = np.add.reduceat(points.share / hours, points.starts)
-    whole: Array = np.add.reduceat(points.share, points.starts)
-    return whole / rate
-
-
-def _allowed_interval(points: Points, state: Equilibrium, load_ratio: Array) -> Array:
-    """Return the running hours after which the lubricant of every position has to be renewed.
-
-    Open grease bearings by the classical line, sealed ones by the life of their grease, baths by oil ageing; NaN where
-    no line covers the row.
-    """
-    p = points
-    open_bearing = _classical(p, state, load_ratio)
-    sealed = _sealed_life(state.temperature)
-    bath = grease_life.bath_change_interval.plain(state.temperature) * p.hours_per_day / DAY_H
-    bath = np.where(grease_life.bath_change_interval.outside(temperature=state.temperature), np.nan, bath)
-    is_sealed, is_grease = p.is_sealed > 0, p.is_grease > 0
-    hours = np.select([is_grease & is_sealed, is_grease, p.is_bath > 0], [sealed, open_bearing, bath], np.nan)
-    allowed = _damage_sum(p, hours)
-    # Grease that is renewed has a calendar ceiling; a sealed bearing keeps its own for life.
-    return np.where(is_sealed[p.starts], allowed, np.minimum(allowed, p.ceiling[p.starts]))
-
-
-def _classical(points: Points, state: Equilibrium, load_ratio: Array) -> Array:
-    p = points
-    hours = grease_life.classical_interval.plain(p.speed, p.bore, p.interval_family)
-    heat = grease_life.temperature_halving.plain(
-        temperature=state.temperature, reference=p.life_reference, step=grease_life.HALVING_STEP
-    )
-    is_outside = grease_life.classical_share.plain(p.speed, p.bore) > grease_life.CLASSICAL_GREATEST_SHARE
-    is_outside |= grease_life.load_factor.outside(load_ratio=load_ratio)
-    hours = hours * heat * p.interval_factor * grease_life.load_factor.plain(load_ratio)
-    return np.where(is_outside, np.nan, hours)
-
-
-def _sealed_life(temperature: Array) -> Array:
-    """L10 of the grease in a bearing that is never regreased; below the range of the equation its cool end stands."""
-    coolest, hottest = grease_life.booser_median_life.valid["temperature"]
-    median = grease_life.booser_median_life.plain(np.maximum(temperature, coolest), 0.0)
-    to_l10 = grease_life.weibull_scale.plain(
-        known=grease_life.L50, wanted=grease_life.L10, slope=grease_life.WEIBULL_SLOPE
-    )
-    return np.where(temperature <= hottest, median * to_l10, np.nan)
-
-
 def _proposed(points: Points, allowed: Array) -> Array:
     """Return a fifth less than the allowed interval, in whole weeks of the calendar where it is as long as one."""
     week = 7 * points.hours_per_day[points.starts]
-    hours = PROPOSED_SHARE * allowed
+    hours = np.minimum(PROPOSED_SHARE * allowed, points.rhythm[points.starts])
     return np.where(hours >= week, np.floor(hours / week) * week, hours)
 
 

@@ -127,12 +127,15 @@ def room_for_grease(points: Points) -> Array:
 
 
 def regrease(points: Points) -> Use:
-    """Grease given at each regreasing against a band round the side rule, never more than there is room for."""
+    """Grease given at each regreasing against a band round the side rule, never more than there is room for.
+
+    Where the fill itself is beyond, the next dose is no question yet: the fill governs and the plan gives none.
+    """
     p = points
-    dose = grease_amount.regrease_quantity.plain(outside=p.outside, width=p.width)
+    dose = grease_amount.regrease_quantity_by_rule.plain(outside=p.outside, width=p.width, rule=p.regrease_rule)
     low, high = REGREASE_RANGE
     upper = np.minimum(high * dose, room_for_grease(p))
-    applies = (p.is_grease > 0) & ~np.isnan(p.regrease_mass) & (p.is_sealed == 0)
+    applies = (p.is_grease > 0) & ~np.isnan(p.regrease_mass) & (p.is_sealed == 0) & ~(fill(p).use > 1.0)
     return _two_sided(p.regrease_mass, low * dose, upper, applies)
 
 

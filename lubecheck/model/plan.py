@@ -4,11 +4,13 @@ from __future__ import annotations
 
 import math
 
+from lubecheck.model.amounts import CONTINUOUS_BELOW_DAYS, feed, housing_fill
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import room_for_grease
 from lubecheck.model.points import volume_of
 from lubecheck.model.result import PlanLine
+from lubecheck.units import YEAR_H
 
 
 def strokes_of(grams: float | None, grams_per_stroke: float | None) -> int | None:
@@ -30,6 +32,22 @@ def weeks_of(hours: float | None, hours_per_day: float) -> float | None:
     17.8
     """
     return None if hours is None else math.floor(hours / (7 * hours_per_day) * 10 + 1e-9) / 10
+
+
+def calendar_days_of(hours: float | None, hours_per_day: float, shutdown: float = 0.0) -> int | None:
+    """Return running hours as whole calendar days, rounded down.
+
+    A standstill of the plant (hours in a year) lengthens it only once for each whole year of running that the interval
+    spans: so many standstills lie in it wherever it begins.
+
+    >>> calendar_days_of(2000.0, 16.0), calendar_days_of(12000.0, 24.0, 504.0)
+    (125, 521)
+    """
+    if hours is None:
+        return None
+    running_days = hours / hours_per_day
+    whole_years = math.floor(running_days * 24 / (YEAR_H - shutdown) + 1e-9)
+    return math.floor(running_days + whole_years * shutdown / 24 + 1e-9)
 
 
 def plan_line(case: Case, outcome: Outcome) -> PlanLine:
@@ -61,8 +79,16 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
             stroke = volume_of(case.grease.stroke, 1.0, density) * density
     if outcome.judged["interval"].applies[0]:
         interval = chosen("interval", points.interval[0], outcome.proposed_interval[0])
+    feeding = None
+    if case.is_grease and interval is not None and interval < CONTINUOUS_BELOW_DAYS * hours_per_day:
+        feeding = feed(case)[1]
+    kept = case.grease if case.is_grease else case.oil
+    # An interval that the user plans by the calendar has the standstills in it already.
+    is_by_calendar = kept.interval is not None and kept.interval.is_calendar and "interval" not in proposed
+    shutdown = 0.0 if is_by_calendar else kept.shutdown or 0.0
     if case.is_grease and points.is_sealed[0]:
         regrease = interval = None
+        feeding = None
         proposed = [name for name in proposed if name == "fill"]
     return PlanLine(
         lubricant=case.lubricant.name,
@@ -75,11 +101,17 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
         interval_weeks=weeks_of(interval, hours_per_day),
         hours_per_day=hours_per_day,
         is_proposed=tuple(proposed),
-        steps=_steps(case, is_sealed=bool(points.is_sealed[0]), has_room=regrease is not None),
+        steps=_steps(case, is_sealed=bool(points.is_sealed[0]), feeding=feeding, has_room=regrease is not None),
+        housing_fill_g=housing_fill(case, outcome)[1],
+        feed_g_per_h=feeding,
+        oil_change_cm3=None if case.is_grease else case.oil.volume,
+        calendar_days=calendar_days_of(interval, hours_per_day, shutdown),
+        last_done=kept.last_done,
+        hours_run=kept.hours_run,
     )
 
 
-def _steps(case: Case, *, is_sealed: bool, has_room: bool) -> tuple[str, ...]:
+def _steps(case: Case, *, is_sealed: bool, feeding: float | None, has_room: bool) -> tuple[str, ...]:
     """Return what to do, in order."""
     if not case.is_grease:
         return (
@@ -92,6 +124,12 @@ def _steps(case: Case, *, is_sealed: bool, has_room: bool) -> tuple[str, ...]:
         return (
             "Do not regrease: nothing can leave. Open a way out and run it clear, or clean bearing and housing out; "
             "then fill anew with the first fill of this line",
+        )
+    if feeding is not None:
+        return (
+            f"An interval under {CONTINUOUS_BELOW_DAYS:g} days is no plan for a gun: set an automatic feeder to "
+            f"{feeding:.2g} g/h ({feeding * 24:.2g} g in each 24 running hours), or change over to oil",
+            "Keep the way out open, wipe off what comes out, and check the feeder's level on every route",
         )
     relief = {
         "open": "Open the relief plug and clear it of hard grease",

@@ -18,9 +18,19 @@ from numpy.typing import NDArray
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
 from lubecheck.model.assumptions import HOTTEST_SHAFT, HOUSING_AREA, SMALLEST_AREA
-from lubecheck.model.entries import Amount, Case, Duty
+from lubecheck.model.entries import Amount, Case, Duty, GreasePlan
 from lubecheck.model.shaft import acceleration_of, loads_of
-from lubecheck.physics import cooling, fatigue, grease_amount, grease_life, loads, speed, viscosity
+from lubecheck.physics import (
+    cooling,
+    fatigue,
+    grease_amount,
+    grease_corrections,
+    grease_life,
+    loads,
+    oil_life,
+    speed,
+    viscosity,
+)
 from lubecheck.units import Array
 
 Codes = NDArray[np.intp]
@@ -35,7 +45,13 @@ INTERVAL_ANSWERS = {
     "water": grease_life.WATER,
     "vibration": grease_life.VIBRATION,
     "orientation": grease_life.ORIENTATION,
+    "turning_ring": grease_corrections.TURNING_RING,
+    "air_flow": grease_corrections.AIR_FLOW,
 }
+# The answers that reach the grease of a closed bearing too.
+INSIDE_ANSWERS = ("vibration", "orientation", "turning_ring")
+REGREASE_RULES = tuple(grease_amount.REGREASE_GRAMS)
+RULE_DAYS = {"weekly": 7.0, "monthly": 28.0}  # the rhythm that a regrease rule is made for
 
 # Highest temperatures of parts, degC: common practice for polyamide 66 cages and nitrile lip seals.
 POLYAMIDE_LIMIT = 120.0
@@ -95,6 +111,7 @@ class Points:
     kinematic_limit: Array  # rpm, of cage and contact seals
     elements_mass: Array  # g, of all rolling elements
     interval_family: Codes
+    k_f: Array  # bearing type factor of GfT worksheet 3
     free_volume: Array
     is_sealed: Array  # shielded or sealed on both sides
     rubbing_seals: Array
@@ -107,6 +124,8 @@ class Points:
     highest: Array  # of lubricant, cage, seals, rings and the user's limit
     limit_origin: Codes
     life_reference: Array
+    life_step: Array  # rise that halves the life of the grease
+    grease_failed: Array  # share of bearings whose grease may have failed at the end of its interval or life
     yield_stress: Array
     additive: Codes
     # surroundings and heat
@@ -122,7 +141,9 @@ class Points:
     oil_inlet: Array
     oil_conductance: Array
     machine_heat: Array
-    interval_factor: Array  # dust, water, vibration, orientation together
+    interval_factor: Array  # dust, water, vibration, orientation, turning ring, air flow together
+    inside_factor: Array  # the part of it that reaches the grease of a closed bearing
+    water_share: Array  # of an oil change interval
     # amounts
     fill: Array
     void: Array
@@ -133,7 +154,10 @@ class Points:
     interval: Array  # running hours; NaN where none is planned
     hours_per_day: Array
     regrease_mass: Array  # g; NaN where none is planned
+    regrease_rule: Codes
+    rhythm: Array  # running hours of the rhythm that the regrease rule is made for; infinite without one
     is_bath: Array
+    is_circulating: Array
     level: Array
     # requirements
     setting: Codes
@@ -212,13 +236,15 @@ def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dic
     shared |= _housing_columns(case, reading, shared)
     shared |= _requirement_columns(case, reading, family)
     rows = []
-    for duty in case.duty:
-        row = dict(shared)
-        row |= _duty_columns(case, duty, reading, shared)
-        row |= _friction_columns(case, reading)
-        row |= _amount_columns(case, reading, row)
-        row |= {"case": number, "cooling_factor": 1.0, "f0_factor": 1.0, "f1_factor": 1.0, "churning_factor": 1.0}
-        rows.append(row)
+    friction = _friction_columns(case, reading)
+    year = seasons(case)
+    for season in year:
+        for duty in case.duty:
+            row = shared | _duty_columns(case, duty, reading, shared, season) | friction
+            row["share"] /= len(year)
+            row |= _amount_columns(case, reading, row)
+            row |= {"case": number, "cooling_factor": 1.0, "f0_factor": 1.0, "f1_factor": 1.0, "churning_factor": 1.0}
+            rows.append(row)
     _propose_one_fill(case, rows)
     return rows
 
@@ -227,9 +253,36 @@ def _propose_one_fill(case: Case, rows: list[dict[str, float]]) -> None:
     """A bearing is filled once: what is proposed for its fastest duty point is proposed for all."""
     least = min(row["proposed_fill"] for row in rows)
     for row in rows:
-        row["proposed_fill"] = least
         if case.is_grease and case.grease.fill is None:
-            row["fill"] = least
+            # What was given on top of a proposed fill stays on top of it.
+            given = 0.0 if case.grease.given is None else row["fill"] - row["proposed_fill"]
+            row["fill"] = least + given
+        row["proposed_fill"] = least
+
+
+def seasons(case: Case) -> tuple[float, ...]:
+    """Return the ambients that a year is made of, in equal shares: its months, or one where they are not stated.
+
+    From the coldest and the warmest month and the mean of the year, twelve months are drawn that keep all three: a
+    cosine of the year bent to the mean.
+    """
+    around = case.surroundings
+    if around.months is not None:
+        return around.months
+    low, high = around.ambient_lowest, around.ambient_highest
+    if low is None or high is None or high == low:
+        return (around.ambient,)
+    wave = [(1 - math.cos(math.pi * month / 6)) / 2 for month in range(12)]  # 0 in the coldest, 1 in the warmest month
+    target = 12 * (around.ambient - low) / (high - low)
+    # The power that brings the sum of the months to the mean, by halving; at its ends the mean is next to an extreme.
+    least, most = -8.0, 8.0
+    for _ in range(60):
+        middle = (least + most) / 2
+        if sum(w ** math.exp(middle) for w in wave) > target:
+            least = middle
+        else:
+            most = middle
+    return tuple(low + (high - low) * w ** math.exp(least) for w in wave)
 
 
 def _known(value: float | None) -> float:
@@ -258,6 +311,7 @@ def _bearing_columns(bearing: Bearing, reading: Mapping[str, Any]) -> dict[str, 
         "exponent": family.life_exponent,
         "minimum_load_share": family.minimum_load_share,
         "interval_family": INTERVAL_FAMILY[family.interval_factor],
+        "k_f": family.k_f,
         "free_volume": float(volume),
         "kinematic_limit": kinematic_limit(bearing),
         "elements_mass": bearing.elements_mass,
@@ -309,6 +363,7 @@ def _lubricant_columns(case: Case) -> dict[str, float]:
         "highest": highest,
         "limit_origin": 0 if math.isnan(highest) else limits.index(highest),
         "life_reference": _known(lubricant.life_reference),
+        "life_step": float(grease_corrections.halving_step.plain(_known(lubricant.life_reference))),
         "yield_stress": lubricant.yield_stress if lubricant.yield_stress is not None else 0.0,
         "speed_limit": (family.grease_speed_limit if case.is_grease else family.oil_speed_limit) / mean_diameter,
         "additive": fatigue.ADDITIVES.index("extreme pressure" if lubricant.ep else "none"),
@@ -318,15 +373,35 @@ def _lubricant_columns(case: Case) -> dict[str, float]:
 def _surroundings_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float]:
     around = case.surroundings
     altitude = around.altitude if around.altitude is not None else reading.get("[surroundings] altitude", 0.0)
-    factor = 1.0
-    for key, answers in INTERVAL_ANSWERS.items():
-        word = getattr(around, key) or reading.get(f"[surroundings] {key}")
-        factor *= next((answer.factor for answer in answers if answer.word == word), 1.0)
+    factor = inside = 1.0
+    for key in INTERVAL_ANSWERS:
+        part = answer_factor(case, reading, key)
+        factor *= part
+        inside *= part if key in INSIDE_ANSWERS else 1.0
+    water = around.water or reading.get("[surroundings] water")
     return {
+        "inside_factor": inside,
+        "water_share": oil_life.WATER_SHARES[water] if water is not None else 1.0,
         "coldest": _known(around.coldest),
         "pressure": float(cooling.pressure_at.plain(altitude)),
         "interval_factor": factor,
     }
+
+
+def answer_factor(case: Case, reading: Mapping[str, Any], key: str) -> float:
+    """Return the factor on the grease interval that an answer about the surroundings stands for; 1 without one."""
+    given = getattr(case.surroundings, key)
+    word = vibration_class(case, reading) if key == "vibration" else given or reading.get(f"[surroundings] {key}")
+    return next((answer.factor for answer in INTERVAL_ANSWERS[key] if answer.word == word), 1.0)
+
+
+def vibration_class(case: Case, reading: Mapping[str, Any]) -> str | None:
+    """Return the class of vibration, from a word or a measured velocity."""
+    given = case.surroundings.vibration
+    if given is None or isinstance(given, str):
+        return given or reading.get("[surroundings] vibration")
+    factor = float(grease_life.vibration_velocity_factor.plain(given))
+    return next(answer.word for answer in grease_life.VIBRATION if answer.factor == factor)
 
 
 def _is_vertical(case: Case, reading: Mapping[str, Any]) -> bool:
@@ -368,7 +443,7 @@ def _housing_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, f
 
 def _requirement_columns(case: Case, reading: Mapping[str, Any], family: Family) -> dict[str, float]:
     limits = case.limits
-    vibration = case.surroundings.vibration or reading.get("[surroundings] vibration")
+    vibration = vibration_class(case, reading)
     service = limits.service or ("shock" if vibration == grease_life.VIBRATION[-1].word else "normal")
     setting = None if case.is_beyond_settings else case.setting or reading["[cleanliness] setting"]
     hours = _hours_per_day(case, reading)
@@ -379,8 +454,17 @@ def _requirement_columns(case: Case, reading: Mapping[str, Any], family: Family)
         "least_kappa": limits.least_viscosity_ratio or DEFAULT_KAPPA,
         "static_safety": limits.static_safety or family.static_safety[service],
         "hours_per_day": hours,
+        "grease_failed": _grease_failed(case),
+        "rhythm": RULE_DAYS.get(case.grease.rule or "", math.inf) * hours,
         "ceiling": grease_life.CALENDAR_CEILING * hours / 24,
     }
+
+
+def _grease_failed(case: Case) -> float:
+    wanted = case.limits.grease_reliability
+    if wanted is not None:
+        return 1.0 - wanted
+    return grease_life.L10 if case.bearing.sealed_sides == 2 else grease_life.L01
 
 
 def _hours_per_day(case: Case, reading: Mapping[str, Any]) -> float:
@@ -390,9 +474,11 @@ def _hours_per_day(case: Case, reading: Mapping[str, Any]) -> float:
     return float(hours)
 
 
-def _duty_columns(case: Case, duty: Duty, reading: Mapping[str, Any], row: Mapping[str, float]) -> dict[str, float]:
+def _duty_columns(
+    case: Case, duty: Duty, reading: Mapping[str, Any], row: Mapping[str, float], season: float
+) -> dict[str, float]:
     around = case.surroundings
-    ambient = around.ambient if duty.ambient is None else duty.ambient
+    ambient = season if duty.ambient is None else duty.ambient
     draught = duty.draught if duty.draught is not None else around.draught
     shaft = duty.shaft_temperature if duty.shaft_temperature is not None else case.housing.shaft_temperature
     is_hot = shaft is None and bool(reading.get("[housing] machine_heat", 0.0))
@@ -445,21 +531,53 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
         fill = reading["[grease] fill"]
     else:
         fill = volume_of(plan.fill, volume, grams_per_cm3) / volume
+    room = volume if void is None else void
+    housing_fill = PROPOSED_HOUSING_FILL if plan.housing_fill is None else plan.housing_fill
+    if plan.given is not None:
+        # What the bearing has no room for went into the space beside it.
+        found = fill_found(plan, fill, volume, grams_per_cm3)
+        fill, over = min(found, 1.0), max(0.0, found - 1.0) * volume
+        housing_fill = min(1.0, housing_fill + (over / room if room else 0.0))
     relief = case.housing.relief or reading.get("[housing] relief")
     interval = case.grease.interval if case.is_grease else case.oil.interval
     mass = math.nan if plan.regrease_amount is None else volume_of(plan.regrease_amount, volume, grams_per_cm3)
     return {
         "fill": fill if case.is_grease else math.nan,
-        "void": volume if void is None else void,
-        "housing_fill": PROPOSED_HOUSING_FILL if plan.housing_fill is None else plan.housing_fill,
+        "void": room,
+        "housing_fill": housing_fill,
         "is_open": float(relief == "open"),
         "proposed_fill": float(proposed) if case.is_grease else math.nan,
-        "is_proposed_fill": float(plan.fill is None),
+        "is_proposed_fill": float(plan.fill is None and plan.given is None),
         "interval": math.nan if interval is None else running_hours(interval, row["hours_per_day"]),
         "regrease_mass": mass * grams_per_cm3,
+        "regrease_rule": REGREASE_RULES.index(plan.rule or "side"),
         "is_bath": float(not case.is_grease and (case.oil.supply or reading.get("[oil] supply")) == "bath"),
         "level": case.oil.level or 0.0,
+        "is_circulating": float(not case.is_grease and case.oil.supply == "circulating"),
     }
+
+
+def fill_found(plan: GreasePlan, before: float, free_volume: float, grams_per_cm3: float) -> float:
+    """Return the fill that is found after what was given: what was there, the regreasings since, and the last dose.
+
+    A share of the free volume, above 1 where more was given than it holds: all that was given is taken to be there
+    still, in the bearing or beside it.
+    """
+    if plan.given is None:
+        return before
+    dose = volume_of(plan.regrease_amount, free_volume, grams_per_cm3) if plan.regrease_amount is not None else 0.0
+    last = given_volume(plan, free_volume, grams_per_cm3)
+    return before + ((plan.regreasings or 0.0) * dose + last) / free_volume
+
+
+def given_volume(plan: GreasePlan, free_volume: float, grams_per_cm3: float) -> float:
+    """Return what was given last, in cm^3; strokes by what one was weighed at."""
+    given = plan.given
+    if given is None:
+        return 0.0
+    if given.kind != "strokes":
+        return volume_of(given, free_volume, grams_per_cm3)
+    return given.value * (0.0 if plan.stroke is None else volume_of(plan.stroke, free_volume, grams_per_cm3))
 
 
 def volume_of(amount: Amount, free_volume: float, grams_per_cm3: float) -> float:

@@ -8,6 +8,7 @@ the nearest valid name; nothing is guessed and nothing is passed over.
 from __future__ import annotations
 
 import dataclasses
+import datetime
 import math
 import re
 import sys
@@ -161,6 +162,10 @@ class _Reading:
         cleanliness = self._table(document, "cleanliness", Cleanliness) or Cleanliness()
         limits = self._table(document, "limits", Requirements) or Requirements()
         self._housing_conflicts(housing)
+        self._season_conflicts(surroundings)
+        if grease.given is not None and grease.given.kind == "strokes" and grease.stroke is None:
+            self.fault(("grease", "stroke"), "nothing", 'a weighed stroke such as "1.2 g", as strokes were given',
+                       plain=True)  # fmt: skip
         if lubricant is not None:
             unused = "oil" if lubricant.kind == "grease" else "grease"
             if unused in document:
@@ -396,6 +401,21 @@ class _Reading:
                 plain=True,
             )
 
+    def _season_conflicts(self, around: Surroundings | None) -> None:
+        if around is None:
+            return
+        ends = (around.ambient_lowest, around.ambient_highest)
+        if around.months is not None and ends != (None, None):
+            self.fault(("surroundings", "months"), "months and ambient ends", "one of the two", plain=True)
+        low, high = ends
+        if (low is None) != (high is None):
+            missing = "ambient_lowest" if low is None else "ambient_highest"
+            self.fault(("surroundings", missing), "nothing", "both ambient_lowest and ambient_highest, or neither",
+                       plain=True)  # fmt: skip
+        elif low is not None and high is not None and not low <= around.ambient <= high:
+            self.fault(("surroundings", "ambient"), f"{around.ambient:g} degC",
+                       f"the mean of the year, between {low:g} and {high:g} degC", plain=True)  # fmt: skip
+
     def _setting_fits(self, setting: str, lubricant: Lubricant, oil: OilPlan) -> None:
         supply = "grease" if lubricant.kind == "grease" else (oil.supply or "bath")
         circuit, _, _code = setting.partition(" -/")
@@ -419,8 +439,20 @@ def _dotted(path: tuple[str | int, ...]) -> str:
     return text
 
 
+_STROKES = re.compile(r"([0-9]{1,4})\s*strokes?")
+
+
 def _value(value: Any, entry: Entry) -> Any:
     """Read one value by its entry; raises UnreadableText where it is not what the entry takes."""
+    if entry.form == "date":
+        return _date(value, entry)
+    if entry.form == "months":
+        if not isinstance(value, list) or len(value) != 12:
+            raise UnreadableText(entry.expected)
+        one = dataclasses.replace(entry, form="")
+        return tuple(_value(item, one) for item in value)
+    if entry.form == "strokes" and isinstance(value, str) and (count := _STROKES.fullmatch(value.strip())):
+        return Amount(float(count[1]), "strokes", "strokes")
     if not entry.kinds:
         return _word(value, entry)
     if isinstance(value, str) and value in entry.words:
@@ -430,6 +462,17 @@ def _value(value: Any, entry: Entry) -> Any:
     if not entry.low <= amount.value <= highest or (entry.low == 0 and len(entry.kinds) > 1 and amount.value == 0):
         raise UnreadableText(entry.expected)
     return amount if len(entry.kinds) > 1 or (entry.kinds == ("time",) and entry.role == "decision") else amount.value
+
+
+def _date(value: Any, entry: Entry) -> str:
+    """Read a date, as a text or as TOML's own."""
+    try:
+        day = datetime.date.fromisoformat(value) if isinstance(value, str) and len(value) == 10 else value
+    except ValueError:
+        raise UnreadableText(entry.expected) from None
+    if not isinstance(day, datetime.date) or isinstance(day, datetime.datetime) or not 1990 <= day.year <= 2200:
+        raise UnreadableText(entry.expected)
+    return day.isoformat()
 
 
 def _word(value: Any, entry: Entry) -> Any:

@@ -102,6 +102,39 @@ class Grease(Figures):
 
 
 @dataclass(frozen=True)
+class Amounts(Figures):
+    """Every amount that a plan may ask for; what does not apply to the position has no value."""
+
+    bearing_fill = Declared("g", "first fill of the bearing, with the range that handbooks give")
+    housing_fill = Declared("g", "first fill of the space beside the bearing, with its range")
+    regrease_quantity = Declared("g", "grease for each regreasing by the rule of the case")
+    allowed_least = Declared("g", "least grease in the bearing in service")
+    allowed_most = Declared("g", "most grease in the bearing in service")
+    purge_quantity = Declared(
+        "g", "grease that renews a neglected or over-aged filling, in steps, with the way out open"
+    )
+    continuous_feed = Declared("g/h", "rate of continuous feeding, where an interval would be too short")
+    grease_per_year = Declared("g", "grease given in a year by the plan line")
+    cartridges_per_year = Declared("1", "cartridges that this is")
+    oil_change_quantity = Declared("cm^3", "oil of one change")
+    oil_level_from_outside = Declared("mm", "oil level at rest above the lowest point of the bearing's outside")
+
+
+@dataclass(frozen=True, slots=True)
+class IntervalLine:
+    """One published line of lubricant life, as it reads for the position."""
+
+    name: str
+    hours: float | None  # running hours at `failed`; None where it cannot be read
+    failed: float | None  # share of bearings that have failed by then; None where the line does not say
+    applies: bool
+    governs: bool
+    factors: tuple[tuple[str, float], ...]  # what the line's own figure is multiplied with, at the hottest state
+    basis: str
+    note: str
+
+
+@dataclass(frozen=True)
 class Life(Figures):
     """Fatigue life of the position."""
 
@@ -166,6 +199,12 @@ class PlanLine:
     hours_per_day: float
     is_proposed: tuple[str, ...]  # "fill", "interval", "regrease_amount": what the user left to be proposed
     steps: tuple[str, ...]
+    housing_fill_g: float | None = None
+    feed_g_per_h: float | None = None  # stands in for an interval that is too short
+    oil_change_cm3: float | None = None
+    calendar_days: int | None = None  # the interval by the calendar, whole days, standstills of the plant counted in
+    last_done: str | None = None
+    hours_run: float | None = None
 
 
 @dataclass(frozen=True, slots=True)
@@ -211,6 +250,9 @@ class Result:
     lubricant: str
     converged_in: int  # steps of the coupled solve
     residual: float | None  # W left over in the balance of the operating point
+    amounts: Amounts | None = None
+    interval_lines: tuple[IntervalLine, ...] = ()
+    interval_spread: str = ""  # how far the lines lie apart, in words
 
     def limit(self, name: str) -> Limit:
         """Return a limit by its name.

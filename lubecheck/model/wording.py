@@ -13,10 +13,13 @@ import numpy as np
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis
+from lubecheck.model import given as after
 from lubecheck.model import limits, oil_words
+from lubecheck.model.amounts import CARTRIDGE_G
 from lubecheck.model.assumptions import FACTS, Fact
 from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
+from lubecheck.model.interval_lines import interval_note, percentile
 from lubecheck.model.kernel import Outcome, parts_rows, takes_loads
 from lubecheck.model.points import (
     BEYOND_SETTINGS,
@@ -25,11 +28,13 @@ from lubecheck.model.points import (
     DEFAULT_RELIABILITY,
     LIMIT_ORIGINS,
     PROPOSED_HOUSING_FILL,
+    RULE_DAYS,
+    seasons,
 )
 from lubecheck.model.result import Assumed
 from lubecheck.model.shaft import loads_of
 from lubecheck.model.side_figures import curing_preload, safe_speed
-from lubecheck.physics import fatigue, grease_life
+from lubecheck.physics import fatigue, grease_life, oil_life
 from lubecheck.units import KINDS
 
 SAFETY = (
@@ -42,6 +47,10 @@ GREASE_SAFETY = (
     "A grease gun reaches pressures that push out seals and inject grease through skin: never use force",
 )
 _BEARING_UNITS = {key: KINDS[entry.kinds[0]].unit for key, entry in entries(BearingTable) if entry.kinds}
+WEIGH = (
+    "weigh a stroke in a minute and state [grease] stroke: ten strokes on a piece of paper on a letter scale, grams "
+    "over ten; guns give 0.8 to 3 g a stroke"
+)
 LONG_LIFE = 200_000.0  # h, beyond which a fatigue life says no more than "not this"
 
 
@@ -71,7 +80,8 @@ def basis(name: str, case: Case, outcome: Outcome) -> str:
     if name == "temperature":
         return LIMIT_ORIGINS[int(points.limit_origin[outcome.judged[name].row[0]])][1]
     if name == "interval" and not case.is_grease:
-        return "bath-handbooks"
+        is_bath_rule = outcome.lines.bath[0] <= outcome.lines.oxidation[0]
+        return "bath-handbooks" if is_bath_rule or not points.is_circulating[0] else "whitby"
     if name == "interval" and points.is_sealed[0]:
         return "booser"
     stated = {"film": own.least_viscosity_ratio, "static_load": own.static_safety}
@@ -129,18 +139,22 @@ def _fill(case: Case, outcome: Outcome, row: int) -> str:
     over = "more than the bearing's free volume" if points.fill[row] > 1 else ""
     side = "held against the least" if outcome.judged["fill"].demand[0] != points.fill[row] else ""
     share = f"{grams:.1f} g fill {points.fill[row] * 100:.0f} % of {points.free_volume[row]:.1f} cm^3"
-    return join(said, share, side, over, churned)
+    return join(said, after.found(case, outcome), share, side, over, churned)
 
 
 def _interval(case: Case, outcome: Outcome, row: int) -> str:
-    points, state = outcome.points, outcome.state
+    points = outcome.points
     hottest = int(outcome.hottest[0])
     if not case.is_grease:
-        return "oil change by the temperature of the bath" + ("" if case.oil.interval else ", proposed")
+        bath = points.is_bath[0]
+        by = "oil change by the temperature of the bath" if bath else "oil change by oxidation at the bearing"
+        wet = "shortened by water" if points.water_share[0] < 1 else ""
+        return join(by + ("" if case.oil.interval else ", proposed"), wet)
     if points.is_sealed[0]:
         if case.grease.interval is not None:
             return "closed on both sides: do not regrease"
-        return "closed on both sides: life of its grease (L10) against the wanted life; do not regrease"
+        level = percentile(float(points.grease_failed[0]))
+        return f"closed on both sides: life of its grease ({level}) against the wanted life; do not regrease"
     said = "" if case.grease.interval is not None else "proposed"
     share = float(grease_life.classical_share.plain(points.speed[hottest], points.bore[hottest]))
     if share > grease_life.CLASSICAL_GREATEST_SHARE:
@@ -150,26 +164,7 @@ def _interval(case: Case, outcome: Outcome, row: int) -> str:
         return join(said, f"{valid}: feed continuously or ask the grease's maker")
     if np.isnan(outcome.allowed_interval[0]):
         return join(said, "load or temperature outside the range of the classical line")
-    classical = float(
-        grease_life.classical_interval.plain(
-            points.speed[hottest], points.bore[hottest], points.interval_family[hottest]
-        )
-    )
-    heat = float(
-        grease_life.temperature_halving.plain(
-            temperature=state.temperature[hottest],
-            reference=points.life_reference[hottest],
-            step=grease_life.HALVING_STEP,
-        )
-    )
-    load = float(grease_life.load_factor.plain(outcome.load_ratio[hottest]))
-    surroundings = float(points.interval_factor[hottest])
-    chain = f"classical {classical:.0f} h x temperature {heat:.2f} x load {load:.2f} x surroundings {surroundings:.2f}"
-    capped = "held to the calendar ceiling of 48 months" if outcome.allowed_interval[0] >= points.ceiling[0] else ""
-    short = "under a week: feed continuously or use oil" if (
-        outcome.allowed_interval[0] < 7 * points.hours_per_day[0]
-    ) else ""  # fmt: skip
-    return join(said, chain, capped, short, "1 % of bearings have failed by then (L01)")
+    return join(said, interval_note(case, outcome))
 
 
 def _speed(case: Case, outcome: Outcome, row: int) -> str:
@@ -236,8 +231,10 @@ def _outside_life(outcome: Outcome) -> str:
 
 
 def _duty(case: Case, row: int) -> str:
-    """Name the duty point that governs, where there are several."""
-    return f"at duty point {row % len(case.duty) + 1}" if len(case.duty) > 1 else ""
+    """Name the duty point and the month that govern, where there are several."""
+    season = row // len(case.duty) % len(seasons(case))
+    month = f"in month {season + 1}" if case.surroundings.months else ""
+    return " ".join(filter(None, (f"at duty point {row % len(case.duty) + 1}" if len(case.duty) > 1 else "", month)))
 
 
 def _regrease(case: Case, outcome: Outcome, row: int) -> str:
@@ -280,7 +277,16 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
         said.append(f"operating point: the hottest of {len(case.duty)} duty points")
     said += _loads(case)
     if case.is_grease and case.grease.stroke is None:
-        said.append("weigh ten strokes of your grease gun and state [grease] stroke: guns give 0.8 to 3 g a stroke")
+        said.append(WEIGH)
+    said += after.advice(case, outcome)
+    if case.is_grease and case.grease.rule in RULE_DAYS:
+        said.append(f"the {case.grease.rule} rule gives so little that it holds for that rhythm only")
+    if case.surroundings.orientation == "vertical" and case.is_grease:
+        said.append("the upright shaft halves the interval, not the amount: a baffle below keeps the grease in place")
+    if not case.is_grease and case.oil.volume is not None and case.oil.flow and case.oil.supply == "circulating":
+        dwell = float(oil_life.dwell_time.plain(case.oil.volume, case.oil.flow))
+        if dwell < oil_life.LEAST_DWELL:
+            said.append(f"the oil rests {dwell * 60:.1f} min in the circuit: under 5 min air and water stay in it")
     churned = float(outcome.state.churning_power[0])
     if churned > 0:
         power = float(outcome.state.friction_power[0])
@@ -345,6 +351,20 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         said.append(Assumed(f"[bearing] {key}", f"{value:.4g} {unit}, {low:.2f} to {high:.2f} times that", source))
     said += [Assumed("[lubricant]", text, "common-practice") for text in case.lubricant.assumed]
     said += oil_words.assumed(case)
+    around = case.surroundings
+    if case.is_grease and around.turning_ring is None:
+        said.append(Assumed("[surroundings] turning_ring", "the inner ring turns", "common-practice"))
+    if case.is_grease and around.air_flow is None:
+        said.append(Assumed("[surroundings] air_flow", "no air is drawn through the bearing", "common-practice"))
+    if case.is_grease and case.limits.grease_reliability is None:
+        share = "90 %, closed bearings" if case.bearing.sealed_sides == 2 else "99 %, bearings that are regreased"
+        said.append(Assumed("[limits] grease_reliability", share, "grease-handbooks"))
+    if case.is_grease and case.bearing.sealed_sides != 2 and case.grease.cartridge is None:
+        said.append(Assumed("[grease] cartridge", f"{CARTRIDGE_G:g} g", "common-practice"))
+    if case.is_grease and case.bearing.sealed_sides != 2 and case.grease.rule is None:
+        said.append(Assumed("[grease] rule", "side: the grease goes in beside the bearing", "neale:A20.5"))
+    if not case.is_grease and case.oil.volume is None and case.oil.supply != "mist":
+        said.append(Assumed("[oil] volume", "not known, so no change quantity", "common-practice"))
     if case.bearing.cage is None:
         said.append(Assumed("[bearing] cage", "metal", "common-practice"))
     return tuple(said)

@@ -116,7 +116,8 @@ def classical_interval(speed: Rpm, bore: Mm, family: Family) -> Hour:
 
     The formula falls to zero at n = 3.5e6 / d^1.5; above 0.6 of that speed it is outside its range and the result is
     NaN (refused by the unit-aware face), as that range is one of two arguments together: see classical_share.
-    Published motor tables lie within 15 % of it where it holds.
+    One motor maker's table (seen) lies within 15 % of it where it holds; another (from memory, for a grease good to 80
+    degC) gives up to 2.3 times it.
 
     speed [rpm]: speed n, any shape
     bore [mm]: bore diameter d, broadcasts with speed

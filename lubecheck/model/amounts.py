@@ -1,0 +1,105 @@
+"""Every amount that a plan may ask for: first fill of bearing and housing, dose, purge, feed, a year's grease, oil."""
+
+from __future__ import annotations
+
+import math
+
+from lubecheck.model.entries import Case
+from lubecheck.model.kernel import Outcome
+from lubecheck.model.points import REGREASE_RULES, volume_of
+from lubecheck.model.result import Amounts, PlanLine
+from lubecheck.physics import grease_amount
+from lubecheck.units import DAY_H, YEAR_H
+
+CONTINUOUS_BELOW_DAYS = 7.0  # running days under which a gun is no answer: common practice, a week
+CARTRIDGE_G = 400.0  # what an ordinary cartridge holds: common practice, 380 to 420 g (14 oz)
+
+Triple = tuple[float, float, float]
+_NONE: tuple[None, None, None] = (None, None, None)
+
+
+def feed(case: Case) -> Triple:
+    """Return the rate of continuous feeding in g/h: low, nominal, high."""
+    bearing = case.bearing
+    low, nominal, high = grease_amount.continuous_feed.plain(outside=bearing.outside, width=bearing.width)
+    return float(low), float(nominal), float(high)
+
+
+def housing_fill(case: Case, outcome: Outcome) -> Triple | tuple[None, None, None]:
+    """Return the first fill of the space beside the bearing in g: low, nominal or planned, high."""
+    if not case.is_grease or outcome.points.is_sealed[0]:
+        return _NONE
+    full = float(outcome.points.void[0]) * float(outcome.points.density[0]) / 1000
+    low, nominal, high = grease_amount.HOUSING_FILL
+    # A fill that is beyond is not repeated on the plan, neither in the bearing nor beside it.
+    planned = case.grease.housing_fill if outcome.judged["fill"].use[0] <= 1 else None
+    nominal = nominal if planned is None else planned
+    return min(low, nominal) * full, nominal * full, max(high, nominal) * full
+
+
+def amounts(case: Case, outcome: Outcome, plan: PlanLine) -> Amounts:
+    """Return the amounts of the first position of an outcome, beside its plan line."""
+    points = outcome.points
+    none: dict[str, float | tuple[float, float, float] | None] = dict.fromkeys(Amounts.declared())
+    if not case.is_grease:
+        if points.is_bath[0]:
+            none["oil_level_from_outside"] = float(points.outside[0] - points.pitch_diameter[0]) / 2
+        none["oil_change_quantity"] = case.oil.volume
+        made: Amounts = Amounts.of(none)
+        return made
+    sizes = {"outside": float(points.outside[0]), "width": float(points.width[0])}
+    speeds = {
+        "speed": points.speed[0],
+        "speed_limit": points.speed_limit[0],
+        "pitch_diameter": points.pitch_diameter[0],
+    }
+    full = float(points.free_volume[0]) * float(points.density[0]) / 1000
+    low, nominal, high = (float(share) * full for share in grease_amount.first_fill.plain(**speeds))
+    least, most = (float(share) * full for share in grease_amount.allowed_fill.plain(**speeds))
+    is_open = not points.is_sealed[0]
+    rule = REGREASE_RULES.index(case.grease.rule or "side")
+    year = yearly(plan)
+    housing = housing_fill(case, outcome)
+    found: dict[str, float | tuple[float, float, float] | None] = {
+        "bearing_fill": (nominal, low, high),
+        "allowed_least": least,
+        "allowed_most": most,
+    }
+    if is_open:
+        found |= {
+            "regrease_quantity": float(grease_amount.regrease_quantity_by_rule.plain(**sizes, rule=rule)),
+            "purge_quantity": float(grease_amount.purge_quantity.plain(**sizes)),
+            "continuous_feed": (feed(case)[1], feed(case)[0], feed(case)[2]),
+            "grease_per_year": year,
+            "cartridges_per_year": None if year is None else year / cartridge(case),
+        }
+        if housing[1] is not None:
+            found["housing_fill"] = (housing[1], housing[0], housing[2])
+    whole: Amounts = Amounts.of(none | found)
+    return whole
+
+
+def yearly(plan: PlanLine, calendar_days: int | None = None) -> float | None:
+    """Return the grease that a plan line gives in a year, in g; at another interval where one is given."""
+    if plan.feed_g_per_h is not None:
+        return plan.feed_g_per_h * plan.hours_per_day / DAY_H * YEAR_H
+    days = plan.calendar_days if calendar_days is None else calendar_days
+    if plan.regrease_g is None or not days:
+        return None
+    return dose(plan) * YEAR_H / DAY_H / days
+
+
+def dose(plan: PlanLine) -> float:
+    """Return what is really given at once: whole strokes where a stroke was weighed."""
+    if plan.regrease_strokes is not None and plan.stroke_g is not None:
+        return plan.regrease_strokes * plan.stroke_g
+    return plan.regrease_g if plan.regrease_g is not None else math.nan
+
+
+def cartridge(case: Case) -> float:
+    """Return what a cartridge holds, in g."""
+    given = case.grease.cartridge
+    if given is None:
+        return CARTRIDGE_G
+    per_cm3 = case.lubricant.density_15 / 1000
+    return volume_of(given, 1.0, per_cm3) * per_cm3

@@ -1,0 +1,107 @@
+"""The published lines of lubricant life, each where it applies, side by side; the shortest applicable one governs.
+
+Lines stand for different percentiles: the classical interval is an L01, Booser's equation an L50. Both are brought to
+the share of failures that the case accepts through the Weibull slope. A duty cycle and the months of a year add up by
+linear damage, row by row; for open bearings the hours at rest count as well.
+"""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from lubecheck.method import Method
+from lubecheck.model.points import Points
+from lubecheck.physics import grease_corrections, grease_life, oil_life
+from lubecheck.units import DAY_H, Array
+
+
+@dataclass(frozen=True, slots=True)
+class Lines:
+    """Running hours by each line and what governs, one a position; NaN where a line cannot be read for it."""
+
+    classical: Array  # open grease bearings
+    booser: Array  # grease that is never renewed; for open bearings a second opinion
+    worksheet: Array  # k_f n dm of the hardest row, where a reader may enter the curve; not hours
+    bath: Array  # oil baths, handbooks
+    oxidation: Array  # baths and circulating oil
+    allowed: Array  # the shortest that applies, with rest and calendar ceiling
+
+
+def of(points: Points, temperature: Array, load_ratio: Array) -> Lines:
+    """Return the lines of every position at the temperatures and loads that were worked out for its rows."""
+    p = points
+    first = p.starts
+    is_grease, is_sealed = p.is_grease[first] > 0, p.is_sealed[first] > 0
+    is_bath, is_circulating = p.is_bath[first] > 0, p.is_circulating[first] > 0
+    hours_per_day, failed = p.hours_per_day[first], p.grease_failed[first]
+
+    classical = damage_sum(p, classical_rows(p, temperature, load_ratio))
+    classical *= to_share(grease_life.L01, failed)
+    booser = damage_sum(p, booser_rows(p, temperature, load_ratio)) * to_share(grease_life.L50, failed)
+    bath = damage_sum(p, _calendar(p, temperature, grease_life.bath_change_interval))
+    oxidation = damage_sum(p, _calendar(p, temperature, oil_life.oxidation_life))
+    worksheet = grease_corrections.worksheet_parameter.plain(p.k_f, p.speed, p.pitch_diameter)
+
+    renewed = grease_corrections.with_rest.plain(running_life=classical, hours_per_day=hours_per_day)
+    renewed = np.minimum(renewed, p.ceiling[first])
+    oil = np.where(is_bath, np.minimum(bath, oxidation), np.where(is_circulating, oxidation, np.nan))
+    return Lines(
+        classical=np.where(is_grease & ~is_sealed, classical, np.nan),
+        booser=np.where(is_grease, booser, np.nan),
+        worksheet=np.where(is_grease, np.maximum.reduceat(worksheet, first), np.nan),
+        bath=np.where(is_bath, bath, np.nan),
+        oxidation=np.where(is_bath | is_circulating, oxidation, np.nan),
+        # A closed bearing keeps its grease for life: no ceiling of the calendar.
+        allowed=np.where(is_grease, np.where(is_sealed, booser, renewed), oil),
+    )
+
+
+def damage_sum(points: Points, hours: Array) -> Array:
+    """Return the time in which the shares of damage of a position's rows add up to one."""
+    rate: Array = np.add.reduceat(points.share / hours, points.starts)
+    whole: Array = np.add.reduceat(points.share, points.starts)
+    return whole / rate
+
+
+def to_share(known: float, wanted: Array) -> Array:
+    """Return the factor from a life at one share failed to the life at the wanted one."""
+    factor: Array = grease_life.weibull_scale.plain(known=known, wanted=wanted, slope=grease_life.WEIBULL_SLOPE)
+    return factor
+
+
+def classical_rows(points: Points, temperature: Array, load_ratio: Array) -> Array:
+    """Return the classical interval of each row with its factors, an L01; NaN outside its range of speed or load."""
+    p = points
+    hours = grease_life.classical_interval.plain(p.speed, p.bore, p.interval_family)
+    heat = grease_life.temperature_halving.plain(temperature=temperature, reference=p.life_reference, step=p.life_step)
+    is_outside = grease_life.classical_share.plain(p.speed, p.bore) > grease_life.CLASSICAL_GREATEST_SHARE
+    is_outside |= grease_life.load_factor.outside(load_ratio=load_ratio)
+    hours = hours * heat * p.interval_factor * grease_life.load_factor.plain(load_ratio)
+    return np.where(is_outside, np.nan, hours)
+
+
+def booser_rows(points: Points, temperature: Array, load_ratio: Array) -> Array:
+    """Return Booser's median life of each row; below the range of the equation its cool end stands, above it is NaN.
+
+    The equation is for lithium soap, whose full interval holds up to 70 degC. A grease that ages earlier is read as
+    that much hotter (estimate of this program); one that ages later gains nothing, as Booser's constant for it is not
+    surely known.
+    """
+    p = points
+    coolest, hottest = grease_life.booser_median_life.valid["temperature"]
+    read_at = temperature + np.maximum(LITHIUM_REFERENCE - p.life_reference, 0.0)
+    hours = grease_life.booser_median_life.plain(np.maximum(read_at, coolest), 0.0)
+    hours = hours * p.inside_factor * grease_life.load_factor.plain(load_ratio)
+    is_outside = ~(read_at <= hottest) | grease_life.load_factor.outside(load_ratio=load_ratio)
+    return np.where(is_outside, np.nan, hours)
+
+
+LITHIUM_REFERENCE = 70.0  # degC, of the grease that Booser's equation stands for without corrections
+
+
+def _calendar(points: Points, temperature: Array, rule: Method[..., Array]) -> Array:
+    """Return the running hours in the calendar time that an oil rule allows at each row's temperature."""
+    life = rule.plain(temperature) * points.water_share * points.hours_per_day / DAY_H
+    return np.where(rule.outside(temperature=temperature), np.nan, life)
