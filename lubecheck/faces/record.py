@@ -41,6 +41,8 @@ def of_result(result: Result) -> dict[str, Any]:
         "life": figures(result.life),
         "loads": figures(result.loads),
         "speeds": figures(result.speeds),
+        "damage": [dataclasses.asdict(point) for point in result.damage],
+        "losses": dataclasses.asdict(result.losses),
         "plan": dataclasses.asdict(result.plan),
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
         "notes": list(result.notes),

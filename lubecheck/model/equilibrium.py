@@ -149,6 +149,10 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
     with np.errstate(all="ignore"):
         balance = Balance(points, air_properties)
         rise, is_found, steps = _root(balance)
+        # A bearing whose temperature is stated needs no balance: its residual is the heat that holds it there.
+        is_held = ~np.isnan(points.held_temperature)
+        rise = np.where(is_held, points.held_temperature - balance.floor, rise)
+        is_found |= is_held
         heat = balance.at(rise)
     per_torque = friction.power.plain(1.0, points.speed)
     lost = np.where(is_found, 1.0, np.nan)

@@ -61,7 +61,7 @@ def _water(found: OilAnalysis) -> str:
             "watch": f"over {watch}, which common practice watches: find where it comes in",
             "act": f"over {act}, at which common practice acts: dry or change the oil, find where it comes in",
         }[found.water_grade]
-    return f"{said}: {judged}. Water shortens fatigue life and is not in the life figure"
+    return f"{said}: {judged}. Water shortens fatigue life: it is in the life figure where it is over 100 ppm"
 
 
 def assumed(case: Case) -> Iterator[Assumed]:

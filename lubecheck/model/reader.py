@@ -22,6 +22,7 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis, analyse
 from lubecheck.errors import CaseError, Fault, InputError, nearest, shown
+from lubecheck.model.cleanliness import contradictions
 from lubecheck.model.entries import (
     TABLES,
     Amount,
@@ -173,6 +174,8 @@ class _Reading:
                 self.fault(
                     ("lubricant", "iso_code"), str(analysis.code), "no such key for mist: ISO 281 has no setting"
                 )
+            for key, given, expected in contradictions(cleanliness, is_grease=lubricant.kind == "grease"):
+                self.fault(("cleanliness", key), given, expected, plain=True)
         if bearing is None or lubricant is None or not duty or surroundings is None or not is_whole:
             return None
         case = Case(
