@@ -80,6 +80,9 @@ def _entry(
     return dataclasses.field(default=None, metadata={"entry": entry})
 
 
+entry_of = _entry  # for tables of other files
+
+
 @dataclass(frozen=True, slots=True)
 class Amount:
     """A quantity that may come in more than one kind: its number in the house unit of the kind it came in."""

@@ -218,7 +218,9 @@ def _life(case: Case, outcome: Outcome, row: int) -> str:
     if math.isnan(life):
         return "outside the range of ISO 281: " + _outside_life(outcome)
     if life > LONG_LIFE:
-        return f"over {_spaced(LONG_LIFE)} h: fatigue will not end this bearing; what may is {_what_ends(case, outcome)}"
+        return (
+            f"over {_spaced(LONG_LIFE)} h: fatigue will not end this bearing; what may is {_what_ends(case, outcome)}"
+        )
     rows = outcome.points.case == 0
     has_cap = bool((outcome.life_factor[rows] >= fatigue.GREATEST_FACTOR).any())
     capped = f"a_ISO held at {fatigue.GREATEST_FACTOR:g}, the cap of the standard" if has_cap else ""

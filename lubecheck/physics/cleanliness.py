@@ -17,7 +17,7 @@ from lubecheck.method import method
 from lubecheck.physics.fatigue import OFF_SCALE, SETTINGS
 from lubecheck.units import Array, Choice, Number, Share
 
-# ISO 4406: the greatest count per ml of scale numbers 0, 1, 2 ...; each step doubles, rounded as the standard prints it.
+# ISO 4406: the greatest count per ml of scale numbers 0, 1, 2 ...; each step doubles, rounded as it is printed.
 # Seen at 14 (160), 17 (1300) and 20 (10 000), the others from memory.
 ISO_4406_UPPER = (
     0.01, 0.02, 0.04, 0.08, 0.16, 0.32, 0.64, 1.3, 2.5, 5, 10, 20, 40, 80, 160, 320, 640, 1300, 2500, 5000, 10_000,
@@ -79,9 +79,9 @@ def setting_of_code(*, at_6: Number, at_14: Number, supply: Supply) -> Number:
     classes = _PADDED[supply]
     fits = (np.asarray(at_6)[..., None] <= classes[..., 0]) & (np.asarray(at_14)[..., None] <= classes[..., 1])
     first = np.argmax(fits, axis=-1)
-    setting: Array = np.take_along_axis(
-        np.broadcast_to(classes[..., 2], fits.shape), first[..., None], axis=-1
-    )[..., 0].astype(np.float64)
+    setting: Array = np.take_along_axis(np.broadcast_to(classes[..., 2], fits.shape), first[..., None], axis=-1)[
+        ..., 0
+    ].astype(np.float64)
     return setting
 
 
@@ -122,7 +122,7 @@ class Description:
 
 # Grease by the examples that ISO 281, Annex A, gives for each class (memory); oil: estimates.
 DESCRIPTIONS = (
-    Description("sealed", "high", (15, 12), "greased for life behind good seals; a closed gearbox, flushed and filtered"),
+    Description("sealed", "high", (15, 12), "greased for life behind good seals; a closed, flushed gearbox"),
     Description("shielded", "normal", (15, 12), "greased for life behind shields"),
     Description("clean hall", "normal", (15, 12), "clean assembly, good seals, clean air"),
     Description("workshop", "slight", (17, 14), "clean assembly, ordinary seals, some dust"),

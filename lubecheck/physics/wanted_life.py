@@ -142,7 +142,7 @@ def allowed_load(
     >>> allowed_load(
     ...     1000, 1.0, 0.5, 1.0, 3, dynamic_rating="53 kN", fatigue_load_limit="1.34 kN", kind="radial ball"
     ... ).to("kN").round(2)
-    <Quantity(7.01, 'kilonewton')>
+    <Quantity(7.0, 'kilonewton')>
     """
 
     def shortfall(rating_over_load: Array) -> Array:
