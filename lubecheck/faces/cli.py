@@ -129,6 +129,27 @@ def life(
     raise typer.Exit(WITHIN_OR_NEAR if result.life_h >= result.wanted_life_h else BEYOND)
 
 
+@app.command(
+    epilog="Example: lubecheck system examples/new_motor.toml examples/slow_roller.toml. "
+    "Exit codes: 0 known, 2 the input was refused, 3 one of the lives is not known."
+)
+def system(
+    cases: Annotated[list[str], typer.Argument(metavar="CASE...", help="The case files of one machine's bearings.")],
+    json: Annotated[bool, typer.Option("--json", help="Print the result as JSON.")] = False,
+) -> None:
+    """Tell the fatigue life of a machine: of all its bearings together, and which one brings the risk."""
+    from lubecheck.faces.life import print_system, system_json
+    from lubecheck.model.reader import load_case
+    from lubecheck.studies.system import study
+
+    result = study([load_case(case) for case in cases])
+    if json:
+        typer.echo(system_json(result))
+    else:
+        print_system(result, console())
+    raise typer.Exit(UNKNOWN if result.life_h is None else WITHIN_OR_NEAR)
+
+
 app.command(epilog=FLUIDS_EPILOG)(fluids)
 
 

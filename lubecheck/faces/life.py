@@ -11,7 +11,9 @@ from rich.text import Text
 from lubecheck.faces.display import amount, figure, number, printable
 from lubecheck.faces.losses import plain_table
 from lubecheck.faces.terminal import STYLES, bullets
+from lubecheck.physics.fatigue import PIT_AREA
 from lubecheck.studies.circuit import CircuitResult
+from lubecheck.studies.system import SystemLife
 from lubecheck.studies.wanted import WantedLife
 
 
@@ -83,6 +85,24 @@ def print_wanted(result: WantedLife, console: Console, system: str = "si") -> No
         )  # fmt: skip
     console.print(table)
     bullets("Notes", (*(f"{answer.question}: {answer.note}" for answer in result.answers), *result.notes), console)
+
+
+def system_json(result: SystemLife) -> str:
+    """Return a machine's life as JSON text."""
+    return json.dumps({"schema": "lubecheck/system/1", **dataclasses.asdict(result)}, indent=2, allow_nan=False)
+
+
+def print_system(result: SystemLife, console: Console) -> None:
+    """Print the lives of a machine's bearings, and of all together."""
+    percent = (1 - result.reliability) * 100
+    table = plain_table("Bearing", f"L{percent:.3g}, h", "share of the risk")
+    table.columns[0].no_wrap = False
+    for part in result.parts:
+        share = "-" if part.share is None else f"{part.share * 100:.0f} %"
+        table.add_row(Text(printable(part.title or part.bearing)), Text(amount(part.life_h, "h", "si")), Text(share))
+    table.add_row(Text("all together", style="bold"), Text(amount(result.life_h, "h", "si"), style="bold"), Text(""))
+    console.print(table)
+    bullets("Notes", (*result.notes, f"a rated life ends with the first pit of about {PIT_AREA:g} mm^2"), console)
 
 
 def _said(value: float | str, unit: str, system: str) -> str:

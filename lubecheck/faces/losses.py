@@ -49,7 +49,8 @@ def print_losses(account: LossAccount, console: Console) -> None:
     for part in account.parts:
         life = part.life_after_h
         table.add_row(
-            Text(part.name), Text(number(part.factor)), Text(number(life)), _bar(life, top, console),
+            Text(" and ".join((*part.covers, part.name))),
+            Text(number(part.factor)), Text(number(life)), _bar(life, top, console),
             Text(number(part.life_if_right_h)), Text(number(part.factor_alone)),
         )  # fmt: skip
     console.print(table)
@@ -60,7 +61,7 @@ def print_losses(account: LossAccount, console: Console) -> None:
                 f"Each row has one more thing as it is, in the order {order}: the factors multiply to the whole, "
                 f"{account.life_h / top:.2g}. On the right, one alone is put right and temperature follows; the "
                 f"product of those factors leaves an interaction of {number(account.interaction)} times, since film, "
-                "dirt and load act through one another. Hours over 200000 say no more than that fatigue is not the end there."
+                "dirt and load act through one another. Hours over 200000 say only that fatigue is not the end there."
             ),
             (0, 0, 0, 2),
         )

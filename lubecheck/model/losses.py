@@ -93,14 +93,26 @@ def account(points: Points, air_properties: Air) -> LossAccount:
     life: Array = judge(join([*chain, *alone]), air_properties).modified_life
     steps, single = life[: len(chain)], life[len(chain) :]
     with np.errstate(all="ignore"):
-        factors = steps[1:] / steps[:-1]
         alone_factors = steps[-1] / single
-        interaction = float(steps[-1] / steps[0] / np.prod(alone_factors))
-    parts = tuple(
-        Loss(name, _finite(factors[i]), _finite(steps[i + 1]), _finite(single[i]), _finite(alone_factors[i]))
-        for i, (name, _) in enumerate(PARTS)
-    )
-    return LossAccount(REFERENCE_WORDS, _finite(steps[0]), _finite(steps[-1]), parts, _finite(interaction))
+        interaction = float(steps[-1] / steps[0] / np.prod(alone_factors, where=np.isfinite(alone_factors)))
+    parts = []
+    known: float = steps[0]
+    covers: tuple[str, ...] = ()
+    for i, (name, _) in enumerate(PARTS):
+        after = steps[i + 1]
+        is_known = bool(np.isfinite(after) and np.isfinite(known))
+        parts.append(
+            Loss(
+                name=name,
+                factor=float(after / known) if is_known else None,
+                life_after_h=_finite(after),
+                life_if_right_h=_finite(single[i]),
+                factor_alone=_finite(alone_factors[i]),
+                covers=covers if is_known else (),
+            )
+        )
+        known, covers = (after, ()) if is_known else (known, (*covers, name))
+    return LossAccount(REFERENCE_WORDS, _finite(steps[0]), _finite(steps[-1]), tuple(parts), _finite(interaction))
 
 
 def _finite(value: float) -> float | None:

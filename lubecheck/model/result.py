@@ -210,6 +210,7 @@ class Loss:
     life_after_h: float | None  # with this thing and those before it as they are
     life_if_right_h: float | None  # the case as it is with this thing alone at its reference
     factor_alone: float | None  # the life there is over that
+    covers: tuple[str, ...]  # parts before it whose own step is outside ISO 281: the factor is of all together
 
 
 @dataclass(frozen=True, slots=True)
@@ -220,7 +221,7 @@ class LossAccount:
     reference_life_h: float | None
     life_h: float | None
     parts: tuple[Loss, ...]
-    interaction: float | None  # of the parts: the whole over the product of the single factors
+    interaction: float | None  # of the parts: the whole over the product of the single factors that are known
 
 
 @dataclass(frozen=True)
