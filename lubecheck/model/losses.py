@@ -44,15 +44,8 @@ def _load(points: Points) -> Points:
 def _viscosity(points: Points) -> Points:
     """An oil of the same slope that has the reference kappa at the reference temperature."""
     needed = REFERENCE_KAPPA * film.reference_viscosity.plain(points.speed, points.pitch_diameter)
-    flat = viscosity.viscosity_from_constants.plain
-    # The first constant of the viscosity law, found by halving: the law has no closed inverse in it.
-    low, high = points.walther_a - 10.0, points.walther_a + 10.0
-    with np.errstate(all="ignore"):
-        for _ in range(60):
-            middle = (low + high) / 2
-            is_thick = ~(flat(np.full(len(points), REFERENCE_TEMPERATURE), a=middle, b=points.walther_b) < needed)
-            low, high = np.where(is_thick, low, middle), np.where(is_thick, middle, high)
-    return dataclasses.replace(points, walther_a=high)
+    a = viscosity.constant_through.plain(REFERENCE_TEMPERATURE, nu=needed, b=points.walther_b)
+    return dataclasses.replace(points, walther_a=a)
 
 
 def _temperature(points: Points) -> Points:
