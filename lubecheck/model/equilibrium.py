@@ -160,7 +160,7 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
     # What leaves by the sinks less what the warm ones bring in: in equilibrium the friction and the machine's watts.
     removed = (heat.heat_out - (heat.heat_in - heat.friction_power)) * lost + points.machine_heat
     return Equilibrium(
-        temperature=(balance.floor + rise) * lost,
+        temperature=np.where(is_held, points.held_temperature, (balance.floor + rise) * lost),
         is_found=is_found,
         residual=(heat.heat_in - heat.heat_out) * lost,
         steps=steps,
