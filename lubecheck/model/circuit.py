@@ -7,10 +7,11 @@ from dataclasses import dataclass
 from pathlib import Path
 from typing import Any
 
+from lubecheck.data.cleanliness import CODE_EXPECTED
 from lubecheck.errors import CaseError, Fault, nearest, shown
+from lubecheck.model.cleanliness import numbers_of
 from lubecheck.model.entries import FILTERS, Case, entry_of
 from lubecheck.model.reader import STANDARD_INPUT, file_text, load_case, parsed, read_table
-from lubecheck.physics import cleanliness
 
 MOST_POSITIONS = 200  # of one circuit: an engine or a large gearbox has tens; more is a slip
 
@@ -101,9 +102,8 @@ def _contradictions(table: CircuitTable, members: list[Member], name: str) -> li
     faults = []
     for key in ("code", "debris_code", "filtered_code"):
         code = getattr(table, key)
-        if code is not None and cleanliness.read_code(code) is None:
-            expected = 'an ISO 4406 code, numbers from large to small, such as "18/15/12" or "-/15/12"'
-            faults.append(Fault(f"circuit.{key}", shown(code), expected, where=name))
+        if code is not None and numbers_of(code) is None:
+            faults.append(Fault(f"circuit.{key}", shown(code), CODE_EXPECTED, where=name))
     names = [member.name for member in members]
     if table.damaged is not None and members and table.damaged not in names:
         near = nearest(table.damaged, names)

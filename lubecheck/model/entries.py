@@ -494,7 +494,7 @@ class Case:
     @property
     def setting(self) -> str | None:
         """The cleanliness as stated, or else by the code of the oil in use."""
-        stated = self._stated
+        stated = self.stated_setting
         if stated is not None or self.analysis is None or self.analysis.code is None:
             return None if stated == fatigue.OFF_SCALE else stated
         return setting_of(self.analysis.code)
@@ -502,12 +502,13 @@ class Case:
     @property
     def is_beyond_settings(self) -> bool:
         """The oil is dirtier than ISO 281 has a setting for, by what is stated or else by the oil in use."""
-        if self._stated is not None:
-            return self._stated == fatigue.OFF_SCALE
+        if self.stated_setting is not None:
+            return self.stated_setting == fatigue.OFF_SCALE
         return self.setting is None and self.analysis is not None and self.analysis.code is not None
 
     @property
-    def _stated(self) -> str | None:
+    def stated_setting(self) -> str | None:
+        """The cleanliness as [cleanliness] states it, in one way or another."""
         return stated_setting(self.cleanliness, is_grease=self.is_grease, supply=self.oil.supply)
 
     @property

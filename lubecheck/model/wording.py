@@ -397,11 +397,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         source = case.bearing.basis.get(key, "own-estimate")
         unit = _BEARING_UNITS.get(key, "")
         said.append(Assumed(f"[bearing] {key}", f"{value:.4g} {unit}, {low:.2f} to {high:.2f} times that", source))
-    if (
-        not case.is_grease
-        and case.cleanliness.water is None
-        and not any(item.name == "[cleanliness] water" for item in said)
-    ):
+    if not case.is_grease and case.water is None and not any(item.name == "[cleanliness] water" for item in said):
         ppm = cleanliness.WATER_REFERENCE * 1e6
         said.append(Assumed("[cleanliness] water", f"dry: no more than {ppm:.0f} ppm in the oil", "cantley"))
     said += [Assumed("[lubricant]", text, "common-practice") for text in case.lubricant.assumed]

@@ -16,9 +16,10 @@ from lubecheck.data import air
 from lubecheck.model import limits, wording
 from lubecheck.model.check import readings
 from lubecheck.model.circuit import Circuit
+from lubecheck.model.cleanliness import numbers_of
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import Outcome, judge
-from lubecheck.model.points import Points, from_rows, join, rows_of
+from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join, rows_of
 from lubecheck.physics import cleanliness, fatigue
 
 CAUTIONS = (
@@ -102,7 +103,7 @@ def study(circuit: Circuit, *, air_properties: Air = air.properties) -> CircuitR
         held_temperature=np.where(is_held, temperature, np.nan),
         oil_inlet=np.where(is_held, points.oil_inlet, temperature),
     )
-    codes = [fatigue.SETTINGS.index(state.setting) for state in states]
+    codes = [_code_of(state.setting) for state in states]
     outcome = judge(join(points.changed(setting=code) for code in codes), air_properties)
     lives = outcome.modified_life.reshape(len(states), len(circuit.members), 2)
     judged = outcome.judged["fatigue_life"].state.reshape(lives.shape)
@@ -140,11 +141,16 @@ def oil_states(circuit: Circuit) -> tuple[OilState, ...]:
     asked.append(("filtered", table.filtered_code, table.filtered_by or now))
     states = []
     for name, code, placed in asked:
-        numbers = None if code is None else cleanliness.read_code(code)
+        numbers = None if code is None else numbers_of(code)
         if code is not None and numbers is not None:
             setting = cleanliness.setting_named(numbers, is_in_line=placed == "in line")
             states.append(OilState(name, code, placed, setting))
     return tuple(states)
+
+
+def _code_of(setting: str) -> int:
+    """Return the code of a setting; oil dirtier than ISO 281 has one for leaves the lives unknown."""
+    return BEYOND_SETTINGS if setting == fatigue.OFF_SCALE else fatigue.SETTINGS.index(setting)
 
 
 def _shared_temperature(circuit: Circuit, points: Points, air_properties: Air) -> tuple[float, list[str]]:

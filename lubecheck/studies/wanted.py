@@ -18,7 +18,7 @@ from lubecheck.model.check import readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import judge
-from lubecheck.model.points import Points, from_rows, join, rows_of
+from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join, rows_of
 from lubecheck.physics import fatigue, viscosity
 from lubecheck.physics.wanted_life import bracketed_root
 from lubecheck.units import Array
@@ -144,9 +144,11 @@ def study(case: Case, life: float | None = None, *, air_properties: Air = air.pr
 
 def _cleanliness(points: Points, wanted: float, air_properties: Air) -> Answer:
     """Return the dirtiest class of the same supply that reaches the life."""
-    present = fatigue.SETTINGS[points.setting[0]]
+    code = int(points.setting[0])
+    present = fatigue.OFF_SCALE if code == BEYOND_SETTINGS else fatigue.SETTINGS[code]
     supply = present.partition(" -/")[0] if " -/" in present else ""
     classes = [name for name in fatigue.SETTINGS if (name.partition(" -/")[0] if " -/" in name else "") == supply]
+    classes = [name for name in classes if name != fatigue.OFF_SCALE]
     outcome = judge(join(points.changed(setting=fatigue.SETTINGS.index(name)) for name in classes), air_properties)
     reaching = [i for i in range(len(classes)) if outcome.modified_life[i] >= wanted]
     if not reaching:

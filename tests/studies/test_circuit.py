@@ -76,10 +76,16 @@ def test_the_circuits_figures_are_those_of_a_check_at_the_same_oil(circuit, resu
 
 
 def test_a_dirtier_code_never_lengthens_a_life(circuit):
-    codes = ("-/13/10", "-/15/12", "-/17/14", "-/19/16", "-/21/18", "-/23/20")
+    codes = ("-/13/10", "-/15/12", "-/17/14", "-/19/16", "-/21/18")
     lives = [changed(circuit, debris_code=code).others_life_h[1] for code in codes]
     assert lives == sorted(lives, reverse=True)
     assert lives[-1] < lives[0]
+
+
+def test_oil_dirtier_than_the_standard_covers_is_unknown(circuit):
+    lost = changed(circuit, debris_code="-/23/20")
+    assert [life.state for member in lost.members for life in member.lives[1:2]] == ["unknown"] * 3
+    assert lost.others_life_h[1] is None
 
 
 def test_an_in_line_filter_is_worth_more_than_one_off_line(circuit, result):
