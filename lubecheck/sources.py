@@ -35,6 +35,8 @@ SOURCES: Mapping[str, Source] = {
     "iso-3448": Source("ISO 3448, ISO viscosity classification", "seen"),
     "iso-281": Source("ISO 281:2007, dynamic load ratings and rating life", "checked"),
     "iso-tr-1281-2": Source("ISO/TR 1281-2:2008, notes on ISO 281, modified rating life", "memory"),
+    "iso-4406": Source("ISO 4406, coding the level of contamination by solid particles", "seen"),
+    "cantley": Source("Cantley 1977, the effect of water in lubricating oil on bearing fatigue life", "memory"),
     "bearing-handbooks": Source("rolling bearing handbooks, figures they agree on", "memory"),
     "shigley": Source("Shigley, Mechanical Engineering Design, shafts and tapered roller bearings", "memory"),
     "statics": Source("statics of a beam on two supports, engineering handbooks", "checked"),

@@ -70,6 +70,9 @@ def check(
     exact_fluids: Annotated[
         bool, typer.Option("--exact-fluids", help="Ask CoolProp for air instead of the table (slower).")
     ] = False,
+    losses: Annotated[
+        bool, typer.Option("--losses", help="Print the loss account of the fatigue life too (JSON always has it).")
+    ] = False,
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
@@ -86,7 +89,7 @@ def check(
     else:
         from lubecheck.faces.terminal import print_result
 
-        print_result(result, console(), units.value)
+        print_result(result, console(), units.value, losses=losses)
     raise typer.Exit(exit_code(result.verdict, fail_on.value))
 
 
@@ -146,6 +149,73 @@ def plan(
 
 
 _GRAVITY = (WITHIN_OR_NEAR, UNKNOWN, BEYOND)  # beyond is the worst that a plan may hold
+
+
+@app.command(
+    epilog="Example: lubecheck circuit examples/gearbox/circuit.toml. Exit codes: those of check, for the oil as it is."
+)
+def circuit(
+    file: Annotated[str, typer.Argument(metavar="FILE", help="A circuit file in TOML, or - for standard input.")],
+    json: Annotated[bool, typer.Option("--json", help="Print the result as JSON.")] = False,
+    units: Annotated[Units, typer.Option(help="Units of the terminal; JSON keeps SI-derived units.")] = Units.SI,
+) -> None:
+    """Tell what the debris of one bearing does to all others in its oil, and what a filter is worth, in hours."""
+    from lubecheck.faces.life import circuit_json, print_circuit
+    from lubecheck.model.circuit import load_circuit
+    from lubecheck.studies.circuit import study
+
+    result = study(load_circuit(file))
+    if json:
+        typer.echo(circuit_json(result))
+    else:
+        print_circuit(result, console(), units.value)
+    raise typer.Exit(exit_code(result.verdict))
+
+
+@app.command(
+    epilog='Example: lubecheck life examples/oil_bath_pump.toml --wanted "60000 h". '
+    "Exit codes: 0 the life is reached, 1 it is not, 2 the input was refused, 3 it is not known."
+)
+def life(
+    case: Annotated[str, typer.Argument(metavar="CASE", help="A case file in TOML, or - for standard input.")],
+    wanted: Annotated[str, typer.Option(help="The wanted life, in place of the case's own.")] = "",
+    json: Annotated[bool, typer.Option("--json", help="Print the result as JSON.")] = False,
+    units: Annotated[Units, typer.Option(help="Units of the terminal; JSON keeps SI-derived units.")] = Units.SI,
+) -> None:
+    """Tell which load, rating, oil or cleanliness alone would reach the wanted fatigue life."""
+    from lubecheck.faces.life import print_wanted, wanted_json
+    from lubecheck.model.reader import load_case, read_life
+    from lubecheck.studies.wanted import study
+
+    result = study(load_case(case), read_life(wanted) if wanted else None)
+    if json:
+        typer.echo(wanted_json(result))
+    else:
+        print_wanted(result, console(), units.value)
+    if result.life_h is None:
+        raise typer.Exit(UNKNOWN)
+    raise typer.Exit(WITHIN_OR_NEAR if result.life_h >= result.wanted_life_h else BEYOND)
+
+
+@app.command(
+    epilog="Example: lubecheck system examples/new_motor.toml examples/slow_roller.toml. "
+    "Exit codes: 0 known, 2 the input was refused, 3 one of the lives is not known."
+)
+def system(
+    cases: Annotated[list[str], typer.Argument(metavar="CASE...", help="The case files of one machine's bearings.")],
+    json: Annotated[bool, typer.Option("--json", help="Print the result as JSON.")] = False,
+) -> None:
+    """Tell the fatigue life of a machine: of all its bearings together, and which one brings the risk."""
+    from lubecheck.faces.life import print_system, system_json
+    from lubecheck.model.reader import load_case
+    from lubecheck.studies.system import study
+
+    result = study([load_case(case) for case in cases])
+    if json:
+        typer.echo(system_json(result))
+    else:
+        print_system(result, console())
+    raise typer.Exit(UNKNOWN if result.life_h is None else WITHIN_OR_NEAR)
 
 
 app.command(epilog=FLUIDS_EPILOG)(fluids)

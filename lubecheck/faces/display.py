@@ -3,8 +3,12 @@
 from __future__ import annotations
 
 import math
+from typing import TYPE_CHECKING
 
 from lubecheck.units import KINDS, Kind, from_house
+
+if TYPE_CHECKING:
+    from rich.console import Console
 
 SYSTEMS = ("si", "inch")
 
@@ -82,3 +86,8 @@ def figure(value: float | None, unit: str, system: str) -> str:
 def printable(text: str) -> str:
     """Return a user's text without control characters, which could steer a terminal."""
     return "".join(c if c.isprintable() else " " for c in text)
+
+
+def is_plain(console: Console) -> bool:
+    """Tell a terminal that shows little more than ASCII."""
+    return not console.encoding.lower().startswith("utf")

@@ -52,6 +52,8 @@ def of_result(result: Result) -> dict[str, Any]:
         ],
         "interval_spread": result.interval_spread,
         "amounts": figures(result.amounts),
+        "damage": [dataclasses.asdict(point) for point in result.damage],
+        "losses": dataclasses.asdict(result.losses),
         "plan": dataclasses.asdict(result.plan),
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
         "notes": list(result.notes),

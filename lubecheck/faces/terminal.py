@@ -12,7 +12,8 @@ from rich.padding import Padding
 from rich.table import Table
 from rich.text import Text
 
-from lubecheck.faces.display import amount, figure, number, printable, shown_unit
+from lubecheck.faces.display import amount, figure, is_plain, number, printable, shown_unit
+from lubecheck.faces.losses import print_damage, print_losses
 from lubecheck.model.result import Figures, Limit, PlanLine, Result
 from lubecheck.sources import cite
 
@@ -22,16 +23,19 @@ _BAR = 10  # cells of a bar that is full at the limit
 _WIDE = 100  # columns from which sources stand beside the limits
 
 
-def print_result(result: Result, console: Console, system: str = "si") -> None:
-    """Print a result."""
+def print_result(result: Result, console: Console, system: str = "si", *, losses: bool = False) -> None:
+    """Print a result; its loss account where that is asked for."""
     _heading(result, console)
     _limits(result, console, system)
     _operating(result, console, system)
     _interval_lines(result, console)
+    print_damage(result.damage, console, system)
+    if losses:
+        print_losses(result.losses, console)
     _plan(result, console, system)
-    _bullets("Notes", result.notes, console)
-    _bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
-    _bullets("Cautions", result.cautions, console)
+    bullets("Notes", result.notes, console)
+    bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
+    bullets("Cautions", result.cautions, console)
 
 
 def _heading(result: Result, console: Console) -> None:
@@ -93,12 +97,7 @@ def _limits(result: Result, console: Console, system: str) -> None:
         console.print(Text("\nWhy", style="bold"))
         console.print(why)
     if not is_wide:
-        _bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console)
-
-
-def _is_plain(console: Console) -> bool:
-    """Tell a terminal that shows little more than ASCII."""
-    return not console.encoding.lower().startswith("utf")
+        bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console)
 
 
 def _words(name: str) -> str:
@@ -113,7 +112,7 @@ def _use(limit: Limit) -> str:
 
 def _bar(limit: Limit, console: Console) -> Text:
     """Return a bar that is full at the limit; a part beyond it is marked with a plus."""
-    mark, blank = ("#", ".") if _is_plain(console) else ("\N{BLACK SQUARE}", "\N{MIDDLE DOT}")
+    mark, blank = ("#", ".") if is_plain(console) else ("\N{BLACK SQUARE}", "\N{MIDDLE DOT}")
     if limit.state == "unknown":
         return Text("?".ljust(_BAR + 1))
     use = 2.0 if limit.use is None else limit.use
@@ -173,7 +172,7 @@ def _plan(result: Result, console: Console, system: str) -> None:
         console.print(Text(f"  Only once this is settled: {', '.join(open_limits)}", style=STYLES[result.verdict]))
     console.print(
         Padding(
-            Text((" | " if _is_plain(console) else " · ").join(plan_parts(plan, system)), style="bold"), (0, 0, 0, 2)
+            Text((" | " if is_plain(console) else " · ").join(plan_parts(plan, system)), style="bold"), (0, 0, 0, 2)
         )
     )
     for i, step in enumerate(plan.steps, start=1):
@@ -210,7 +209,8 @@ def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
     return f" = {strokes} strokes of {figure(stroke_g, 'g', system)} ({figure(strokes * stroke_g, 'g', system)})"
 
 
-def _bullets(heading: str, lines: Iterable[str], console: Console) -> None:
+def bullets(heading: str, lines: Iterable[str], console: Console) -> None:
+    """Print a heading and its lines, where there are any."""
     lines = tuple(lines)
     if not lines:
         return

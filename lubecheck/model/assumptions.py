@@ -12,6 +12,7 @@ from dataclasses import dataclass
 from typing import Any
 
 from lubecheck.model.entries import Case
+from lubecheck.physics import cleanliness, grease_life
 
 # Multiples of D^2 that the outer area of a housing comes to. Estimates of this program from ordinary proportions of
 # such housings, (low, nominal, high); a flange is the smallest.
@@ -32,6 +33,8 @@ DIRTIEST_CODE_FROM = 84.3
 # state less, so that leaving it unsaid is never milder than saying it.
 ORDINARY_RUN_UP = 5.0  # s: estimate, a start that nobody calls rapid takes 2 to 20 s
 SHORTEST_RUN_UP = 1e-3  # s a mm of mean diameter
+WETTEST_OIL = cleanliness.WATER_RANGE[1]  # beyond it the effect on life is not known
+WET = tuple(answer.word for answer in grease_life.WATER[-2:])  # surroundings that put water into the oil
 LARGEST_ALTITUDE = 5000e3  # mm, the highest that a case may state
 
 
@@ -94,6 +97,10 @@ def _plans_running_hours(case: Case) -> bool:
     return case.grease.interval is not None and not case.grease.interval.is_calendar
 
 
+def _may_be_wet(case: Case) -> bool:
+    return not case.is_grease and case.water is None and case.surroundings.water in WET
+
+
 FACTS: tuple[Fact, ...] = (
     Fact("surroundings", "draught", 0.0, 0.0, "still air", "common-practice", THERMAL,
          lambda case: case.surroundings.draught is None and case.housing.conductance is None),
@@ -128,6 +135,7 @@ FACTS: tuple[Fact, ...] = (
          lambda case: _no_setting(case) and not _is_worse_in_a_bath(case)),
     Fact("cleanliness", "setting", "normal", "bath -/21/18", "normal cleanliness", "iso-281:annex A", ("fatigue_life",),
          lambda case: _no_setting(case) and _is_worse_in_a_bath(case)),
+    Fact("cleanliness", "water", 0.0, WETTEST_OIL, "dry", "cantley", ("fatigue_life",), _may_be_wet),
 )  # fmt: skip
 
 

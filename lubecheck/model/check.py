@@ -21,9 +21,10 @@ from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import Outcome, judge
 from lubecheck.model.limits import NEAR_CODE, STATES, UNKNOWN
+from lubecheck.model.losses import account
 from lubecheck.model.plan import plan_line
 from lubecheck.model.points import Points, from_rows, join, rows_of
-from lubecheck.model.result import Grease, Life, Limit, Operating, PlanLine, Result
+from lubecheck.model.result import Damage, Grease, Life, Limit, Operating, PlanLine, Result
 from lubecheck.units import Array
 
 # Unit of the demand and the allowance of each limit, and where the limit comes from unless it says otherwise.
@@ -111,6 +112,8 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
         life=_life(variants),
         loads=side_figures.loads_at(case, outcome),
         speeds=side_figures.speeds_at(case, outcome, variants.rows),
+        damage=_damage(variants),
+        losses=account(outcome.points.take(slice(0, variants.rows)), air_properties),
         plan=plan,
         remedies=(),
         notes=wording.notes(case, outcome),
@@ -239,6 +242,27 @@ def _life(variants: Variants) -> Life:
         }
     )
     return made
+
+
+def _damage(variants: Variants) -> tuple[Damage, ...]:
+    outcome, points = variants.outcome, variants.outcome.points
+    rows = slice(0, variants.rows)
+    time = points.share[rows] / points.share[rows].sum()
+    with np.errstate(all="ignore"):
+        damage = time / outcome.row_life[rows] * outcome.modified_life[0]
+    return tuple(
+        Damage(
+            share_of_time=float(time[row]),
+            share_of_damage=_finite(damage[row]),
+            life_h=_finite(outcome.row_life[row]),
+            temperature=_finite(outcome.state.temperature[row]),
+            viscosity_ratio=_finite(outcome.kappa[row]),
+            contamination_factor=_finite(outcome.contamination[row]),
+            life_modification_factor=_finite(outcome.life_factor[row]),
+            load_ratio=float(outcome.load_ratio[row]),
+        )
+        for row in range(variants.rows)
+    )
 
 
 def _finite(value: float) -> float | None:

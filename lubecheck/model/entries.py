@@ -16,12 +16,14 @@ from lubecheck.data import families, lubricants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.cleanliness import setting_of
 from lubecheck.data.oil_analysis import OilAnalysis
-from lubecheck.physics import fatigue, grease_amount, grease_corrections, grease_life
+from lubecheck.model.cleanliness import stated_setting
+from lubecheck.physics import cleanliness, fatigue, grease_amount, grease_corrections, grease_life
 from lubecheck.units import KINDS
 
 SUPPLIES = ("bath", "circulating", "mist")
 RELIEFS = ("open", "closed")
 HOUSINGS = ("pedestal", "split plummer", "flange", "motor end shield", "gearbox wall")
+FILTERS = ("in line", "off line", "none")
 SERVICES = ("quiet", "normal", "shock")
 
 
@@ -84,6 +86,9 @@ def _entry(
     if need:
         return dataclasses.field(metadata={"entry": entry})
     return dataclasses.field(default=None, metadata={"entry": entry})
+
+
+entry_of = _entry  # for tables of other files
 
 
 @dataclass(frozen=True, slots=True)
@@ -495,7 +500,23 @@ class OilPlan:
 class Cleanliness:
     """[cleanliness]: what dirt the lubricant carries."""
 
-    setting: str | None = _entry("fact", words=fatigue.SETTINGS, meaning="cleanliness by ISO 281 annex A")
+    setting: str | None = _entry("fact", words=fatigue.SETTINGS[:-1], meaning="cleanliness by ISO 281 annex A")
+    described: str | None = _entry("fact", words=cleanliness.WORDS, meaning="cleanliness in plain words")
+    code: str | None = _entry("fact", meaning="cleanliness of the oil by ISO 4406", example='"18/15/12"')
+    count_6: float | None = _entry(
+        "fact", "number", 0, 2.5e6, meaning="oil analysis: particles over 6 um per ml", example="210"
+    )
+    count_14: float | None = _entry(
+        "fact", "number", 0, 2.5e6, meaning="oil analysis: particles over 14 um per ml", example="38"
+    )
+    filter: str | None = _entry("fact", words=FILTERS, meaning="where the oil is filtered")
+    filter_size: float | None = _entry(
+        "fact", "length", 1e-4, 1, meaning="particle size that the filter's beta is for", example='"12 um"'
+    )
+    filter_beta: float | None = _entry(
+        "fact", "number", 1, 1e5, meaning="filter beta: particles before over those after it", example="200"
+    )
+    water: float | None = _entry("fact", "share", 0, 1, meaning="water in the oil, by mass", example='"100 ppm"')
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -506,7 +527,7 @@ class Requirements:
         "requirement", "time", 10, 1e6, meaning="modified rating life wanted", example='"40000 h"'
     )
     reliability: float | None = _entry(
-        "requirement", "share", 0.9, 0.9995, meaning="reliability of that life", example='"90 %"'
+        "requirement", "share", 0.5, 0.9995, meaning="reliability of that life", example='"90 %"'
     )
     grease_reliability: float | None = _entry(
         "requirement",
@@ -556,14 +577,29 @@ class Case:
     @property
     def setting(self) -> str | None:
         """The cleanliness as stated, or else by the code of the oil in use."""
-        if self.cleanliness.setting is not None or self.analysis is None or self.analysis.code is None:
-            return self.cleanliness.setting
+        stated = self.stated_setting
+        if stated is not None or self.analysis is None or self.analysis.code is None:
+            return None if stated == fatigue.OFF_SCALE else stated
         return setting_of(self.analysis.code)
 
     @property
     def is_beyond_settings(self) -> bool:
-        """The oil in use is dirtier than ISO 281 has a setting for, and nothing else is stated."""
+        """The oil is dirtier than ISO 281 has a setting for, by what is stated or else by the oil in use."""
+        if self.stated_setting is not None:
+            return self.stated_setting == fatigue.OFF_SCALE
         return self.setting is None and self.analysis is not None and self.analysis.code is not None
+
+    @property
+    def stated_setting(self) -> str | None:
+        """The cleanliness as [cleanliness] states it, in one way or another."""
+        return stated_setting(self.cleanliness, is_grease=self.is_grease, supply=self.oil.supply)
+
+    @property
+    def water(self) -> float | None:
+        """Water in the oil as stated, or else by the analysis of the oil in use."""
+        if self.cleanliness.water is not None or self.analysis is None:
+            return self.cleanliness.water
+        return self.analysis.water
 
 
 TABLES: dict[str, type] = {

@@ -149,6 +149,10 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
     with np.errstate(all="ignore"):
         balance = Balance(points, air_properties)
         rise, is_found, steps = _root(balance)
+        # A bearing whose temperature is stated needs no balance: its residual is the heat that holds it there.
+        is_held = ~np.isnan(points.held_temperature)
+        rise = np.where(is_held, points.held_temperature - balance.floor, rise)
+        is_found |= is_held
         heat = balance.at(rise)
     per_torque = friction.power.plain(1.0, points.speed)
     lost = np.where(is_found, 1.0, np.nan)
@@ -156,7 +160,7 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
     # What leaves by the sinks less what the warm ones bring in: in equilibrium the friction and the machine's watts.
     removed = (heat.heat_out - (heat.heat_in - heat.friction_power)) * lost + points.machine_heat
     return Equilibrium(
-        temperature=(balance.floor + rise) * lost,
+        temperature=np.where(is_held, points.held_temperature, (balance.floor + rise) * lost),
         is_found=is_found,
         residual=(heat.heat_in - heat.heat_out) * lost,
         steps=steps,

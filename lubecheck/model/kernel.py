@@ -9,10 +9,10 @@ import numpy as np
 
 from lubecheck.data import air
 from lubecheck.model import intervals, limits
-from lubecheck.model.equilibrium import Air, Equilibrium, solve
+from lubecheck.model.equilibrium import TOP_TEMPERATURE, Air, Equilibrium, solve
 from lubecheck.model.limits import Judged
 from lubecheck.model.points import BEYOND_SETTINGS, Codes, Flags, Points
-from lubecheck.physics import fatigue, film, grease_amount, loads
+from lubecheck.physics import cleanliness, fatigue, film, grease_amount, loads
 from lubecheck.units import Array
 
 PROPOSED_SHARE = 0.8  # of the allowed interval that is proposed: leaves a fifth for what varies, so that it is `within`
@@ -30,6 +30,7 @@ class Outcome:
     contamination: Array
     life_factor: Array
     load_ratio: Array
+    row_life: Array  # modified life, were the row all there is
     # positions
     hottest: Codes  # row of the operating point
     rating_life: Array
@@ -58,8 +59,11 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         nu_1 = film.reference_viscosity.plain(p.speed, p.pitch_diameter)
         kappa = film.viscosity_ratio.plain(nu=state.viscosity, nu_1=nu_1)
         e_c, factor = _life_factor(p, state, kappa)
-        load_ratio = state.equivalent_load / p.dynamic_rating
-        rating, modified = _lives(p, state, load_ratio, factor)
+        # What has no equilibrium counts as hot as the hottest that has one.
+        hot = fatigue.hot_rating_factor.plain(np.where(state.is_found, state.temperature, TOP_TEMPERATURE))
+        load_ratio = state.equivalent_load / (p.dynamic_rating * hot)
+        row_rating, row_life = _lives(p, state, load_ratio, factor)
+        rating, modified = intervals.damage_sum(p, row_rating), intervals.damage_sum(p, row_life)
         lines = intervals.of(p, state.temperature, load_ratio)
         allowed = lines.allowed
         planned = p.interval[p.starts]
@@ -98,6 +102,7 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         load_ratio=load_ratio,
         hottest=_hottest(p, state),
         rating_life=rating,
+        row_life=row_life,
         modified_life=modified,
         lines=lines,
         allowed_interval=allowed,
@@ -131,16 +136,19 @@ def _life_factor(points: Points, state: Equilibrium, kappa: Array) -> tuple[Arra
 
 
 def _lives(points: Points, state: Equilibrium, load_ratio: Array, factor: Array) -> tuple[Array, Array]:
-    """Return the basic and the modified rating life of every position, by the linear sum of damage over its rows."""
+    """Return the basic and the modified rating life of every row; NaN where ISO 281 does not cover it.
+
+    Rings that run hotter than they are stabilised for, and oil wetter than was ever tested, are not covered either.
+    """
     p = points
-    revolutions = fatigue.rating_life.plain(
-        dynamic_rating=p.dynamic_rating, load=state.equivalent_load, exponent=p.exponent
-    )
+    revolutions = fatigue.rating_life.plain(dynamic_rating=1.0, load=load_ratio, exponent=p.exponent)
     hours = fatigue.life_hours.plain(revolutions, p.speed)
     a1 = fatigue.reliability_factor.plain(p.reliability)
     modified = fatigue.modified_life.plain(basic_life=hours, reliability_factor=a1, life_modification_factor=factor)
-    modified = np.where((load_ratio <= fatigue.GREATEST_LOAD_RATIO) & takes_loads(p), modified, np.nan)
-    return intervals.damage_sum(p, hours), intervals.damage_sum(p, modified)
+    modified = modified * cleanliness.water_factor.plain(p.water)
+    is_valid = (load_ratio <= fatigue.GREATEST_LOAD_RATIO) & takes_loads(p)
+    is_valid &= (state.temperature <= p.stabilised_to) & ~cleanliness.water_factor.outside(content=p.water)
+    return hours, np.where(is_valid, modified, np.nan)
 
 
 def takes_loads(points: Points) -> Flags:

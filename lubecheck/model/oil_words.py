@@ -24,10 +24,10 @@ def notes(case: Case) -> Iterator[str]:
         yield _viscosity(found)
     if found.water is not None:
         yield _water(found)
-    if found.code is not None and case.cleanliness.setting is not None:
+    if found.code is not None and case.stated_setting is not None:
         read = setting_of(found.code) or "dirtier than ISO 281 has a setting for"
-        yield f"cleanliness {found.code} by analysis ({read}): the stated setting {case.cleanliness.setting} stands"
-    if case.is_beyond_settings:
+        yield f"cleanliness {found.code} by analysis ({read}): the stated setting {case.stated_setting} stands"
+    if case.is_beyond_settings and found.code is not None:
         over_6, over_14, _ = oil_settings()[-1]
         yield (
             f"cleanliness {found.code} by analysis is dirtier than ISO 281 has a setting for (up to "
@@ -61,7 +61,7 @@ def _water(found: OilAnalysis) -> str:
             "watch": f"over {watch}, which common practice watches: find where it comes in",
             "act": f"over {act}, at which common practice acts: dry or change the oil, find where it comes in",
         }[found.water_grade]
-    return f"{said}: {judged}. Water shortens fatigue life and is not in the life figure"
+    return f"{said}: {judged}. Water shortens fatigue life: counted from 100 to 400 ppm, above that the life is unknown"
 
 
 def assumed(case: Case) -> Iterator[Assumed]:
@@ -76,7 +76,7 @@ def assumed(case: Case) -> Iterator[Assumed]:
             "point, its slope kept"
         )
         yield Assumed("[lubricant] nu_40, nu_100", text, "astm-d341")
-    if found.code is not None and case.cleanliness.setting is None and case.setting is not None:
+    if found.code is not None and case.stated_setting is None and case.setting is not None:
         text = f"{case.setting}, the cleanest that is no cleaner than {found.code} by analysis"
         if case.oil.supply == "circulating":
             text += (

@@ -121,6 +121,7 @@ class Points:
     walther_b: Array
     density: Array
     lowest: Array
+    stabilised_to: Array  # degC up to which the rings keep their size
     highest: Array  # of lubricant, cage, seals, rings and the user's limit
     limit_origin: Codes
     life_reference: Array
@@ -141,6 +142,7 @@ class Points:
     oil_inlet: Array
     oil_conductance: Array
     machine_heat: Array
+    held_temperature: Array  # degC at which the bearing is held; NaN where it is solved for
     interval_factor: Array  # dust, water, vibration, orientation, turning ring, air flow together
     inside_factor: Array  # the part of it that reaches the grease of a closed bearing
     water_share: Array  # of an oil change interval
@@ -161,6 +163,7 @@ class Points:
     level: Array
     # requirements
     setting: Codes
+    water: Array  # in the oil, by mass
     life_target: Array
     reliability: Array
     least_kappa: Array
@@ -360,6 +363,7 @@ def _lubricant_columns(case: Case) -> dict[str, float]:
         "walther_b": float(b),
         "density": lubricant.density_15,
         "lowest": _known(lubricant.lowest),
+        "stabilised_to": float(case.bearing.stabilised_to),
         "highest": highest,
         "limit_origin": 0 if math.isnan(highest) else limits.index(highest),
         "life_reference": _known(lubricant.life_reference),
@@ -438,6 +442,7 @@ def _housing_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, f
         "fin_conductance": fin,
         "oil_conductance": STREAM_CONTACT * float(stream),
         "machine_heat": housing.machine_heat or 0.0,
+        "held_temperature": math.nan,
     }
 
 
@@ -446,9 +451,11 @@ def _requirement_columns(case: Case, reading: Mapping[str, Any], family: Family)
     vibration = vibration_class(case, reading)
     service = limits.service or ("shock" if vibration == grease_life.VIBRATION[-1].word else "normal")
     setting = None if case.is_beyond_settings else case.setting or reading["[cleanliness] setting"]
+    water = case.water if case.water is not None else reading.get("[cleanliness] water", 0.0)
     hours = _hours_per_day(case, reading)
     return {
         "setting": BEYOND_SETTINGS if setting is None else fatigue.SETTINGS.index(setting),
+        "water": water,
         "life_target": limits.life or DEFAULT_LIFE,
         "reliability": limits.reliability or DEFAULT_RELIABILITY,
         "least_kappa": limits.least_viscosity_ratio or DEFAULT_KAPPA,

@@ -23,6 +23,7 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis, analyse
 from lubecheck.errors import CaseError, Fault, InputError, nearest, shown
+from lubecheck.model.cleanliness import contradictions
 from lubecheck.model.entries import (
     TABLES,
     Amount,
@@ -59,8 +60,17 @@ def load_case(path: str | Path, *, own: Iterable[Lubricant] = ()) -> Case:
     Raises CaseError, which holds every fault found.
     """
     name = "standard input" if str(path) == STANDARD_INPUT else str(path)
+    return read_case(_file_bytes(path, name), name, own=own)
+
+
+def file_text(path: str | Path, name: str) -> str:
+    """Return the text of a file; "-" is standard input. Raises CaseError where it cannot be read."""
+    return _decoded(_file_bytes(path, name), name)
+
+
+def _file_bytes(path: str | Path, name: str) -> bytes:
     try:
-        raw = sys.stdin.buffer.read() if str(path) == STANDARD_INPUT else Path(path).read_bytes()
+        return sys.stdin.buffer.read() if str(path) == STANDARD_INPUT else Path(path).read_bytes()
     except IsADirectoryError:
         raise _whole_file(name, "a directory", "a case file in TOML") from None
     except FileNotFoundError:
@@ -68,7 +78,6 @@ def load_case(path: str | Path, *, own: Iterable[Lubricant] = ()) -> Case:
     except (OSError, ValueError) as refused:
         reason = refused.strerror if isinstance(refused, OSError) and refused.strerror else "not a file name"
         raise _whole_file(name, reason, "a readable case file in TOML") from None
-    return read_case(raw, name, own=own)
 
 
 def read_case(raw: bytes | str, name: str = "case", *, own: Iterable[Lubricant] = ()) -> Case:
@@ -77,17 +86,40 @@ def read_case(raw: bytes | str, name: str = "case", *, own: Iterable[Lubricant] 
     Raises CaseError, which holds every fault found.
     """
     text = _decoded(raw, name)
-    try:
-        document = tomllib.loads(text)
-    except tomllib.TOMLDecodeError as refused:
-        raise CaseError([_toml_fault(str(refused), text, name)]) from None
-    except RecursionError:
-        raise _whole_file(name, "values nested too deeply", "a case file in TOML") from None
+    document = parsed(text, name)
     reading = _Reading(name, key_lines(text), tuple(own))
     case = reading.case(document)
     if reading.faults or case is None:
         raise CaseError(sorted(reading.faults, key=lambda fault: fault.line or 0))
     return case
+
+
+def parsed(text: str, name: str) -> dict[str, Any]:
+    """Return the tables of a text in TOML. Raises CaseError where it is none."""
+    try:
+        return tomllib.loads(text)
+    except tomllib.TOMLDecodeError as refused:
+        raise CaseError([_toml_fault(str(refused), text, name)]) from None
+    except RecursionError:
+        raise _whole_file(name, "values nested too deeply", "a case file in TOML") from None
+
+
+def read_table(
+    document: Mapping[str, Any], text: str, name: str, key: str, table: type[T]
+) -> tuple[T | None, list[Fault]]:
+    """Read one table of another file by its entries: the table, or None, and what was refused."""
+    reading = _Reading(name, key_lines(text))
+    read = reading._table(document, key, table, is_need=True)
+    return read, reading.faults
+
+
+def read_life(text: str) -> float:
+    """Return a wanted life in hours from its text. Raises CaseError where it is none."""
+    entry = dict(entries(Requirements))["life"]
+    try:
+        return float(_value(text, entry))
+    except UnreadableText as refused:
+        raise CaseError([Fault("life", shown(text), refused.expected, nearest=refused.near)]) from None
 
 
 def _whole_file(name: str, given: str, expected: str, line: int | None = None) -> CaseError:
@@ -178,6 +210,8 @@ class _Reading:
                 self.fault(
                     ("lubricant", "iso_code"), str(analysis.code), "no such key for mist: ISO 281 has no setting"
                 )
+            for key, given, expected in contradictions(cleanliness, is_grease=lubricant.kind == "grease"):
+                self.fault(("cleanliness", key), given, expected, plain=True)
         if bearing is None or lubricant is None or not duty or surroundings is None or not is_whole:
             return None
         case = Case(

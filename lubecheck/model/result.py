@@ -226,6 +226,43 @@ class Remedy:
     note: str
 
 
+@dataclass(frozen=True, slots=True)
+class Damage:
+    """What one duty point takes of the fatigue life."""
+
+    share_of_time: float
+    share_of_damage: float | None  # None: the life could not be worked out
+    life_h: float | None  # modified life, were this point all there is
+    temperature: float | None  # degC
+    viscosity_ratio: float | None
+    contamination_factor: float | None
+    life_modification_factor: float | None
+    load_ratio: float
+
+
+@dataclass(frozen=True, slots=True)
+class Loss:
+    """One part of the loss account: the factor on life of having one more thing as it is."""
+
+    name: str
+    factor: float | None
+    life_after_h: float | None  # with this thing and those before it as they are
+    life_if_right_h: float | None  # the case as it is with this thing alone at its reference
+    factor_alone: float | None  # the life there is over that
+    covers: tuple[str, ...]  # parts before it whose own step is outside ISO 281: the factor is of all together
+
+
+@dataclass(frozen=True, slots=True)
+class LossAccount:
+    """What the case takes of the life at reference conditions, in the order of the parts; their product is exact."""
+
+    reference: str
+    reference_life_h: float | None
+    life_h: float | None
+    parts: tuple[Loss, ...]
+    interaction: float | None  # of the parts: the whole over the product of the single factors that are known
+
+
 @dataclass(frozen=True)
 class Result:
     """The verdict on one bearing position, with all that it rests on."""
@@ -240,6 +277,8 @@ class Result:
     life: Life
     loads: Loads
     speeds: Speeds
+    damage: tuple[Damage, ...]  # of each duty point
+    losses: LossAccount
     plan: PlanLine
     remedies: tuple[Remedy, ...]
     notes: tuple[str, ...]

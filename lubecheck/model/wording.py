@@ -34,7 +34,7 @@ from lubecheck.model.points import (
 from lubecheck.model.result import Assumed
 from lubecheck.model.shaft import loads_of
 from lubecheck.model.side_figures import curing_preload, safe_speed
-from lubecheck.physics import fatigue, grease_life, oil_life
+from lubecheck.physics import cleanliness, fatigue, grease_life, oil_life
 from lubecheck.units import KINDS
 
 SAFETY = (
@@ -51,6 +51,8 @@ WEIGH = (
     "weigh a stroke in a minute and state [grease] stroke: ten strokes on a piece of paper on a letter scale, grams "
     "over ten; guns give 0.8 to 3 g a stroke"
 )
+_DIRTY = 0.05  # e_C below which dirt is likelier to end a bearing than the lubricant: estimate, from severe on
+_HOT = 150.0  # degC from which ratings are lowered
 LONG_LIFE = 200_000.0  # h, beyond which a fatigue life says no more than "not this"
 
 
@@ -207,12 +209,60 @@ def _static(case: Case, outcome: Outcome, row: int) -> str:
 
 def _life(case: Case, outcome: Outcome, row: int) -> str:
     life = float(outcome.modified_life[0])
-    reliability = f"L{(1 - outcome.points.reliability[0]) * 100:.3g} at the film, dirt and load it has"
+    reached = float(outcome.points.reliability[0]) * 100
     if math.isnan(life):
         return "outside the range of ISO 281: " + _outside_life(outcome)
     if life > LONG_LIFE:
-        return f"over {LONG_LIFE:.0f} h: fatigue will not end this bearing; grease, seals or dirt may"
-    return reliability
+        return (
+            f"over {_spaced(LONG_LIFE)} h: fatigue will not end this bearing; what may is {_what_ends(case, outcome)}"
+        )
+    rows = outcome.points.case == 0
+    has_cap = bool((outcome.life_factor[rows] >= fatigue.GREATEST_FACTOR).any())
+    capped = f"a_ISO held at {fatigue.GREATEST_FACTOR:g}, the cap of the standard" if has_cap else ""
+    wet = float(outcome.points.water[0])
+    water = f"water of {wet * 1e6:.0f} ppm takes it to {cleanliness.water_factor.plain(wet):.2f} times" if (
+        wet > cleanliness.WATER_REFERENCE
+    ) else ""  # fmt: skip
+    hot = "rating lowered for rings over 150 degC" if (outcome.state.temperature[rows] > _HOT).any() else ""
+    return join(
+        f"L{100 - reached:.3g} at the film, dirt and load it has: {reached:.4g} of 100 such bearings run longer",
+        f"the end is the first pit of about {fatigue.PIT_AREA:g} mm^2: replace then, seizure or break-up can follow",
+        _eater(case, outcome), capped, water, hot,
+    )  # fmt: skip
+
+
+def _spaced(value: float) -> str:
+    return f"{value:,.0f}".replace(",", " ")
+
+
+def _what_ends(case: Case, outcome: Outcome) -> str:
+    """Name what is likely to end a bearing that fatigue does not: the one of interval, seals and dirt that governs."""
+    points = outcome.points
+    dirt = float(np.nanmin(outcome.contamination[points.case == 0], initial=np.inf))
+    if dirt < _DIRTY:
+        return f"dirt that wears the raceways (e_C is {dirt:.2g})"
+    lubricant = "grease" if case.is_grease else "oil"
+    allowed = float(outcome.allowed_interval[0])
+    if points.is_sealed[0]:
+        hours = f", good for {_spaced(allowed)} h (L10)" if math.isfinite(allowed) else ""
+        return f"the {lubricant} sealed in it{hours}, or its seals"
+    if math.isfinite(allowed):
+        return f"the {lubricant}, if it is not renewed within {_spaced(allowed)} h; then its seals"
+    return f"the {lubricant} or its seals"
+
+
+def _eater(case: Case, outcome: Outcome) -> str:
+    """Say which duty point eats the life, where there are several."""
+    count = len(case.duty)
+    if count < 2:
+        return ""
+    points = outcome.points
+    damage = points.share[:count] / outcome.row_life[:count]
+    row = int(damage.argmax())
+    return (
+        f"duty point {row + 1} eats {damage[row] / damage.sum() * 100:.0f} % of it in "
+        f"{points.share[row] / points.share[:count].sum() * 100:.0f} % of the time"
+    )
 
 
 def _outside_life(outcome: Outcome) -> str:
@@ -227,6 +277,10 @@ def _outside_life(outcome: Outcome) -> str:
         reasons.append("the radial load is over 0.55 of the axial one, so that the washers part")
     elif not takes_loads(outcome.points).all():
         reasons.append("the family takes no load in one of the stated directions")
+    if (outcome.state.temperature > outcome.points.stabilised_to).any():
+        reasons.append(f"the rings are stabilised to {outcome.points.stabilised_to[0]:g} degC only")
+    if cleanliness.water_factor.outside(content=outcome.points.water).any():
+        reasons.append(f"water in the oil is over {cleanliness.WATER_RANGE[1] * 1e6:.0f} ppm: dry or change it")
     return ", ".join(reasons) or "no equilibrium temperature"
 
 
@@ -349,6 +403,9 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         source = case.bearing.basis.get(key, "own-estimate")
         unit = _BEARING_UNITS.get(key, "")
         said.append(Assumed(f"[bearing] {key}", f"{value:.4g} {unit}, {low:.2f} to {high:.2f} times that", source))
+    if not case.is_grease and case.water is None and not any(item.name == "[cleanliness] water" for item in said):
+        ppm = cleanliness.WATER_REFERENCE * 1e6
+        said.append(Assumed("[cleanliness] water", f"dry: no more than {ppm:.0f} ppm in the oil", "cantley"))
     said += [Assumed("[lubricant]", text, "common-practice") for text in case.lubricant.assumed]
     said += oil_words.assumed(case)
     around = case.surroundings

@@ -23,6 +23,7 @@ from lubecheck.units import Array, DegC, Mm2PerS, Number, Share
 __all__ = [
     "blend",
     "blend_share",
+    "constant_through",
     "density",
     "density_by_expansion",
     "derated_viscosity",
@@ -184,6 +185,22 @@ def temperature_of_viscosity(*, nu: Mm2PerS, nu_40: Mm2PerS, nu_100: Mm2PerS) ->
     slope = np.where(slope > 0, slope, np.nan)
     kelvin: Array = np.exp(_LOG_40 + (at_40 - _log_log(nu)) / slope)
     return kelvin - _KELVIN
+
+
+@method(source="astm-d341", valid={"temperature": _TEMPERATURE, "nu": _NU})
+def constant_through(temperature: DegC, *, nu: Mm2PerS, b: Number) -> Number:
+    """Constant A of ASTM D341 of the oil that has a viscosity at a temperature, with a given slope.
+
+    temperature [degC]: temperature, any shape
+    nu [mm^2/s]: kinematic viscosity there, broadcasts
+    b [1]: slope B, broadcasts
+    returns [1]
+
+    >>> constant_through("40 degC", nu="100 mm^2/s", b=3.567).round(2)
+    <Quantity(9.2, 'dimensionless')>
+    """
+    constant: Array = (_log_log(nu) - np.log(_LN_10) + b * np.log(np.asarray(temperature) + _KELVIN)) / _LN_10
+    return constant
 
 
 @method(source="astm-d341", valid={"temperature": _TEMPERATURE, "nu": _NU})

@@ -60,6 +60,8 @@ def random_points(rows: int = ROWS, seed: int = 20261201) -> Points:
         fill=np.where(grease, rng.uniform(0.05, 1.2, rows), np.nan),
         void=base.void * size**3 * rng.choice([0.0, 1.0], rows),
         is_open=rng.choice([0.0, 1.0], rows),
+        water=rng.choice([0.0, 50e-6, 250e-6, 600e-6], rows),
+        stabilised_to=rng.choice([120.0, 150.0, 200.0], rows),
         interval=np.where(rng.random(rows) < 0.5, spread(100, 30000), np.nan),
     )
 
@@ -74,7 +76,7 @@ def judged_many(many):
     return judge(many)
 
 
-ROW_FIELDS = ("reference_viscosity", "kappa", "contamination", "life_factor", "load_ratio")
+ROW_FIELDS = ("reference_viscosity", "kappa", "contamination", "life_factor", "load_ratio", "row_life")
 POSITION_FIELDS = ("rating_life", "modified_life", "allowed_interval", "interval", "verdict", "governing")
 
 
@@ -200,6 +202,23 @@ def test_a_hotter_bearing_never_lengthens_the_interval(many):
     b = judge(dataclasses.replace(grease, machine_heat=grease.machine_heat + 20))
     assert (b.state.temperature[a.state.is_found & b.state.is_found] > 0).any()
     assert not (b.allowed_interval > a.allowed_interval * (1 + 1e-9)).any()
+
+
+def test_wetter_oil_never_lengthens_life_and_untested_oil_has_none(many):
+    a, b = judge(many.changed(water=100e-6)), judge(many.changed(water=350e-6))
+    known = np.isfinite(a.modified_life)
+    assert known.any()
+    assert np.allclose(b.modified_life[known] / a.modified_life[known], (100 / 350) ** 0.6)
+    assert np.isnan(judge(many.changed(water=500e-6)).modified_life).all()
+
+
+def test_a_held_temperature_is_the_one_that_everything_follows(many):
+    held = judge(many.changed(held_temperature=55.0))
+    assert (held.state.temperature == 55.0).all()
+    free = judge(many)
+    again = judge(dataclasses.replace(many, held_temperature=free.state.temperature))
+    found = free.state.is_found
+    assert np.allclose(again.kappa[found], free.kappa[found], rtol=1e-12)
 
 
 def test_equal_duty_points_equal_one_point():

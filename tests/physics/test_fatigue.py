@@ -96,6 +96,31 @@ def test_asking_less_reliability_never_shortens_the_life(reliability, less):
     assert fatigue.reliability_factor.plain(relaxed) >= fatigue.reliability_factor.plain(reliability) - 1e-12
 
 
+hours = st.floats(1, 1e7)
+
+
+@given(hours, hours, hours)
+def test_bearings_together_live_shorter_than_the_shortest_and_the_order_does_not_matter(a, b, c):
+    join = fatigue.joint_life.plain
+    ab_c = join(first=join(first=a, second=b), second=c)
+    assert ab_c == pytest.approx(join(first=a, second=join(first=c, second=b)), rel=1e-12)
+    assert ab_c <= min(a, b, c) * (1 + 1e-12)
+
+
+@given(hours, hours, st.floats(0.5, 0.999))
+def test_the_product_of_two_reliabilities_at_the_joint_life_is_the_reliability_asked_for(a, b, reliability):
+    """Weibull of two parameters, slope 1.5: R = asked^((t/L)^1.5) of each bearing."""
+    t = fatigue.joint_life.plain(first=a, second=b)
+    product = reliability ** ((t / a) ** 1.5) * reliability ** ((t / b) ** 1.5)
+    assert product == pytest.approx(reliability, rel=1e-9)
+
+
+@given(st.floats(-50, 400), st.floats(0, 100))
+def test_a_hotter_bearing_never_has_more_rating(temperature, more):
+    cool, hot = (fatigue.hot_rating_factor.plain(t) for t in (temperature, temperature + more))
+    assert hot <= cool <= 1
+
+
 def test_the_fatigue_limit_is_continuous_at_100_mm():
     below, above = (fatigue.fatigue_load_limit.plain(1e5, d, np.arange(4)) for d in (100.0, 100.0 + 1e-9))
     assert above == pytest.approx(below, rel=1e-9)

@@ -11,6 +11,7 @@ from lubecheck.errors import ArgumentError, OutOfRange
 from lubecheck.physics.viscosity import (
     blend,
     blend_share,
+    constant_through,
     density,
     density_by_expansion,
     derated_viscosity,
@@ -238,3 +239,9 @@ def test_oils_are_straight_lines_on_the_ordinate_of_the_chart() -> None:
     for nu_40, nu_100 in ((68.0, 8.5), (3.0, 1.1), (460.0, 31.0)):
         ordinate = walther_ordinate.plain(kinematic_viscosity.plain(kelvin - 273.15, nu_40=nu_40, nu_100=nu_100))
         assert np.diff(ordinate) == pytest.approx(np.diff(ordinate)[0], rel=1e-8)
+
+
+@given(st.floats(-20, 150), st.floats(2.0, 5000), st.floats(2.0, 4.5))
+def test_the_constant_through_a_point_gives_that_viscosity_back(temperature, nu, b):
+    a = constant_through.plain(temperature, nu=nu, b=b)
+    assert viscosity_from_constants.plain(temperature, a=a, b=b) == pytest.approx(nu, rel=1e-9)
