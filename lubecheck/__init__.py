@@ -12,10 +12,10 @@ from typing import TYPE_CHECKING, Any
 
 if TYPE_CHECKING:
     from lubecheck.errors import CaseError, InputError, LubecheckError
-    from lubecheck.model.check import check
     from lubecheck.model.entries import Case
     from lubecheck.model.reader import load_case
     from lubecheck.model.result import Result
+    from lubecheck.studies.remedies import check
 
 __version__ = "0.1.0"
 
@@ -28,7 +28,7 @@ _HOMES = {
     "InputError": "errors",
     "LubecheckError": "errors",
     "Result": "model.result",
-    "check": "model.check",
+    "check": "studies.remedies",
     "load_case": "model.reader",
 }
 

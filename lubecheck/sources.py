@@ -83,6 +83,7 @@ SOURCES: Mapping[str, Source] = {
         "charts of grease compatibility, handbooks (they contradict each other)", "memory"
     ),
     "seal-handbooks": Source("resistance of elastomers to oils, seal handbooks", "memory"),
+    "astm-d7155": Source("ASTM D7155, evaluating compatibility of mixtures of turbine lubricating oils", "memory"),
     "astm-d6185": Source("ASTM D6185, evaluating compatibility of mixtures of lubricating greases", "memory"),
     "common-practice": Source("common practice", "seen"),
     "coolprop": Source("CoolProp, open-source thermophysical properties", "checked"),

@@ -16,7 +16,8 @@ from lubecheck.data.lubricant import BASE_OILS, CERTAINTIES, THICKENERS, Lubrica
 from lubecheck.errors import TableError
 from lubecheck.sources import SOURCES
 
-TEST = "ASTM D6185"
+TEST = "ASTM D6185"  # of mixtures of greases
+OIL_TEST = "ASTM D6185 for greases, ASTM D7155 for oils"
 ELASTOMERS = ("NBR", "FKM", "EPDM", "polyurethane")
 METALS = ("brass", "bronze", "copper", "white metal")
 ADDITIVES = ("none", "extreme pressure")
@@ -175,12 +176,9 @@ def _additive(lubricant: Lubricant) -> str:
 
 def words(cell: Cell) -> str:
     """Return a cell as one line of text, never without its test."""
-    says = {
-        "mixes": f"mixes as a rule; {TEST} settles it",
-        "test first": f"test first ({TEST})",
-        "suits": "suits as a rule",
-    }.get(cell.state, cell.state)
-    if cell.kind in ("seal", "metal") and cell.state == "test first":
-        says = "test first"
+    test = TEST if cell.kind == "thickener" else OIL_TEST
+    says = {"mixes": f"mixes as a rule; {test} settles it", "suits": "suits as a rule"}.get(cell.state, cell.state)
+    if cell.state == "test first" and cell.kind not in ("seal", "metal"):
+        says = f"test first ({test})"
     note = f"; {cell.note}" if cell.note else ""
     return f"{cell.kind} {cell.a} and {cell.b}: {says}{note} ({cell.certainty})"

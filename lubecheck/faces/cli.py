@@ -63,8 +63,8 @@ def check(
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
-    from lubecheck.model.check import check as judge
     from lubecheck.model.reader import load_case
+    from lubecheck.studies.remedies import check as judge
 
     result = judge(
         load_case(case, own=own_lubricants(lubricants)), air_properties=air.exact if exact_fluids else air.properties

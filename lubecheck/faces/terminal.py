@@ -28,6 +28,7 @@ def print_result(result: Result, console: Console, system: str = "si") -> None:
     _limits(result, console, system)
     _operating(result, console, system)
     _plan(result, console, system)
+    _remedies(result, console)
     _bullets("Notes", result.notes, console)
     _bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
     _bullets("Cautions", result.cautions, console)
@@ -179,6 +180,12 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
             f"{proposed['interval']}"
         )
     return parts
+
+
+def _remedies(result: Result, console: Console) -> None:
+    """Print the changes that bring the verdict back, with what each does to the limits."""
+    lines = (f"{one.change} -> {one.verdict_after}. {one.note}" for one in result.remedies)
+    _bullets("What would bring it back, least effort first", lines, console)
 
 
 def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:

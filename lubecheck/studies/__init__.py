@@ -1,0 +1,1 @@
+"""Questions that run the model many times."""
