@@ -2,7 +2,7 @@
 
 >>> import lubecheck
 >>> sorted(name for name in dir(lubecheck) if not name.startswith("_"))
-['Case', 'CaseError', 'InputError', 'LubecheckError', 'Result', 'check', 'load_case']
+['Case', 'CaseError', 'InputError', 'LubecheckError', 'Result', 'check', 'load_case', 'swap']
 """
 
 from __future__ import annotations
@@ -16,10 +16,11 @@ if TYPE_CHECKING:
     from lubecheck.model.reader import load_case
     from lubecheck.model.result import Result
     from lubecheck.studies.remedies import check
+    from lubecheck.studies.swap import swap
 
 __version__ = "0.1.0"
 
-__all__ = ["Case", "CaseError", "InputError", "LubecheckError", "Result", "check", "load_case"]
+__all__ = ["Case", "CaseError", "InputError", "LubecheckError", "Result", "check", "load_case", "swap"]
 
 # Where each public name lives; loaded on first use, so that importing the package costs nothing.
 _HOMES = {
@@ -30,6 +31,7 @@ _HOMES = {
     "Result": "model.result",
     "check": "studies.remedies",
     "load_case": "model.reader",
+    "swap": "studies.swap",
 }
 
 

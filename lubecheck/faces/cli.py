@@ -11,6 +11,8 @@ from lubecheck import __version__
 from lubecheck.faces.fluids_command import EPILOG as FLUIDS_EPILOG
 from lubecheck.faces.fluids_command import fluids
 from lubecheck.faces.options import LubricantsOption, Units, UnitsOption, console, own_lubricants
+from lubecheck.faces.swap_command import EPILOG as SWAP_EPILOG
+from lubecheck.faces.swap_command import swap
 
 WITHIN_OR_NEAR, BEYOND, REFUSED, UNKNOWN = range(4)  # exit codes
 
@@ -80,6 +82,7 @@ def check(
     raise typer.Exit(exit_code(result.verdict, fail_on.value))
 
 
+app.command(epilog=SWAP_EPILOG)(swap)
 app.command(epilog=FLUIDS_EPILOG)(fluids)
 
 

@@ -29,9 +29,9 @@ def print_result(result: Result, console: Console, system: str = "si") -> None:
     _operating(result, console, system)
     _plan(result, console, system)
     _remedies(result, console)
-    _bullets("Notes", result.notes, console)
-    _bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
-    _bullets("Cautions", result.cautions, console)
+    bullets("Notes", result.notes, console)
+    bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
+    bullets("Cautions", result.cautions, console)
 
 
 def _heading(result: Result, console: Console) -> None:
@@ -93,7 +93,7 @@ def _limits(result: Result, console: Console, system: str) -> None:
         console.print(Text("\nWhy", style="bold"))
         console.print(why)
     if not is_wide:
-        _bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console)
+        bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console)
 
 
 def _is_plain(console: Console) -> bool:
@@ -185,7 +185,7 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
 def _remedies(result: Result, console: Console) -> None:
     """Print the changes that bring the verdict back, with what each does to the limits."""
     lines = (f"{one.change} -> {one.verdict_after}. {one.note}" for one in result.remedies)
-    _bullets("What would bring it back, least effort first", lines, console)
+    bullets("What would bring it back, least effort first", lines, console)
 
 
 def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
@@ -196,11 +196,13 @@ def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
     return f" = {strokes} strokes of {figure(stroke_g, 'g', system)} ({figure(strokes * stroke_g, 'g', system)})"
 
 
-def _bullets(heading: str, lines: Iterable[str], console: Console) -> None:
+def bullets(heading: str, lines: Iterable[str], console: Console) -> None:
+    """Print lines under a heading, or under none; nothing where there are no lines."""
     lines = tuple(lines)
     if not lines:
         return
-    console.print(Text(f"\n{heading}", style="bold"))
+    if heading:
+        console.print(Text(f"\n{heading}", style="bold"))
     table = Table(box=None, pad_edge=False, padding=(0, 1, 0, 0), show_header=False)
     table.add_column(width=3, justify="right")
     table.add_column()
