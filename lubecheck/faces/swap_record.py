@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import dataclasses
 import json
 from typing import Any
 
@@ -12,6 +11,7 @@ from lubecheck.studies.plant import Plant
 from lubecheck.studies.swap import Swap, Swaps
 
 SCHEMA = "lubecheck/swap/1"
+MANY = 10
 PLANT_SCHEMA = "lubecheck/swap-plant/1"
 
 
@@ -36,12 +36,12 @@ def _swap(one: Swap) -> dict[str, Any]:
         "governing": one.governing,
         "reason": one.reason,
         "after": _glance(one.after),
-        "sides": [dataclasses.asdict(side) for side in one.sides],
-        "compatibility": dataclasses.asdict(one.meeting),
-        "seals": [dataclasses.asdict(cell) for cell in one.seals],
+        "sides": [plain(side) for side in one.sides],
+        "compatibility": plain(one.meeting),
+        "seals": [plain(cell) for cell in one.seals],
         "differences": list(one.differences),
-        "mixture": None if one.mixture is None else dataclasses.asdict(one.mixture),
-        "change_over": dataclasses.asdict(one.change_over),
+        "mixture": None if one.mixture is None else plain(one.mixture),
+        "change_over": plain(one.change_over),
     }
 
 
@@ -50,12 +50,22 @@ def _glance(glance: Glance) -> dict[str, Any]:
         "verdict": glance.verdict,
         "governing": glance.governing,
         "reason": glance.reason,
-        "limits": [dataclasses.asdict(limit) for limit in glance.limits],
+        "limits": [plain(limit) for limit in glance.limits],
         "figures": figures(glance.figures),
     }
 
 
+def plain(value: Any) -> Any:
+    """Return dataclasses, however deep, as mappings and tuples as lists."""
+    if isinstance(value, tuple):
+        return [plain(item) for item in value]
+    names = getattr(value, "__dataclass_fields__", None)
+    return value if names is None else {name: plain(getattr(value, name)) for name in names}
+
+
 def to_json(made: Swaps | Plant) -> str:
     """Return a swap, or that of a whole plant, as JSON text."""
-    record = {"schema": PLANT_SCHEMA, **dataclasses.asdict(made)} if isinstance(made, Plant) else of_swaps(made)
-    return json.dumps(record, indent=2, allow_nan=False)
+    record = {"schema": PLANT_SCHEMA, **plain(made)} if isinstance(made, Plant) else of_swaps(made)
+    # The writer's indenting is slow and a table of many candidates is for programs: they stand on one line.
+    many = len(made.positions if isinstance(made, Plant) else made.candidates) > MANY
+    return json.dumps(record, indent=None if many else 2, allow_nan=False)

@@ -153,7 +153,9 @@ def _change_over(line: ChangeOver, console: Console, system: str) -> None:
             said.append(f"{stage.gone * 100:.0f} % gone after {stage.times} regreasings, "
                         f"{figure(stage.grams, 'g', system)}{weeks}")  # fmt: skip
     if line.purge_g is not None:
-        said.append(f"or all at once, in steps with the way out open: about {figure(line.purge_g, 'g', system)}")
+        said.append(
+            f"or the bearing itself at once, in steps, the housing later: about {figure(line.purge_g, 'g', system)}"
+        )
     if line.interval_h is not None and line.interval_weeks is not None:
         said.append(f"interval meanwhile: {number(line.interval_h)} running hours ({line.interval_weeks:g} weeks)")
     bullets("", said, console)

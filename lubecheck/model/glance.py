@@ -70,9 +70,9 @@ class Glances:
     applies: Flags  # [limit, case]
     verdicts: Codes  # [case], position in limits.STATES
 
-    def at(self, number: int) -> Glance:
-        """Return one case at a glance."""
-        case, outcome = self.cases[number], part_of(self.outcome, READINGS * number, READINGS)
+    def at(self, number: int, part: Outcome | None = None) -> Glance:
+        """Return one case at a glance; `part` is its part of the outcome where that was cut out already."""
+        case, outcome = self.cases[number], part or part_of(self.outcome, READINGS * number, READINGS)
         judged = tuple(
             Limit(name, STATES[self.states[i, number]], _finite(self.uses[i, number]), _finite(one.demand[0]),
                   _finite(one.allowed[0]), LIMITS[name][0], LIMITS[name][1], "")
@@ -132,8 +132,7 @@ def state_of_readings(usual: Array, worst: Array) -> Codes:
 
 def part_of(outcome: Outcome, first: int, count: int) -> Outcome:
     """Return some positions of an outcome that follow each other as an outcome of their own."""
-    starts = np.r_[outcome.points.starts, len(outcome.points)]
-    low, high = int(starts[first]), int(starts[first + count])
+    low, high = (int(row) for row in outcome.points.case.searchsorted((first, first + count)))
     rows, positions = slice(low, high), slice(first, first + count)
 
     def cut(value: Any, by: slice) -> Any:

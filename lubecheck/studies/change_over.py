@@ -147,7 +147,7 @@ def _grease_steps(meeting: Meeting, is_clean: bool, is_closed: bool) -> tuple[st
         "Isolate and lock out the machine; wipe nipples and lines, empty the gun and load it with the new grease only"
     ]
     if meeting.state == "test first":
-        steps.append("Have the mixture tested (ASTM D6185) first; until then treat it as one that does not mix")
+        steps.append("Have the mixture tested (ASTM D6185) first; without the test clean out instead of purging")
     if is_clean:
         why = "there is no open relief for the old grease to leave by" if is_closed else "the old must not stay"
         steps += [f"Take the caps off, take the old grease out of bearing, housing and lines by hand and wash: {why}",
@@ -167,7 +167,7 @@ def _watch(meeting: Meeting, path: Path | None) -> tuple[str, ...]:
     if path is not None and path.softest:
         said.append(f"the mixture may be as soft as NLGI {path.softest} at its worst share (estimate)")
     if path is not None and path.dips:
-        said.append("the film is thinner on the way than before and after")
+        said.append("film or heat is worse on the way than before and after")
     if meeting.state != "mixes":
         said.append(f"hardening as well: {meeting.reason}")
     return tuple(said)

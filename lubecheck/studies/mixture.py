@@ -16,7 +16,6 @@ from lubecheck.data import compatibility
 from lubecheck.data.lubricant import Lubricant
 from lubecheck.data.lubricant_figures import YIELD_STRESS
 from lubecheck.model.glance import READINGS, Glances, state_of_readings
-from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import STATES
 from lubecheck.model.points import Points
 from lubecheck.physics import fatigue, viscosity
@@ -52,7 +51,8 @@ class Path:
     temperature_use: float | None
     allowed_interval: float | None  # h, the shortest of all shares
     softest: str  # NLGI grade at the worst share; empty for oil
-    dips: bool  # the film is thinner on the way than both before and after
+    dips: bool  # film or heat is worse on the way than both before and after
+    state: str  # of what is worse on the way than at both ends; the ends have their own verdict
 
 
 def blends(old: Lubricant, new: Lubricant) -> bool:
@@ -100,57 +100,54 @@ def points_between(before: Points, after: Points, old: Lubricant, news: Sequence
     return made
 
 
-def path(glances: Glances, number: int, old: Lubricant, new: Lubricant) -> Path:
-    """Return the path of candidate `number`, counted from 1: case 0 is before, the shares are behind all."""
-    outcome = glances.outcome
-    candidates = len(glances.cases) - 1
-    first = READINGS * (1 + candidates)  # positions of before and after come first
-    ends = [0, *(first + READINGS * (candidates * i + number - 1) for i in range(len(SHARES))), READINGS * number]
-    usual = np.array(ends)
+def paths(glances: Glances, old: Lubricant, news: Sequence[Lubricant]) -> list[Path]:
+    """Return the path of every candidate: case 0 is before, the candidates come after it, the shares behind all."""
+    outcome, count = glances.outcome, len(news)
+    first = READINGS * (1 + count)
+    numbers = np.arange(count)
     shares = np.array((0.0, *SHARES, 1.0))
-    blend = viscosity.blend.plain(nu_a=old.nu_40, nu_b=new.nu_40, share_b=shares)
-    made = tuple(
-        _share(outcome, position, float(share), float(nu_40), is_grease=new.kind == "grease")
-        for position, share, nu_40 in zip(ends, shares, blend, strict=True)
+    columns = [np.zeros(count, dtype=np.intp)]
+    columns += [first + READINGS * (count * i + numbers) for i in range(len(SHARES))]
+    ends = np.stack([*columns, READINGS * (1 + numbers)], axis=1)  # positions by candidate and share
+    starts = outcome.points.starts
+    nu_40 = viscosity.blend.plain(
+        nu_a=old.nu_40, nu_b=np.array([new.nu_40 for new in news])[:, None], share_b=shares[None, :]
     )
-    between = usual[1:-1]
-    worst: dict[str, tuple[str, float | None]] = {}
-    for name in ("film", "temperature"):
-        use = outcome.judged[name].use
-        states = state_of_readings(use[between], use[between + 1])
-        worst[name] = STATES[int(states.max())], _finite(np.where(np.isnan(use), np.inf, use)[between].max())
-    allowed = outcome.allowed_interval[usual]
-    uses = outcome.judged["film"].use
-    grade = min((one.consistency for one in made), key=_softness) if new.kind == "grease" else ""
-    return Path(
-        shares=made,
-        film_state=worst["film"][0],
-        film_use=worst["film"][1],
-        temperature_state=worst["temperature"][0],
-        temperature_use=worst["temperature"][1],
-        allowed_interval=_finite(allowed.min()),
-        softest=grade,
-        dips=bool(uses[between].max() > max(uses[0], uses[ends[-1]]) + 1e-9),
+    kappa = np.minimum.reduceat(outcome.kappa, starts)[ends]
+    temperature = outcome.state.temperature[outcome.hottest[ends]]
+    stress = outcome.points.yield_stress[starts[ends]]
+    film, heat = (outcome.judged[name].use for name in ("film", "temperature"))
+    between = ends[:, 1:-1]
+    film_states, heat_states = (state_of_readings(use[between], use[between + 1]).max(axis=1) for use in (film, heat))
+    film_uses, heat_uses = (np.where(np.isnan(use), np.inf, use)[between].max(axis=1) for use in (film, heat))
+    film_dips, heat_dips = (
+        use.max(axis=1) > np.nan_to_num(ends_of[ends[:, [0, -1]]], nan=np.inf).max(axis=1) + 1e-9
+        for use, ends_of in ((film[between], film), (heat[between], heat))
     )
-
-
-def worst_state(one: Path) -> str:
-    """Return the worse of the two states on the way."""
-    return max(one.film_state, one.temperature_state, key=STATES.index)
-
-
-def _share(outcome: Outcome, position: int, share: float, nu_40: float, *, is_grease: bool) -> Share:
-    points = outcome.points
-    low, high = points.case.searchsorted((position, position + 1))
-    kappa = float(outcome.kappa[low:high].min())
-    return Share(
-        share=share,
-        nu_40=nu_40,
-        viscosity_ratio=_finite(kappa),
-        temperature=_finite(outcome.state.temperature[outcome.hottest[position]]),
-        film_use=_finite(outcome.judged["film"].use[position]),
-        consistency=nearest_grade(float(points.yield_stress[low])) if is_grease else "",
-    )
+    states = np.maximum(np.where(film_dips, film_states, 0), np.where(heat_dips, heat_states, 0))
+    allowed = outcome.allowed_interval[ends].min(axis=1)
+    made = []
+    for i, new in enumerate(news):
+        is_grease = new.kind == "grease"
+        columns_of = (nu_40[i].tolist(), kappa[i].tolist(), temperature[i].tolist(), film[ends[i]].tolist())
+        grades = [nearest_grade(one) if is_grease else "" for one in stress[i].tolist()]
+        made.append(
+            Path(
+                shares=tuple(
+                    Share(share, nu, _finite(ratio), _finite(degrees), _finite(use), grade)
+                    for share, nu, ratio, degrees, use, grade in zip(shares.tolist(), *columns_of, grades, strict=True)
+                ),
+                film_state=STATES[int(film_states[i])],
+                film_use=_finite(film_uses[i]),
+                temperature_state=STATES[int(heat_states[i])],
+                temperature_use=_finite(heat_uses[i]),
+                allowed_interval=_finite(allowed[i]),
+                softest=min(grades, key=lambda grade: YIELD_STRESS[grade]) if is_grease else "",
+                dips=bool(film_dips[i] or heat_dips[i]),
+                state=STATES[int(states[i])],
+            )
+        )
+    return made
 
 
 def nearest_grade(stress: float) -> str:
@@ -163,9 +160,5 @@ def nearest_grade(stress: float) -> str:
     return min(_GRADES, key=lambda grade: abs(known - _GRADES[grade]))
 
 
-def _softness(grade: str) -> float:
-    return YIELD_STRESS[grade]
-
-
 def _finite(value: float) -> float | None:
-    return float(value) if np.isfinite(value) else None
+    return float(value) if math.isfinite(value) else None

@@ -5,7 +5,6 @@ from __future__ import annotations
 import dataclasses
 from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
-from typing import Any
 
 import numpy as np
 
@@ -108,16 +107,18 @@ def fewest(is_good: Flags, weight: Array | None = None) -> tuple[int, ...]:
     columns = np.unique(is_good[:, is_good.any(axis=0)], axis=1).T
     if not len(columns):
         return ()
-    # A position that more lubricants suit than another's lubricants is served along with it.
-    order = np.argsort(columns.sum(axis=1), kind="stable")
-    kept: list[Any] = []
-    for column in columns[order]:
-        if not any((column & one).sum() == one.sum() for one in kept):
-            kept.append(column)
+    # A position that every lubricant of another one's suits as well is served along with it.
+    columns = columns[np.argsort(columns.sum(axis=1), kind="stable")]
+    kept = np.empty_like(columns)
+    count = 0
+    for column in columns:
+        if not (kept[:count] <= column).all(axis=1).any():
+            kept[count] = column
+            count += 1
     solved = milp(
         np.ones(len(is_good))
         + (0.0 if weight is None else np.clip(weight, 0.0, 1.0) / (len(is_good) + 1)),  # under one row together
-        constraints=LinearConstraint(np.array(kept, dtype=np.float64), lb=1.0),
+        constraints=LinearConstraint(kept[:count].astype(np.float64), lb=1.0),
         integrality=np.ones(len(is_good)),
         bounds=Bounds(0.0, 1.0),
         options={"mip_rel_gap": 0.0},

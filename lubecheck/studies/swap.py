@@ -21,7 +21,7 @@ from lubecheck.model.entries import Case
 from lubecheck.model.glance import READINGS, Glance, glances, part_of, points_of
 from lubecheck.model.limits import STATES
 from lubecheck.studies.change_over import ChangeOver, change_over
-from lubecheck.studies.mixture import Path, blends, path, points_between, worst_state
+from lubecheck.studies.mixture import Path, blends, paths, points_between
 
 # What a meeting of two lubricants, or of one with a seal or metal, counts as beside the limits.
 _STATE_OF = {"mixes": "within", "suits": "within", "test first": "near", "not known": "unknown",
@@ -112,16 +112,17 @@ def swaps(
     # Mixtures of the candidates that do not blend are rows too, and are not shown: every share has a block of all.
     judged = glances(cases, more=points_between(before, after, case.lubricant, news))
     old = judged.at(0)
+    ways = paths(judged, case.lubricant, news)
     made = []
     for i, (name, new) in enumerate(named):
-        glance = judged.at(1 + i)
+        outcome = part_of(judged.outcome, READINGS * (1 + i), READINGS)
+        glance = judged.at(1 + i, outcome)
         meeting = compatibility.meet(case.lubricant, new)
         is_same = compatibility.is_same(case.lubricant, new)
         may_mix = not is_same and meeting.state != "do not mix" and blends(case.lubricant, new)
-        between = path(judged, i + 1, case.lubricant, new) if may_mix else None
+        between = ways[i] if may_mix else None
         sides = () if is_same else _sides(case, new, meeting, between, is_cleaned=is_cleaned)
         verdict, governing, reason = _verdict(glance, sides)
-        outcome = part_of(judged.outcome, READINGS * (1 + i), READINGS)
         made.append(
             Swap(
                 name=name,
@@ -196,7 +197,8 @@ def _sides(case: Case, new: Lubricant, meeting: Meeting, between: Path | None, *
         if between is not None:
             uses = [("film", between.film_use), ("temperature", between.temperature_use)]
             text = ", ".join(f"{name} {'no end' if use is None else f'{use:.2f}'} of 1" for name, use in uses)
-            sides.append(Side("mixture", worst_state(between), f"greatest uses on the way: {text}", "astm-d7152"))
+            dip = "worse than before and after" if between.dips else "not worse than the worse of before and after"
+            sides.append(Side("mixture", between.state, f"greatest uses on the way: {text}; {dip}", "astm-d7152"))
     if case.bearing.seal == "contact seals" and new.base_oil != case.lubricant.base_oil:
         sides.append(_side("seals", compatibility.of("seal", new.base_oil, "NBR")))
     if case.bearing.cage == "brass" and new.ep and not case.lubricant.ep:
@@ -237,7 +239,8 @@ def differences(before: Glance, after: Glance) -> tuple[str, ...]:
             continue
         size = abs(new - old)
         if unit == "h" and old > 0:
-            said.append(f"{more if new > old else less}: {new / old:.2f} times")
+            if abs(new / old - 1) >= 0.005:
+                said.append(f"{more if new > old else less}: {new / old:.2f} times")
         elif size >= 0.005:
             said.append(f"{size:.2f} {unit} {more if new > old else less}".replace("  ", " "))
     return tuple(said)

@@ -39,10 +39,16 @@ def main() -> None:
         print(f"{name}: swap {swap:.3f} s, check {check:.3f} s CPU, ratio {ratio:.2f}  (goal: at most 1.3)")
     from lubecheck.studies.plant import fewest
 
-    is_good = np.random.default_rng(1).random((60, 5000)) < 0.3
+    # As lubricants and positions are: each position takes a span of viscosities, heat up to a limit, cold to another.
+    chance = np.random.default_rng(1)
+    thick, hot, cold = (chance.random((60, 1)) for _ in range(3))
+    least, span, heat, frost = (chance.random((1, 5000)) for _ in range(4))
+    is_good = (
+        (thick >= 0.8 * least) & (thick <= 0.8 * least + 0.1 + 0.4 * span) & (hot >= 0.8 * heat) & (cold >= 0.7 * frost)
+    )
     start = time.process_time()
     chosen = fewest(is_good)
-    print(f"fewest of 60 lubricants for 5000 random positions: {len(chosen)} in {time.process_time() - start:.1f} s CPU")
+    print(f"fewest of 60 lubricants for 5000 positions: {len(chosen)} in {time.process_time() - start:.1f} s CPU")
 
 
 if __name__ == "__main__":
