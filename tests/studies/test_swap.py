@@ -113,7 +113,8 @@ def test_the_mixture_follows_the_blending_law_between_old_and_new():
 def test_a_limit_that_is_passed_on_the_way_alone_is_seen():
     # A thick oil runs hot and takes the heat, the old one runs cooler: the mixture runs hot and does not take it.
     runs_at = check(read_case(BASE.replace("polyurea-110-2", "lithium-110-2"))).operating.figures["temperature"].value
-    case = read_case(BASE.replace('name = "polyurea-110-2"', f'name = "lithium-110-2"\nhighest = "{runs_at + 1} degC"'))
+    figures = f'name = "lithium-110-2"\nhighest = "{runs_at + 1} degC"\nlife_reference = "50 degC"'
+    case = read_case(BASE.replace('name = "polyurea-110-2"', figures))
     found = swap(case, "lithium-complex-1000-1-ep")
     states = {one.name: one.state for one in found.after.limits}
     assert check(case).limit("temperature").state == "near"
