@@ -16,11 +16,13 @@ from typing import Any
 
 from lubecheck.data import bearing_designation, bearings, compatibility, lubricants
 from lubecheck.data.bearing_series import of_family
+from lubecheck.errors import InputError
 from lubecheck.model.entries import Amount, Case
 from lubecheck.model.glance import Glances
 from lubecheck.model.points import running_hours
 from lubecheck.model.reader import read_value
 from lubecheck.physics import fatigue, grease_life
+from lubecheck.units import UnreadableText
 
 # A key of the case ("grease.fill", "duty[2].draught") with its new text, or None to take it out; a whole table
 # ("lubricant", "bearing") with its new keys.
@@ -92,7 +94,16 @@ def possible(case: Case, before: Glances) -> list[Change]:
     found = [*_surroundings(case), *_heat(case), *_lubricants(case), *_bearings(case)]
     found += [*_grease(case, before), *_intervals(case, before)] if case.is_grease else [
         *_oil(case), *_intervals(case, before)]  # fmt: skip
-    return found
+    return [change for change in found if _is_sound(case, change)]
+
+
+def _is_sound(case: Case, change: Change) -> bool:
+    """Tell whether a case file may say what the change says: a multiple of a value can leave the accepted range."""
+    try:
+        apply(case, change)
+    except (UnreadableText, InputError):
+        return False
+    return True
 
 
 def _lubricants(case: Case) -> Iterator[Change]:
@@ -167,7 +178,7 @@ def _intervals(case: Case, before: Glances) -> Iterator[Change]:
     for hours in sorted(wanted, reverse=True):
         weeks = math.floor(hours / (7 * per_day) + 1e-9)
         text = f"{weeks} week" if weeks >= 1 else f"{math.floor(hours)} h"
-        if running_hours(_amount(table, text), per_day) < now and hours >= 1:
+        if hours >= 1 and running_hours(_amount(table, text), per_day) < now:
             texts[text] = None
     verb = "regrease" if case.is_grease else "change the oil"
     for text in texts:
@@ -274,7 +285,10 @@ def _bearings(case: Case) -> Iterator[Change]:
         if boundary is None or boundary.outside <= old.outside or boundary.width < old.width:
             continue
         name = series.name(old.bore) + suffix
-        bigger = bearings.find(name)
+        try:
+            bigger = bearings.find(name)
+        except InputError:  # a suffix that the heavier series does not have
+            continue
         if bigger.dynamic_rating > old.dynamic_rating and bigger.family == old.family and not bigger.unread:
             yield Change(f"bigger bearing: {name} ({bigger.outside:g} x {bigger.width:g} mm), ratings estimated",
                          "bearing", REPLACE, (("bearing", {"designation": name, **stated}),),
