@@ -446,7 +446,7 @@ def read_value(table: str, key: str, text: str) -> Any:
 
     Raises UnreadableText where it is not what the key takes.
 
-    >>> read_value("surroundings", "draught", "120 m/min")
+    >>> read_value("surroundings", "draught", "2 m/s")
     2.0
     """
     return _value(text, dict(entries(TABLES[table]))[key])

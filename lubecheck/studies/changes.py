@@ -17,12 +17,12 @@ from typing import Any
 from lubecheck.data import bearing_designation, bearings, compatibility, lubricants
 from lubecheck.data.bearing_series import of_family
 from lubecheck.errors import InputError
-from lubecheck.model.entries import Amount, Case
+from lubecheck.model.entries import TABLES, Amount, Case, entries
 from lubecheck.model.glance import Glances
 from lubecheck.model.points import running_hours
 from lubecheck.model.reader import read_value
 from lubecheck.physics import fatigue, grease_life
-from lubecheck.units import UnreadableText
+from lubecheck.units import KINDS, UnreadableText
 
 # A key of the case ("grease.fill", "duty[2].draught") with its new text, or None to take it out; a whole table
 # ("lubricant", "bearing") with its new keys.
@@ -207,9 +207,6 @@ def _oil(case: Case) -> Iterator[Change]:
 
 
 def _unit(table: str, key: str) -> str:
-    from lubecheck.model.entries import TABLES, entries
-    from lubecheck.units import KINDS
-
     return KINDS[dict(entries(TABLES[table]))[key].kinds[0]].unit
 
 
