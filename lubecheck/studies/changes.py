@@ -60,7 +60,7 @@ def _edited(case: Case, key: str, value: str | Mapping[str, str] | None) -> Case
     if isinstance(value, Mapping):
         words = tuple(value.items())
         if key == "lubricant":
-            return dataclasses.replace(case, lubricant=_lubricant(*words))
+            return dataclasses.replace(case, lubricant=_lubricant(*words), analysis=None)  # it was of the old one
         return dataclasses.replace(case, bearing=_bearing(*words))
     table, _, name = key.partition(".")
     number = _DUTY.fullmatch(table)

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import dataclasses
 from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
 
@@ -15,7 +14,7 @@ from lubecheck.model.entries import Case
 from lubecheck.model.glance import glances
 from lubecheck.model.limits import STATES
 from lubecheck.model.points import Codes, Flags
-from lubecheck.studies.swap import found
+from lubecheck.studies.swap import found, replaced
 from lubecheck.units import Array
 
 
@@ -68,7 +67,7 @@ def plant(cases: Mapping[str, Case], candidates: Sequence[str | Lubricant], *, o
               if case.lubricant.kind == new.kind]  # fmt: skip
     for first in range(0, len(places), CHUNK):
         chunk = places[first : first + CHUNK]
-        got, use = _states([dataclasses.replace(positions[j], lubricant=named[i][1]) for i, j in chunk])
+        got, use = _states([replaced(positions[j], named[i][1]) for i, j in chunk])
         rows, columns = np.array(chunk).T
         states[rows, columns], uses[rows, columns] = got, use
     is_good = states == 0

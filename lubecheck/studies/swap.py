@@ -106,7 +106,7 @@ def swaps(
     """
     named = found(candidates, case.lubricant.kind, own)
     news = [new for _, new in named]
-    cases = [case, *(dataclasses.replace(case, lubricant=new) for new in news)]
+    cases = [case, *(replaced(case, new) for new in news)]
     every = points_of(cases)
     before, after = every.take(every.case < READINGS), every.take(every.case >= READINGS)
     # Mixtures of the candidates that do not blend are rows too, and are not shown: every share has a block of all.
@@ -144,10 +144,18 @@ def swaps(
     return Swaps(
         title=case.title,
         bearing=wording.bearing(case.bearing),
-        lubricant=wording.lubricant(case.lubricant),
+        lubricant=wording.lubricant(case.lubricant, case.analysis),
         candidates=tuple(made),
         cautions=CAUTIONS + wording.cautions(case),
     )
+
+
+def replaced(case: Case, new: Lubricant) -> Case:
+    """Return a case with a new lubricant in it: the analysis of the old oil goes, the dirt of the place stays."""
+    if compatibility.is_same(case.lubricant, new):
+        return case
+    cleanliness = dataclasses.replace(case.cleanliness, setting=case.setting)
+    return dataclasses.replace(case, lubricant=new, analysis=None, cleanliness=cleanliness)
 
 
 def found(
