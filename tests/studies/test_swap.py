@@ -37,7 +37,7 @@ def test_the_example_prints_what_stands_beside_it(name):
     ("name", "verdict", "governing", "way"),
     [
         ("clay_motor", "beyond", "compatibility", "clean out"),
-        ("slow_fan", "within", "regrease_amount", "purge"),
+        ("slow_fan", "within", "fill", "purge"),
         ("pag_gearbox", "beyond", "compatibility", "drain, flush and refill"),
         ("oven_conveyor", "near", "film", "purge"),
     ],
