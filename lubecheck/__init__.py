@@ -2,7 +2,7 @@
 
 >>> import lubecheck
 >>> sorted(name for name in dir(lubecheck) if not name.startswith("_"))
-['Case', 'CaseError', 'InputError', 'LubecheckError', 'Result', 'check', 'load_case']
+['Case', 'CaseError', 'InputError', 'LubecheckError', 'Result', 'check', 'load_case', 'swap']
 """
 
 from __future__ import annotations
@@ -12,14 +12,15 @@ from typing import TYPE_CHECKING, Any
 
 if TYPE_CHECKING:
     from lubecheck.errors import CaseError, InputError, LubecheckError
-    from lubecheck.model.check import check
     from lubecheck.model.entries import Case
     from lubecheck.model.reader import load_case
     from lubecheck.model.result import Result
+    from lubecheck.studies.remedies import check
+    from lubecheck.studies.swap import swap
 
 __version__ = "0.1.0"
 
-__all__ = ["Case", "CaseError", "InputError", "LubecheckError", "Result", "check", "load_case"]
+__all__ = ["Case", "CaseError", "InputError", "LubecheckError", "Result", "check", "load_case", "swap"]
 
 # Where each public name lives; loaded on first use, so that importing the package costs nothing.
 _HOMES = {
@@ -28,8 +29,9 @@ _HOMES = {
     "InputError": "errors",
     "LubecheckError": "errors",
     "Result": "model.result",
-    "check": "model.check",
+    "check": "studies.remedies",
     "load_case": "model.reader",
+    "swap": "studies.swap",
 }
 
 

@@ -84,6 +84,13 @@ SOURCES: Mapping[str, Source] = {
     ),
     "fill-handbooks": Source("grease fill and replenishment of bearings, handbooks (they disagree)", "memory"),
     "weibull": Source("Weibull distribution of grease lives, slope 2.3 by handbooks", "seen"),
+    "fist-2-4": Source("FIST 2-4, lubrication of powerplant equipment, US Bureau of Reclamation 1990", "seen"),
+    "grease-mixing-handbooks": Source(
+        "charts of grease compatibility, handbooks (they contradict each other)", "memory"
+    ),
+    "seal-handbooks": Source("resistance of elastomers to oils, seal handbooks", "memory"),
+    "astm-d7155": Source("ASTM D7155, evaluating compatibility of mixtures of turbine lubricating oils", "memory"),
+    "astm-d6185": Source("ASTM D6185, evaluating compatibility of mixtures of lubricating greases", "memory"),
     "common-practice": Source("common practice", "seen"),
     "coolprop": Source("CoolProp, open-source thermophysical properties", "checked"),
     "own-estimate": Source("an estimate of this program, with its range", "estimate"),

@@ -42,3 +42,13 @@ def test_the_worked_reading_quotes_todays_figures():
         in README
     )
     assert f"heats it by {bad.operating.temperature.m_as('degC') - temperature:.0f} K" in README
+
+
+def test_the_table_of_swaps_tells_each_verdict():
+    import runpy
+
+    made = runpy.run_path(str(EXAMPLES / "swap" / "make_outputs.py"), run_name="outputs")["TO"]
+    rows = re.findall(r"^\| `(\w+)` \| .* \| (within|near|beyond)", README, flags=re.MULTILINE)
+    assert {name for name, _ in rows} == set(made)
+    for name, verdict in rows:
+        assert lubecheck.swap(lubecheck.load_case(EXAMPLES / "swap" / f"{name}.toml"), made[name]).verdict == verdict

@@ -13,6 +13,8 @@ from lubecheck import __version__
 from lubecheck.faces.fluids_command import EPILOG as FLUIDS_EPILOG
 from lubecheck.faces.fluids_command import fluids
 from lubecheck.faces.options import LubricantsOption, Units, UnitsOption, console, own_lubricants
+from lubecheck.faces.swap_command import EPILOG as SWAP_EPILOG
+from lubecheck.faces.swap_command import swap
 
 WITHIN_OR_NEAR, BEYOND, REFUSED, UNKNOWN = range(4)  # exit codes
 
@@ -76,8 +78,8 @@ def check(
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
-    from lubecheck.model.check import check as judge
     from lubecheck.model.reader import load_case
+    from lubecheck.studies.remedies import check as judge
 
     result = judge(
         load_case(case, own=own_lubricants(lubricants)), air_properties=air.exact if exact_fluids else air.properties
@@ -218,6 +220,7 @@ def system(
     raise typer.Exit(UNKNOWN if result.life_h is None else WITHIN_OR_NEAR)
 
 
+app.command(epilog=SWAP_EPILOG)(swap)
 app.command(epilog=FLUIDS_EPILOG)(fluids)
 
 

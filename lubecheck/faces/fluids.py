@@ -19,7 +19,7 @@ from lubecheck.data import lubricant_sheet as sheet
 from lubecheck.data.grades import EDITIONS, equivalents
 from lubecheck.data.lubricant import FIELDS, Field, Lubricant
 from lubecheck.faces.charts import LETTERS, STYLES, Curve, viscosity_chart
-from lubecheck.faces.display import amount, converted, number, printable, shown_unit
+from lubecheck.faces.display import amount, converted, is_plain, number, printable, shown_unit
 from lubecheck.model.required import RequiredViscosity
 from lubecheck.sources import SOURCES
 
@@ -280,11 +280,6 @@ def _meeting(one: Lubricant, meet: float | None, system: str) -> str:
     if place == "above":
         return f"{said}, so all over its range of use"
     return f"{said}, which is {_PLACES[place]}" if place == "below" else said
-
-
-def is_plain(console: Console) -> bool:
-    """Tell a terminal that shows little more than ASCII."""
-    return not console.encoding.lower().startswith("utf")
 
 
 def _table(*justify: Literal["left", "right"]) -> Table:

@@ -33,6 +33,7 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     if losses:
         print_losses(result.losses, console)
     _plan(result, console, system)
+    _remedies(result, console)
     bullets("Notes", result.notes, console)
     bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
     bullets("Cautions", result.cautions, console)
@@ -201,6 +202,12 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
     return parts
 
 
+def _remedies(result: Result, console: Console) -> None:
+    """Print the changes that bring the verdict back, with what each does to the limits."""
+    lines = (f"{one.change} -> {one.verdict_after}. {one.note}" for one in result.remedies)
+    bullets("What would bring it back, least effort first", lines, console)
+
+
 def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
     if strokes is None or stroke_g is None:
         return ""
@@ -210,11 +217,12 @@ def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
 
 
 def bullets(heading: str, lines: Iterable[str], console: Console) -> None:
-    """Print a heading and its lines, where there are any."""
+    """Print lines under a heading, or under none; nothing where there are no lines."""
     lines = tuple(lines)
     if not lines:
         return
-    console.print(Text(f"\n{heading}", style="bold"))
+    if heading:
+        console.print(Text(f"\n{heading}", style="bold"))
     table = Table(box=None, pad_edge=False, padding=(0, 1, 0, 0), show_header=False)
     table.add_column(width=3, justify="right")
     table.add_column()

@@ -546,6 +546,17 @@ def _amount(value: Any, entry: Entry) -> Amount:
     raise UnreadableText(entry.expected, near, refusals[0].hint)
 
 
+def read_value(table: str, key: str, text: str) -> Any:
+    """Read one value of a case from its text.
+
+    Raises UnreadableText where it is not what the key takes.
+
+    >>> read_value("surroundings", "draught", "2 m/s")
+    2.0
+    """
+    return _value(text, dict(entries(TABLES[table]))[key])
+
+
 def keys() -> Iterator[tuple[str, str, Entry]]:
     """Return every key that a case may have: table, key, entry."""
     for table, form in TABLES.items():

@@ -217,13 +217,28 @@ class Assumed:
 
 
 @dataclass(frozen=True, slots=True)
+class LimitAfter:
+    """What a change does to one limit."""
+
+    name: str
+    state_before: str
+    use_before: float | None
+    state_after: str
+    use_after: float | None
+
+
+@dataclass(frozen=True, slots=True)
 class Remedy:
     """A change that brings the verdict back."""
 
     change: str
-    use_after: float
+    use_after: float | None  # of the limit that governed
     verdict_after: str
     note: str
+    governing: str
+    effort: int  # 1 a setting or a dose ... 5 a new part; of a pair the sum
+    edits: tuple[tuple[str, str | Mapping[str, str] | None], ...]  # of the case file: key or table, and what it becomes
+    limits: tuple[LimitAfter, ...]
 
 
 @dataclass(frozen=True, slots=True)

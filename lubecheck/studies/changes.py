@@ -1,0 +1,292 @@
+"""What a practitioner can change at a position, each as edits of the case file.
+
+A change is written in the words of the case, so that whoever applies it to the file and checks afresh gets the verdict
+that was promised. Changes of one group exclude each other; requirements and facts that nobody can change stay.
+"""
+
+from __future__ import annotations
+
+import dataclasses
+import functools
+import math
+import re
+from collections.abc import Iterator, Mapping
+from dataclasses import dataclass
+from typing import Any
+
+from lubecheck.data import bearing_designation, bearings, compatibility, lubricants
+from lubecheck.data.bearing_series import of_family
+from lubecheck.errors import InputError
+from lubecheck.model.entries import TABLES, Amount, Case, entries
+from lubecheck.model.glance import Glances
+from lubecheck.model.points import running_hours
+from lubecheck.model.reader import read_value
+from lubecheck.physics import fatigue, grease_life
+from lubecheck.units import KINDS, UnreadableText
+
+# A key of the case ("grease.fill", "duty[2].draught") with its new text, or None to take it out; a whole table
+# ("lubricant", "bearing") with its new keys.
+Edit = tuple[str, "str | Mapping[str, str] | None"]
+
+SETTING, SWAP, TEST, REBUILD, REPLACE = range(1, 6)  # effort: a setting or dose, a swap, one to test, works, a new part
+INTERVAL_SHARES = (0.75, 0.5, 0.35, 0.25, 0.15, 0.1, 0.05)
+DRAUGHTS = (1.0, 2.0, 3.0, 5.0)  # m/s: a vent, a fan cover taken off, a fan
+SHIELDS = (10.0, 20.0, 30.0)  # K off the shaft's temperature: flinger disc, heat shield, cooling disc; estimate
+FLOWS = (1.5, 2.0, 3.0)  # times the oil flow
+COOLED = (5.0, 10.0, 20.0)  # K off the oil inlet
+MORE_COOLING = (1.25, 1.5, 2.0)  # times a stated conductance
+
+
+@dataclass(frozen=True, slots=True)
+class Change:
+    """One thing to change: in words, as edits, with its effort and what has to be warned of."""
+
+    words: str
+    group: str
+    effort: int
+    edits: tuple[Edit, ...]
+    warning: str = ""
+
+
+def apply(case: Case, *changes: Change) -> Case:
+    """Return a case with changes made, each value read as the case reader reads it."""
+    for change in changes:
+        for key, value in change.edits:
+            case = _edited(case, key, value)
+    return case
+
+
+def _edited(case: Case, key: str, value: str | Mapping[str, str] | None) -> Case:
+    if isinstance(value, Mapping):
+        words = tuple(value.items())
+        if key == "lubricant":
+            return dataclasses.replace(case, lubricant=_lubricant(*words), analysis=None)  # it was of the old one
+        return dataclasses.replace(case, bearing=_bearing(*words))
+    table, _, name = key.partition(".")
+    number = _DUTY.fullmatch(table)
+    read: Any = None if value is None else _read("duty" if number else table, name, value)
+    if number:
+        i = int(number[1]) - 1
+        duty = (*case.duty[:i], dataclasses.replace(case.duty[i], **{name: read}), *case.duty[i + 1 :])
+        return dataclasses.replace(case, duty=duty)
+    changed: Any = dataclasses.replace(getattr(case, table), **{name: read})
+    return dataclasses.replace(case, **{table: changed})
+
+
+# A change meets every other in a pair, so what its text says is read once.
+_DUTY = re.compile(r"duty\[(\d+)\]")
+_read = functools.lru_cache(1000)(read_value)
+
+
+@functools.lru_cache(500)
+def _lubricant(*words: tuple[str, str]) -> lubricants.Lubricant:
+    return lubricants.find(dict(words)["name"])
+
+
+@functools.lru_cache(100)
+def _bearing(*words: tuple[str, str]) -> bearings.Bearing:
+    given = {name: text for name, text in words if name != "designation"}
+    return bearings.with_given(bearings.find(dict(words)["designation"]), **given)
+
+
+def possible(case: Case, before: Glances) -> list[Change]:
+    """Return the single changes that make sense at a position; `before` is its outcome as it stands."""
+    found = [*_surroundings(case), *_heat(case), *_lubricants(case), *_bearings(case)]
+    found += [*_grease(case, before), *_intervals(case, before)] if case.is_grease else [
+        *_oil(case), *_intervals(case, before)]  # fmt: skip
+    return [change for change in found if _is_sound(case, change)]
+
+
+def _is_sound(case: Case, change: Change) -> bool:
+    """Tell whether a case file may say what the change says: a multiple of a value can leave the accepted range."""
+    try:
+        apply(case, change)
+    except (UnreadableText, InputError):
+        return False
+    return True
+
+
+def _lubricants(case: Case) -> Iterator[Change]:
+    """Every lubricant of the tables of the same kind, with what it means to bring it in."""
+    for key in lubricants.names(case.lubricant.kind):
+        new = _lubricant(("name", key))
+        if compatibility.is_same(case.lubricant, new):
+            continue
+        meeting = compatibility.meet(case.lubricant, new)
+        warning = {
+            "mixes": "",
+            "test first": f"test the mixture first: {meeting.reason}",
+            "not known": f"not known whether they mix, so clean the old one out: {meeting.reason}",
+            "do not mix": f"does not mix with the old one, clean it out wholly: {meeting.reason}",
+        }[meeting.state]
+        verb = "purge" if new.kind == "grease" else "drain"
+        warning = warning or f"{verb} the old one: {meeting.reason}"
+        harmed = _harmed(case, new)
+        effort = {"mixes": SWAP, "test first": TEST}.get(meeting.state, REBUILD)
+        same = new.thickener == case.lubricant.thickener and new.base_oil == case.lubricant.base_oil
+        way = "grade " + ("up" if new.nu_40 > case.lubricant.nu_40 else "down") if same else f"other {new.kind}"
+        yield Change(
+            f"{way}: {new.name}", "lubricant", effort, (("lubricant", {"name": key}),),
+            "; ".join([warning, *harmed]),
+        )  # fmt: skip
+
+
+def _harmed(case: Case, new: lubricants.Lubricant) -> list[str]:
+    """Say which parts of the bearing the new lubricant has to be held against."""
+    cells = []
+    if case.bearing.seal == "contact seals" and new.base_oil != case.lubricant.base_oil:
+        cells.append(compatibility.of("seal", new.base_oil, "NBR"))
+    if case.bearing.cage == "brass" and new.ep and not case.lubricant.ep:
+        cells.append(compatibility.metal(new, "brass"))
+    return [compatibility.words(cell) for cell in cells if cell.gravity > 0]
+
+
+def _grease(case: Case, before: Glances) -> Iterator[Change]:
+    if case.bearing.sealed_sides == 2 or before.outcome.points.is_sealed[0] > 0:
+        return
+    proposed = round(float(before.outcome.points.proposed_fill[0]) * 100)
+    least = round(100 * float(before.outcome.points.proposed_fill[0]) * 0.85)
+    for share in sorted({proposed, least}, reverse=True):
+        yield Change(f"clean the bearing and fill it anew to {share} % of its free volume, the housing to 30 %", "fill",
+                     SWAP, (("grease.fill", f"{share} %"), ("grease.housing_fill", "30 %")))  # fmt: skip
+    if case.housing.relief != "open":
+        yield Change("open a way out for surplus grease (relief or drain plug)", "relief", SETTING,
+                     (("housing.relief", "open"),))  # fmt: skip
+    dose = float(before.outcome.proposed_regrease[0])
+    if case.grease.regrease_amount is not None:
+        yield Change(f"give {dose:.3g} g at each regreasing", "dose", SETTING,
+                     (("grease.regrease_amount", f"{dose:.3g} g"),))  # fmt: skip
+
+
+def _intervals(case: Case, before: Glances) -> Iterator[Change]:
+    table = "grease" if case.is_grease else "oil"
+    plan = case.grease if case.is_grease else case.oil
+    outcome = before.outcome
+    if not before.applies[outcome.names.index("interval"), 0]:
+        return
+    if case.is_grease and outcome.points.is_sealed[0] > 0:
+        if plan.interval is not None:
+            yield Change("do not regrease: the bearing is closed on both sides", "interval", SETTING,
+                         ((f"{table}.interval", None), ("grease.regrease_amount", None)))  # fmt: skip
+        return
+    now, per_day = float(outcome.interval[0]), float(outcome.points.hours_per_day[0])
+    if not math.isfinite(now):
+        return
+    wanted = {share * now for share in INTERVAL_SHARES}
+    wanted |= {float(hours) for hours in outcome.proposed_interval[:2] if 0 < hours < now}
+    texts: dict[str, None] = {}
+    for hours in sorted(wanted, reverse=True):
+        weeks = math.floor(hours / (7 * per_day) + 1e-9)
+        text = f"{weeks} week" if weeks >= 1 else f"{math.floor(hours)} h"
+        if hours >= 1 and running_hours(_amount(table, text), per_day) < now:
+            texts[text] = None
+    verb = "regrease" if case.is_grease else "change the oil"
+    for text in texts:
+        yield Change(f"{verb} every {text}", "interval", SETTING, ((f"{table}.interval", text),))
+
+
+def _amount(table: str, text: str) -> Amount:
+    amount: Amount = read_value(table, "interval", text)
+    return amount
+
+
+def _oil(case: Case) -> Iterator[Change]:
+    oil = case.oil
+    if oil.level is not None and oil.level != 0 and oil.supply in (None, "bath"):
+        yield Change("set the oil level to the middle of the lowest element at rest", "level", SETTING,
+                     (("oil.level", "0 mm"),))  # fmt: skip
+    if oil.flow is not None and oil.supply == "circulating":
+        for times in FLOWS:
+            flow = f"{oil.flow * times:.4g} {_unit('oil', 'flow')}"
+            yield Change(f"oil flow {flow} ({times:g} times)", "flow", REBUILD, (("oil.flow", flow),))
+    if oil.inlet is not None and oil.supply == "circulating":
+        for less in COOLED:
+            if oil.inlet - less > case.surroundings.ambient:
+                inlet = f"{oil.inlet - less:g} degC"
+                yield Change(f"cool the oil to {inlet} at the inlet", "inlet", REBUILD, (("oil.inlet", inlet),))
+
+
+def _unit(table: str, key: str) -> str:
+    return KINDS[dict(entries(TABLES[table]))[key].kinds[0]].unit
+
+
+def _surroundings(case: Case) -> Iterator[Change]:
+    around = case.surroundings
+    for key, answers in (("dust", grease_life.DUST), ("water", grease_life.WATER)):
+        words = [answer.word for answer in answers]
+        word = getattr(around, key)
+        if case.is_grease and word is not None:
+            for better in words[: words.index(word)]:
+                yield Change(
+                    f"keep {key} out with a cover or a better seal: {key} {better}",
+                    key,
+                    TEST,
+                    ((f"surroundings.{key}", better),),
+                )
+    setting = case.cleanliness.setting
+    if setting is not None:
+        circuit = setting.partition(" -/")[0] if " -/" in setting else ""
+        alike = [one for one in fatigue.SETTINGS if (one.partition(" -/")[0] if " -/" in one else "") == circuit]
+        for cleaner in alike[: alike.index(setting)]:
+            verb = "filter the oil" if circuit else "keep the grease, the gun and the seals cleaner"
+            yield Change(f"{verb}: cleanliness {cleaner}", "cleanliness", TEST,
+                         (("cleanliness.setting", cleaner),))  # fmt: skip
+
+
+def _heat(case: Case) -> Iterator[Change]:
+    housing, around = case.housing, case.surroundings
+    if housing.conductance is None:
+        for speed in DRAUGHTS:
+            blown: list[Edit] = [("surroundings.draught", f"{speed:g} m/s")] if (around.draught or 0.0) < speed else []
+            blown += [(f"duty[{i}].draught", f"{speed:g} m/s") for i, duty in enumerate(case.duty, start=1)
+                      if duty.draught is not None and duty.draught < speed]  # fmt: skip
+            if blown:
+                yield Change(f"draught of {speed:g} m/s at the housing", "cooling", REBUILD, tuple(blown))
+    else:
+        for times in MORE_COOLING:
+            text = f"{housing.conductance * times:.4g} {_unit('housing', 'conductance')}"
+            yield Change(f"cool the housing better: {text} ({times:g} times)", "cooling", REBUILD,
+                         (("housing.conductance", text),))  # fmt: skip
+    if housing.machine_heat:
+        for share in (0.5, 0.25):
+            text = f"{housing.machine_heat * share:.4g} W"
+            yield Change(f"shield against the machine's heat: {text} left", "shield", REBUILD,
+                         (("housing.machine_heat", text),))  # fmt: skip
+    for less in SHIELDS:
+        edits: list[Edit | None] = []
+        if housing.shaft_temperature is not None:
+            edits.append(_shielded("housing", housing.shaft_temperature, less, around.ambient))
+        edits += [_shielded(f"duty[{i}]", duty.shaft_temperature, less,
+                            around.ambient if duty.ambient is None else duty.ambient)
+                  for i, duty in enumerate(case.duty, start=1) if duty.shaft_temperature is not None]  # fmt: skip
+        kept = tuple(edit for edit in edits if edit is not None)
+        if kept:
+            yield Change(f"shield against heat along the shaft (disc, shield): {less:g} K less", "shield", REBUILD,
+                         kept)  # fmt: skip
+
+
+def _shielded(table: str, now: float, less: float, ambient: float) -> Edit | None:
+    return (f"{table}.shaft_temperature", f"{max(now - less, ambient):g} degC") if now > ambient else None
+
+
+def _bearings(case: Case) -> Iterator[Change]:
+    """Heavier series of the same bore, with the suffixes of the old one and what was stated of it."""
+    old = case.bearing
+    read = bearing_designation.read(old.designation) if old.designation else None
+    if read is None or old.arrangement != "single":
+        return
+    suffix = old.designation[len(read.base) :]
+    stated = {key: getattr(old, key) for key in ("seal", "clearance", "cage") if old.basis.get(key) == "user"}
+    for series in of_family(old.family):
+        boundary = series.boundaries().get(old.bore)
+        if boundary is None or boundary.outside <= old.outside or boundary.width < old.width:
+            continue
+        name = series.name(old.bore) + suffix
+        try:
+            bigger = bearings.find(name)
+        except InputError:  # a suffix that the heavier series does not have
+            continue
+        if bigger.dynamic_rating > old.dynamic_rating and bigger.family == old.family and not bigger.unread:
+            yield Change(f"bigger bearing: {name} ({bigger.outside:g} x {bigger.width:g} mm), ratings estimated",
+                         "bearing", REPLACE, (("bearing", {"designation": name, **stated}),),
+                         "shaft, housing and seals have to be made to fit")  # fmt: skip
