@@ -312,7 +312,11 @@ def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
         shear_rate=churning.shear_rate.plain(p.speed, bore=p.bore, outside=p.outside),
         yield_stress=p.yield_stress,
         churning_factor=p.churning_factor,
-        ring=p.ring_factor * heat_paths.ring_conductance.plain(p.speed, pitch_diameter=p.pitch_diameter, width=p.width),
+        ring=np.where(
+            np.isnan(p.held_temperature),
+            p.ring_factor * heat_paths.ring_conductance.plain(p.speed, pitch_diameter=p.pitch_diameter, width=p.width),
+            HELD_TOGETHER,
+        ),
         area=area,
         diameter=np.sqrt(area / np.pi) * 1000,
         forced=p.draught,

@@ -197,7 +197,8 @@ def _rings(case: Case, outcome: Outcome, row: int) -> str:
     if not state.is_found[row]:
         return "no equilibrium, so no temperature of the rings"
     hotter = "inner" if state.excess[row] >= 0 else "outer"
-    return join(f"the {hotter} ring is the hotter one, by {abs(state.excess[row]):.1f} K", _duty(case, row))
+    limit = "dimensional stability of the rings"
+    return join(limit, f"the {hotter} one is hotter by {abs(state.excess[row]):.1f} K", _duty(case, row))
 
 
 def _flash(case: Case, outcome: Outcome, row: int) -> str:
