@@ -48,6 +48,7 @@ SOURCES: Mapping[str, Source] = {
     "din-623": Source("DIN 623-1, rolling bearing designations", "memory"),
     "iso-15312": Source("ISO 15312:2003, thermal speed rating", "memory"),
     "din-732": Source("DIN 732, thermally safe operating speed", "memory"),
+    "iso-286": Source("ISO 286-1, tolerances on linear sizes, fits", "memory"),
     "iso-5753": Source("ISO 5753-1, radial internal clearance", "memory"),
     "iso-22324": Source("ISO 22324, colour-coded alerts", "seen"),
     "iec-60034": Source("IEC 60034-1, rotating electrical machines, rating (40 degC, up to 1000 m)", "memory"),

@@ -109,6 +109,7 @@ KINDS: Mapping[str, Kind] = {
         _kind("conductance", "W/K", {"W/delta_degC": 1, "kW/K": 1000}),
         _kind("heat transfer coefficient", "W/(m^2*K)", {"W/m^2/K": 1}),
         _kind("conductivity", "W/(m*K)", {"W/m/K": 1}),
+        _kind("irradiance", "W/m^2", {"kW/m^2": 1000}),
         _kind("heat capacity", "J/(kg*K)", {"J/kg/K": 1, "kJ/(kg*K)": 1000, "kJ/kg/K": 1000}),
         _kind(
             "time",
@@ -313,6 +314,7 @@ DeltaDegC = Annotated[Array, Unit("temperature difference")]
 Watt = Annotated[Array, Unit("power")]
 WPerK = Annotated[Array, Unit("conductance")]
 WPerM2K = Annotated[Array, Unit("heat transfer coefficient")]
+WPerM2 = Annotated[Array, Unit("irradiance")]
 WPerMK = Annotated[Array, Unit("conductivity")]
 JPerKgK = Annotated[Array, Unit("heat capacity")]
 Hour = Annotated[Array, Unit("time")]

@@ -20,6 +20,7 @@ from lubecheck.data.rolling_bearing import (
     CAGES,
     CLEARANCES,
     CONTACT_ANGLES,
+    LOAD_TORQUES,
     SEALS,
     Bearing,
     assemble,
@@ -45,7 +46,7 @@ _FULL_COMPLEMENT = "full complement cylindrical roller"
 # A given figure that is this many times above or below the estimate is a slip of unit or of bearing, not a better one.
 _RATING_SLIP, _MASS_SLIP = 4.0, 2.5
 _FIGURES = ("dynamic_rating", "static_rating", "fatigue_limit", "mass", "f0", "f1", "contact_angle")
-_WORDS = {"clearance": CLEARANCES, "seal": SEALS, "cage": CAGES}
+_WORDS = {"clearance": CLEARANCES, "seal": SEALS, "cage": CAGES, "load_torque": LOAD_TORQUES}
 
 
 def designations(family: str | None = None) -> list[str]:

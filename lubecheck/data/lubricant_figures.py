@@ -15,7 +15,7 @@ from lubecheck.data import designations, grades
 from lubecheck.data.lubricant import FIELDS, WAYS, Lubricant
 from lubecheck.data.lubricant_viscosity import SAYBOLT, Figures, as_array, find_viscosities
 from lubecheck.errors import Fault, InputError, nearest, shown
-from lubecheck.physics import viscosity
+from lubecheck.physics import churning, viscosity
 from lubecheck.sources import SOURCES
 
 # Usual density at 15 degC (kg/m^3) and thermal expansion (1/K) of a kind of oil, as in the tables.
@@ -29,18 +29,7 @@ USUAL_DENSITY: Mapping[str, tuple[float, float]] = {
     "PFPE": (1900.0, 1.0e-3),
     "linear PFPE": (1850.0, 1.0e-3),
 }
-# Yield stress at rest by NLGI grade in Pa, an estimate good to a factor of 2; see greases.csv.
-YIELD_STRESS: Mapping[str, float] = {
-    "000": 15.0,
-    "00": 40.0,
-    "0": 90.0,
-    "1": 170.0,
-    "2": 300.0,
-    "3": 550.0,
-    "4": 1000.0,
-    "5": 1800.0,
-    "6": 3000.0,
-}
+YIELD_STRESS: Mapping[str, float] = churning.NLGI_YIELD  # Pa, an estimate good to a factor of 2
 # Cautious temperature up to which a grease keeps its full interval, by thickener: the low end of the tables' ranges for
 # mineral oil; for lithium the 70 degC that the classical interval is printed for.
 LIFE_REFERENCE: Mapping[str, float] = {

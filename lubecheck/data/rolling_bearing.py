@@ -15,6 +15,7 @@ from lubecheck.physics import fatigue
 CLEARANCES = ("C2", "CN", "C3", "C4", "C5")
 SEALS = ("open", "shields", "contact seals")
 CAGES = ("steel", "brass", "polyamide", "full complement")
+LOAD_TORQUES = ("constant", "load dependent")
 ARRANGEMENTS = ("single", "back-to-back", "face-to-face", "tandem")
 STABILISED = 120.0  # degC, rings without a suffix, DIN 623-1
 
@@ -78,6 +79,7 @@ class Bearing:
     f1: float
     f0_load: float  # factor f0 of ISO 76, for the relative axial load f0 Fa / C0
     load_rule: str
+    load_torque: str = "constant"  # form of the load factor of friction: one f1, or "load dependent", z (P0/C0)^y
     estimated: Mapping[str, Spread]
     basis: Mapping[str, str]
     unread: tuple[str, ...] = ()

@@ -42,6 +42,8 @@ def of_result(result: Result) -> dict[str, Any]:
         "limits": [dataclasses.asdict(limit) for limit in result.limits],
         "operating": figures(result.operating),
         "duty": [figures(point) for point in result.duty],
+        "heat": figures(result.heat),
+        "heat_shares": figures(result.heat_shares),
         "grease": figures(result.grease),
         "life": figures(result.life),
         "loads": figures(result.loads),

@@ -19,6 +19,14 @@ from lubecheck.sources import cite
 
 # ISO 22324: green, yellow, red. What was not judged has no colour, and is said.
 STYLES = {"within": "green", "near": "yellow", "beyond": "red", "unknown": ""}
+_CAUSES = ("viscous_power", "load_power", "mixed_film_power", "seal_power", "churning_power")
+# The plan line says the first three, the lines on heat the rest.
+_SAID_ELSEWHERE = {
+    "first_fill", "fill_share", "regrease_quantity", "regrease_interval", "inner_ring_excess", "churning_power",
+    *(name.replace("_power", "_torque") for name in _CAUSES), *_CAUSES,
+}  # fmt: skip
+_LEAST_WATTS = 0.05
+_LEAST_SHARE = 0.005
 _BAR = 10  # cells of a bar that is full at the limit
 _WIDE = 100  # columns from which sources stand beside the limits
 
@@ -28,6 +36,7 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     _heading(result, console)
     _limits(result, console, system)
     _operating(result, console, system)
+    _heat(result, console)
     _interval_lines(result, console)
     print_damage(result.damage, console, system)
     if losses:
@@ -131,8 +140,8 @@ def _operating(result: Result, console: Console, system: str) -> None:
         groups.append(result.grease)
     for group in groups:
         for name, item in group.figures.items():
-            if name in ("first_fill", "fill_share", "regrease_quantity", "regrease_interval"):
-                continue  # the plan line says them
+            if name in _SAID_ELSEWHERE:
+                continue
             if group in (result.loads, result.speeds) and not item.value:
                 continue  # not every position has them, or needs a preload
             band = ""
@@ -163,6 +172,22 @@ def _interval_lines(result: Result, console: Console) -> None:
         table.add_row(Text(line.name), Text(hours), Text(use), Text(told))
     console.print(table)
     console.print(Padding(Text(result.interval_spread), (0, 0, 0, 2)))
+
+
+def _heat(result: Result, console: Console) -> None:
+    """One line each: what makes the heat, and by which ways it leaves."""
+    causes = {name.removesuffix("_power"): item.value for name, item in result.operating.figures.items()
+              if name in _CAUSES}  # fmt: skip
+    causes |= {name: result.heat.figures[name].value for name in ("machine", "sun")}
+    ways = {name: item.value for name, item in result.heat_shares.figures.items()}
+    brings = {name: -(result.heat.figures[name].value or 0.0) for name in ways}
+    made = [f"{_words(name)} {number(watts)} W" for name, watts in causes.items() if watts and watts >= _LEAST_WATTS]
+    made += [f"{_words(name)} {number(watts)} W" for name, watts in brings.items() if watts >= _LEAST_WATTS]
+    lost = [f"{_words(name)} {share * 100:.0f} %" for name, share in ways.items() if share and share >= _LEAST_SHARE]
+    if made and lost:
+        console.print(Text("\nHeat", style="bold"))
+        console.print(Padding(Text(f"from {', '.join(made)}"), (0, 0, 0, 2)))
+        console.print(Padding(Text(f"leaves by {', '.join(lost)}"), (0, 0, 0, 2)))
 
 
 def _plan(result: Result, console: Console, system: str) -> None:

@@ -12,7 +12,7 @@ from dataclasses import dataclass
 from typing import Any
 
 from lubecheck.model.entries import Case
-from lubecheck.physics import cleanliness, grease_life
+from lubecheck.physics import cleanliness, friction, grease_life, heat_paths
 
 # Multiples of D^2 that the outer area of a housing comes to. Estimates of this program from ordinary proportions of
 # such housings, (low, nominal, high); a flange is the smallest.
@@ -25,7 +25,7 @@ HOUSING_AREA = {
 }
 SMALLEST_AREA = min(low for low, _, _ in HOUSING_AREA.values())
 
-HOTTEST_SHAFT = 120.0  # degC, of a machine that nobody described: common practice for hot fans and motors, estimate
+HOTTEST_SHAFT = 140.0  # degC, of a machine that nobody described: common practice for hot fans and motors, estimate
 # mm, where 0.00411 (1 - 3.8974/Dpw^(1/3)) and 0.00617 (1 - 4.06/Dpw^(1/3)) of ISO 281, Annex A, meet
 DIRTIEST_CODE_FROM = 84.3
 # Time from rest to speed. The rule of the shortest is an estimate: unloaded motors started direct on line need about
@@ -115,6 +115,8 @@ FACTS: tuple[Fact, ...] = (
          _missing("surroundings", "orientation")),
     Fact("housing", "kind", "pedestal", "smallest", "pedestal", "own-estimate", THERMAL, _no_cooling),
     Fact("housing", "machine_heat", 0.0, HOTTEST_SHAFT, "none", "own-estimate", THERMAL, _no_machine_heat),
+    Fact("housing", "solar", 0.0, 0.0, "none, in the shade", "common-practice", THERMAL,
+         lambda case: case.housing.solar is None),
     Fact("housing", "void", None, 0.0, "as much as the bearing's free volume", "own-estimate",
          ("fill", "regrease_amount", *THERMAL), _missing("housing", "void", grease=True)),
     Fact("housing", "relief", "closed", "closed", "closed", "common-practice", ("fill", *THERMAL),
@@ -152,6 +154,8 @@ F1_RANGE = (0.7, 1.5)  # Harris against ISO 15312: the load factor differs by th
 CHURNING_RANGE = (0.5, 2.0)  # yield stress of soap greases of one NLGI grade (Palacios): halved to doubled
 SHAFT_RANGE = (0.5, 2.0)  # coefficient and length of the shaft: estimates
 AREA_RANGE = (0.8, 1.25)  # a stated area still leaves the coefficient of air, about 20 % (Churchill)
+STREAM_RANGE = (0.6, 1.6)  # of the share of its warming that oil takes in the bearing: 0.3 to 0.8, estimate
+COOLANT_RANGE = (0.5, 1.5)  # duct and wall of a jacket that nobody described, estimate
 CONDUCTANCE_RANGE = (0.9, 1.1)  # a stated conductance: as good as a measurement, estimate
 
 
@@ -160,6 +164,18 @@ def uncertain(case: Case) -> Iterator[tuple[str, float, float]]:
     yield "cooling_factor", *_cooling_range(case)
     yield "f0_factor", *F0_RANGE[case.lubricant.kind]
     yield "f1_factor", *F1_RANGE
+    yield "mixed_factor", friction.MIXED_FILM.low, friction.MIXED_FILM.high
+    yield "ring_factor", heat_paths.RING.low, heat_paths.RING.high
+    if case.bearing.seal == "contact seals":
+        seal = friction.SEAL_LINE_FRICTION
+        yield "seal_factor", seal.low / seal.nominal, seal.high / seal.nominal
+    if case.housing.frame_temperature is not None and case.housing.frame_conductance is None:
+        joint = heat_paths.JOINT
+        yield "frame_conductance", joint.low / joint.nominal, joint.high / joint.nominal
+    if case.oil.flow is not None and case.oil.contact is None:
+        yield "oil_conductance", *STREAM_RANGE
+    if case.housing.coolant is not None:
+        yield "coolant_conductance", *COOLANT_RANGE
     if case.housing.shaft_temperature is not None:
         yield "shaft_conductance", *SHAFT_RANGE
     for key in ("dynamic_rating", "static_rating", "fatigue_limit"):

@@ -24,13 +24,17 @@ from lubecheck.model.limits import NEAR_CODE, STATES, UNKNOWN
 from lubecheck.model.losses import account
 from lubecheck.model.plan import plan_line
 from lubecheck.model.points import Points, from_rows, join, rows_of
-from lubecheck.model.result import Damage, Grease, Life, Limit, Operating, PlanLine, Result
+from lubecheck.model.result import Damage, Grease, Heat, HeatShares, Life, Limit, Operating, PlanLine, Result
+from lubecheck.physics import friction
 from lubecheck.units import Array
 
 # Unit of the demand and the allowance of each limit, and where the limit comes from unless it says otherwise.
 LIMITS: Mapping[str, tuple[str, str]] = {
     "film": ("1", "iso-281:9.3.3.1"),
     "temperature": ("degC", "common-practice"),
+    "rings": ("degC", "din-623"),
+    "flash_point": ("degC", "common-practice"),
+    "clearance": ("mm", "iso-5753"),
     "cold_start": ("degC", "din-51825"),
     "fill": ("1", "fill-handbooks"),
     "oil_level": ("mm", "neale"),
@@ -80,7 +84,10 @@ class Variants:
         change = of_positions[list(self.inputs)].reshape(-1, 2) - value
         up = np.maximum(change.max(axis=1, initial=0.0), 0.0)
         down = np.minimum(change.min(axis=1, initial=0.0), 0.0)
-        return float(value), float(value - np.sqrt((down**2).sum())), float(value + np.sqrt((up**2).sum()))
+        low = value - np.sqrt((down**2).sum())
+        if (of_positions >= 0).all():  # a figure that has no other side stays on its own
+            low = np.maximum(low, 0.0)
+        return float(value), float(low), float(value + np.sqrt((up**2).sum()))
 
     def row_band(self, of_rows: Array, row: int) -> Triple:
         """The same for a figure of one row."""
@@ -101,6 +108,7 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
     hottest = int(outcome.hottest[0])
     plan = plan_line(case, outcome)
     lines = interval_lines.lines(case, outcome)
+    heat, shares = _heat(outcome, hottest)
     return Result(
         title=case.title,
         verdict=verdict,
@@ -108,6 +116,8 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
         limits=judged,
         operating=operating[hottest],
         duty=_hottest_seasons(operating, len(case.duty)),
+        heat=heat,
+        heat_shares=shares,
         grease=_grease(outcome, plan) if case.is_grease else None,
         life=_life(variants),
         loads=side_figures.loads_at(case, outcome),
@@ -186,16 +196,28 @@ def _governing(judged: Sequence[Limit], verdict: str) -> str:
 def _operating(variants: Variants, row: int) -> Operating:
     outcome = variants.outcome
     state = outcome.state
-    torque = state.viscous_torque + state.load_torque + state.seal_torque + state.churning_torque
+    watts = friction.power.plain(1.0, outcome.points.speed)
     arrays = {
         "temperature": state.temperature,
+        "inner_ring_temperature": state.inner,
+        "outer_ring_temperature": state.outer,
+        "inner_ring_excess": state.excess,
         "viscosity": state.viscosity,
         "reference_viscosity": outcome.reference_viscosity,
         "viscosity_ratio": outcome.kappa,
-        "friction_torque": torque,
+        "friction_torque": state.friction_torque,
         "friction_power": state.friction_power,
         "churning_power": state.churning_power,
         "heat_removed": state.heat_removed,
+        "viscous_torque": state.viscous_torque,
+        "load_torque": state.load_torque + np.where(state.is_found, 0.0, np.nan),
+        "mixed_film_torque": state.mixed_torque,
+        "seal_torque": state.seal_torque + np.where(state.is_found, 0.0, np.nan),
+        "churning_torque": state.churning_torque,
+        "viscous_power": state.viscous_torque * watts,
+        "load_power": state.load_torque * watts + np.where(state.is_found, 0.0, np.nan),
+        "mixed_film_power": state.mixed_torque * watts,
+        "seal_power": state.seal_torque * watts + np.where(state.is_found, 0.0, np.nan),
     }
     made: Operating = Operating.of({name: variants.row_band(array, row) for name, array in arrays.items()})
     return made
@@ -209,6 +231,19 @@ def _hottest_seasons(operating: Sequence[Operating], duties: int) -> tuple[Opera
         return float("inf") if value is None else value
 
     return tuple(max(operating[duty::duties], key=heat) for duty in range(duties))
+
+
+def _heat(outcome: Outcome, row: int) -> tuple[Heat, HeatShares]:
+    """What leaves by each path of a row, in watts and as a share of all that leaves."""
+    paths = {name: float(path[row]) for name, path in outcome.state.paths.items()}
+    sources = {
+        "friction": float(outcome.state.friction_power[row]),
+        "machine": float(outcome.points.machine_heat[row]),
+        "sun": float(outcome.points.solar_heat[row]),
+    }
+    whole = sum(max(0.0, watts) for watts in paths.values())
+    shares = {name: max(0.0, watts) / whole if whole > 0 else None for name, watts in paths.items()}
+    return Heat.of(sources | paths), HeatShares.of(shares)
 
 
 def _grease(outcome: Outcome, plan: PlanLine) -> Grease:

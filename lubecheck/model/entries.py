@@ -16,11 +16,12 @@ from lubecheck.data import families, lubricants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.cleanliness import setting_of
 from lubecheck.data.oil_analysis import OilAnalysis
+from lubecheck.data.rolling_bearing import LOAD_TORQUES
 from lubecheck.model.cleanliness import stated_setting
-from lubecheck.physics import cleanliness, fatigue, grease_amount, grease_corrections, grease_life
+from lubecheck.physics import cleanliness, clearance, fatigue, grease_amount, grease_corrections, grease_life
 from lubecheck.units import KINDS
 
-SUPPLIES = ("bath", "circulating", "mist")
+SUPPLIES = ("bath", "circulating", "jet", "mist")
 RELIEFS = ("open", "closed")
 HOUSINGS = ("pedestal", "split plummer", "flange", "motor end shield", "gearbox wall")
 FILTERS = ("in line", "off line", "none")
@@ -132,6 +133,9 @@ class BearingTable:
         "fact", "number", 0.3, 40, meaning="viscous friction factor f0 for an oil bath", example="2.3"
     )
     f1: float | None = _entry("fact", "number", 1e-6, 0.02, meaning="load friction factor f1", example="0.0002")
+    load_torque: str | None = _entry(
+        "requirement", words=LOAD_TORQUES, meaning="load factor of friction: constant f1, or z (P0/C0)^y"
+    )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -395,6 +399,33 @@ class Housing:
     shaft_temperature: float | None = _entry(
         "fact", "temperature", -60, 300, example='"75 degC"', meaning="temperature of the shaft beside the bearing"
     )
+    frame_temperature: float | None = _entry(
+        "fact", "temperature", -60, 300, example='"60 degC"', meaning="temperature of the base or frame it is bolted to"
+    )
+    frame_conductance: float | None = _entry(
+        "fact", "conductance", 0, 1e4, example='"5 W/K"', meaning="from the housing into that base or frame"
+    )
+    solar: float | None = _entry(
+        "fact", "irradiance", 0, 1500, example='"800 W/m^2"', meaning="sun on the housing, square to its rays"
+    )
+    coolant: str | None = _entry(
+        "fact", meaning="fluid in the cooling jacket: a coolant of the tables or of CoolProp", example='"water"'
+    )
+    coolant_flow: float | None = _entry(
+        "fact", "flow", 0.001, 1e4, example='"4 l/min"', meaning="flow through the cooling jacket"
+    )
+    coolant_inlet: float | None = _entry(
+        "fact", "temperature", -60, 150, example='"20 degC"', meaning="coolant temperature at the inlet"
+    )
+    jacket_area: float | None = _entry(
+        "fact", "area", 100, 1e8, example='"300 cm^2"', meaning="wall that the coolant wets"
+    )
+    shaft_fit: str | None = _entry(
+        "fact", words=clearance.SHAFT_FITS, meaning="tolerance class of the shaft, to judge the clearance"
+    )
+    housing_fit: str | None = _entry(
+        "fact", words=clearance.HOUSING_FITS, meaning="tolerance class of the housing bore"
+    )
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)
@@ -479,6 +510,9 @@ class OilPlan:
     flow: float | None = _entry("fact", "flow", 0, 1e4, meaning="oil flow through the bearing", example='"1.5 l/min"')
     inlet: float | None = _entry(
         "fact", "temperature", -20, 150, meaning="oil temperature at the inlet", example='"45 degC"'
+    )
+    contact: float | None = _entry(
+        "fact", "share", 0.05, 1, example='"50 %"', meaning="share of its warming that the oil takes in the bearing"
     )
     interval: Amount | None = _entry(
         "decision", "time", 1, 400_000, meaning="time between oil changes", example='"6 month"'

@@ -1,208 +1,237 @@
-"""The coupled solve: the temperature at which friction, churning and the machine's heat equal what leaves.
+"""The coupled solve: the temperatures at which friction, churning and the machine's heat equal what leaves.
 
-Everything that depends on temperature is evaluated together at each step: viscosity, viscous torque, churning, air
-properties, convection, radiation. Heat in falls with temperature (thinner oil) and heat out rises, so the balance has
-one root; it is found for all rows at once.
+Everything that depends on temperature is evaluated together at each step: viscosity, viscous torque, mixed film,
+churning, air properties, convection, radiation (`balance`). The one unknown a row is the rise of the outer ring above
+the coldest sink. ln(heat in / heat out) over ln(rise) is nearly a straight line, so that secant steps converge in a
+few, and a bracket guards every step. A row stops moving when it has converged, so a row's answer does not depend on
+the rows beside it.
 
-The balance is solved as ln(heat in / heat out) over ln(T - T_0), where T_0 is the coldest sink. In these coordinates it
-is nearly a straight line, so that secant steps converge in a few, and a bracket guards every step. A row stops moving
-when it has converged, so a row's answer does not depend on the rows beside it.
+How many roots: heat out rises at least in proportion to the rise; viscous torque and churning fall with temperature.
+Only the mixed film makes heat rise with temperature, by at most 1/e of `most_mixed` times the steepness of viscosity
+over ln(rise). Where that bound is below the heat that flows, the root is the only one that is as hot or hotter. The
+other rows, few of them, are looked over from the root up to the top, and the hottest root is taken: the cautious one.
 """
 
 from __future__ import annotations
 
-from collections.abc import Callable
+import dataclasses
+from collections.abc import Mapping
 from dataclasses import dataclass
 
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model.points import Flags, Points, seal_diameter
-from lubecheck.physics import churning, cooling, friction, loads, viscosity
+from lubecheck.model.balance import Air, Balance, Heat, balance_of
+from lubecheck.model.points import Codes, Flags, Points
 from lubecheck.units import Array
 
-Air = Callable[[Array, Array], air.AirProperties]
+__all__ = ["Air", "Equilibrium", "solve"]
 
 TOP_TEMPERATURE = 250.0  # degC: no lubricant of the tables is used hotter; above it the answer is "no equilibrium"
 TOLERANCE = 1e-9  # of the friction power, residual of the balance
-MOST_STEPS = 80  # bisection alone needs about 50
+ROUNDING = 1e-14  # of the heat that flows: what float64 leaves of it
+SEARCH_STEPS = 30  # from here on the bracket is halved
+MOST_STEPS = 100  # halving needs about 50
+NARROWEST = 1e-13  # of a bracket of ln(rise)
 LEAST_RISE = 1e-9  # K above the coldest sink: the lower end of the bracket
-EMISSIVITY = 0.9  # painted, oily or rusted housing: handbooks, 0.85 to 0.95
-GREASE_CONSISTENCY = 1 / 15  # Pa s^0.5 a Pa of yield stress: 20 at 300 Pa (NLGI 2, representative)
+FIRST_SLOPE = -1.5  # of ln(in/out) over ln(rise): 1.2 from heat out, the rest from viscosity
+CHUNK = 8_192  # rows that stay in the cache together
+COMPACT = 0.7  # share of open rows below which the others are set aside
+LOOK_DOWN = 4.0  # of ln(rise), below a root: to a fiftieth of the rise
+LOOKS = 48  # places between root and top where a row with a mixed film is looked at
 
 
 @dataclass(frozen=True, slots=True)
 class Equilibrium:
     """The state of every row; NaN temperatures where `is_found` is false."""
 
-    temperature: Array  # degC, of the lubricant and the bearing
+    temperature: Array  # degC, of the lubricant and of the bearing as a whole
+    inner: Array  # degC, of inner ring and shaft
+    outer: Array  # degC, of outer ring and housing
     is_found: Flags  # an equilibrium below TOP_TEMPERATURE exists and the solve converged to it
+    is_only: Flags  # false where a thin film lets other temperatures balance as well and the hottest was taken
     residual: Array  # W, heat in less heat out
     steps: int
     equivalent_load: Array  # N
     viscosity: Array  # mm^2/s
     viscous_torque: Array  # N mm
-    load_torque: Array  # N mm
+    load_torque: Array  # N mm, of a full film
+    mixed_torque: Array  # N mm, what the load torque grows by where the surfaces touch
     seal_torque: Array  # N mm, of rubbing seals
     churning_torque: Array  # N mm
-    friction_power: Array  # W, viscous and load torque and churning together
+    friction_power: Array  # W, of all torques together
     churning_power: Array  # W, the part of it from churning
     heat_removed: Array  # W
     held_volume: Array  # cm^3 of grease that cannot clear
+    paths: Mapping[str, Array]  # W, what leaves by each path; below zero: comes in
 
+    @property
+    def friction_torque(self) -> Array:
+        """All torques together, N mm."""
+        return self.viscous_torque + self.load_torque + self.mixed_torque + self.seal_torque + self.churning_torque
 
-@dataclass(frozen=True, slots=True)
-class _Heat:
-    """One evaluation of the balance."""
-
-    viscosity: Array
-    viscous_torque: Array
-    churning_torque: Array
-    friction_power: Array
-    heat_in: Array  # friction, machine and warm sinks, counted from the coldest sink
-    heat_out: Array
-
-
-class Balance:
-    """The heat balance of all rows, with what does not depend on temperature worked out once."""
-
-    def __init__(self, points: Points, air_properties: Air = air.properties) -> None:
-        p = points
-        self.points = p
-        self.air = air_properties
-        self.equivalent_load = loads.dynamic_equivalent_load.plain(
-            radial_load=p.radial_load,
-            axial_load=p.axial_load,
-            static_rating=p.static_rating,
-            f0_load=p.f0_load,
-            contact_angle=p.contact_angle,
-            rule=p.rule,
-        )
-        self.load_torque = p.f1_factor * friction.load_torque.plain(p.f1, self.equivalent_load, p.pitch_diameter)
-        self.seal_torque = friction.seal_torque.plain(
-            seal_diameter(p.bore, p.outside), p.rubbing_seals, friction.SEAL_LINE_FRICTION.nominal
-        )
-        # Oil bearings have no fill: nothing is held.
-        fill = np.where(p.is_grease > 0, np.minimum(np.nan_to_num(p.fill), 1.0), 0.0)
-        self.held_volume = churning.held_volume.plain(
-            fill=fill, free_volume=p.free_volume, void=p.void, housing_fill=p.housing_fill, is_open=p.is_open
-        )
-        self.rate = churning.shear_rate.plain(p.speed, bore=p.bore, outside=p.outside)
-        self.floor = np.minimum(np.minimum(p.ambient, p.shaft_temperature), p.oil_inlet)
-        self.is_by_area = np.isnan(p.conductance)
-        self.area = np.where(self.is_by_area, p.housing_area, 1.0) * 1e-6  # m^2
-        self.diameter = np.sqrt(self.area / np.pi) * 1000  # mm, of a cylinder as long as it is wide with that area
-
-    def at(self, rise: Array) -> _Heat:
-        """Evaluate the balance at a rise above the coldest sink."""
-        p = self.points
-        temperature = self.floor + rise
-        nu = viscosity.viscosity_from_constants.plain(temperature, a=p.walther_a, b=p.walther_b)
-        viscous = p.f0_factor * friction.no_load_torque.plain(p.f0, nu, p.speed, p.pitch_diameter)
-        stress = churning.shear_stress.plain(
-            self.rate,
-            yield_stress=p.yield_stress,
-            consistency=p.yield_stress * GREASE_CONSISTENCY,
-            base_viscosity=nu * p.density * 1e-3,  # mm^2/s times kg/m^3 is 1e-3 mPa s
-        )
-        sheared = p.churning_factor * churning.shear_power.plain(self.held_volume, self.rate, stress)
-        watt_a_torque = friction.power.plain(1.0, p.speed)
-        churned = churning.held_to_range.plain(churning_torque=sheared / watt_a_torque, run_in_torque=viscous)
-        power = watt_a_torque * (viscous + self.load_torque + self.seal_torque + churned)
-        to_ambient = self._to_ambient(temperature)
-        warm = (
-            to_ambient * (p.ambient - self.floor)
-            + p.shaft_conductance * (p.shaft_temperature - self.floor)
-            + p.oil_conductance * (p.oil_inlet - self.floor)
-        )
-        out = (to_ambient + p.shaft_conductance + p.oil_conductance) * rise
-        return _Heat(nu, viscous, churned, power, power + p.machine_heat + warm, out)
-
-    def _to_ambient(self, temperature: Array) -> Array:
-        """Conductance of the housing and the free shaft end to the ambient, W/K."""
-        p = self.points
-        film = self.air((temperature + p.ambient) / 2, p.pressure)
-        still = cooling.natural_convection.plain(
-            surface=temperature,
-            ambient=p.ambient,
-            diameter=self.diameter,
-            kinematic_viscosity=film.kinematic_viscosity_mm2,
-            conductivity=film.conductivity,
-            prandtl=film.prandtl,
-            expansion=film.expansion,
-        )
-        blown = cooling.forced_convection.plain(
-            velocity=p.draught,
-            diameter=self.diameter,
-            kinematic_viscosity=film.kinematic_viscosity_mm2,
-            conductivity=film.conductivity,
-            prandtl=film.prandtl,
-        )
-        convection = cooling.mixed_convection.plain(natural=still, forced=blown)
-        radiation = cooling.radiation.plain(surface=temperature, surroundings=p.ambient, emissivity=EMISSIVITY)
-        by_area = (convection + radiation) * self.area + p.fin_conductance
-        return p.cooling_factor * np.where(self.is_by_area, by_area, p.conductance)
+    @property
+    def excess(self) -> Array:
+        """What the inner ring is warmer than the outer, K."""
+        return self.inner - self.outer
 
 
 def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
     """Find the equilibrium of every row."""
     with np.errstate(all="ignore"):
-        balance = Balance(points, air_properties)
-        rise, is_found, steps = _root(balance)
+        balance = balance_of(points, air_properties)
+        heat, is_found, is_only, steps = _roots(balance)
+        is_found &= heat.lubricant <= TOP_TEMPERATURE
         # A bearing whose temperature is stated needs no balance: its residual is the heat that holds it there.
         is_held = ~np.isnan(points.held_temperature)
-        rise = np.where(is_held, points.held_temperature - balance.floor, rise)
-        is_found |= is_held
-        heat = balance.at(rise)
-    per_torque = friction.power.plain(1.0, points.speed)
-    lost = np.where(is_found, 1.0, np.nan)
-    power = heat.friction_power * lost
-    # What leaves by the sinks less what the warm ones bring in: in equilibrium the friction and the machine's watts.
-    removed = (heat.heat_out - (heat.heat_in - heat.friction_power)) * lost + points.machine_heat
+        held = np.flatnonzero(is_held)
+        if len(held):
+            _put(heat, held, balance.take(held).at(points.held_temperature[held] - balance.floor[held]))
+            is_found |= is_held
+        lost = np.where(is_found, 1.0, np.nan)
+        paths = {name: path * lost for name, path in balance.paths(heat).items()}
+    residual = (heat.heat_in - heat.heat_out) * lost
     return Equilibrium(
-        temperature=np.where(is_held, points.held_temperature, (balance.floor + rise) * lost),
+        temperature=np.where(is_held, points.held_temperature, heat.lubricant * lost),
+        inner=heat.inner * lost,
+        outer=heat.outer * lost,
         is_found=is_found,
-        residual=(heat.heat_in - heat.heat_out) * lost,
+        is_only=is_only,
+        residual=residual,
         steps=steps,
         equivalent_load=balance.equivalent_load,
         viscosity=heat.viscosity * lost,
         viscous_torque=heat.viscous_torque * lost,
         load_torque=balance.load_torque,
+        mixed_torque=heat.mixed_torque * lost,
         seal_torque=balance.seal_torque,
         churning_torque=heat.churning_torque * lost,
-        friction_power=power,
-        churning_power=heat.churning_torque * per_torque * lost,
-        heat_removed=removed,
+        friction_power=heat.friction_power * lost,
+        churning_power=heat.churning_torque * balance.watt_a_torque * lost,
+        heat_removed=sum(paths.values(), np.zeros(len(points))),
         held_volume=balance.held_volume,
+        paths=paths,
     )
 
 
-def _root(balance: Balance) -> tuple[Array, Flags, int]:
-    """Return the rise at which heat in equals heat out, where it was found, and the steps that took."""
-    low = np.full(len(balance.points), np.log(LEAST_RISE))
-    high = np.log(TOP_TEMPERATURE - balance.floor)
-    top = balance.at(np.exp(high))
-    y_high = np.log(top.heat_in / top.heat_out)
-    has_root = y_high < 0
-    # First guess: the heat at 30 K of rise over the conductance there.
-    x = np.log(np.minimum(30.0, np.exp(high) / 2))
-    x_old, y_old = high, y_high
-    found = np.zeros(len(x), dtype=bool)
+def _roots(balance: Balance) -> tuple[Heat, Flags, Flags, int]:
+    """Return the balance of every row at its root, if that was found, if it is the only one, and the steps."""
+    parts = []
+    for start in range(0, len(balance), CHUNK):
+        few = balance.take(slice(start, start + CHUNK)) if len(balance) > CHUNK else balance
+        low, high = np.full(len(few), np.log(LEAST_RISE)), np.log(TOP_TEMPERATURE - few.floor)
+        heat, is_found, steps = _root(few, low, high)
+        is_only = np.ones(len(few), dtype=bool)
+        doubtful = np.flatnonzero(is_found & ~_is_certain(few, heat))
+        if len(doubtful):
+            lowest = np.log(heat.outer_rise[doubtful])
+            others, hotter, is_other = _others(few.take(doubtful), lowest, high[doubtful])
+            is_only[doubtful] = ~is_other
+            if hotter is not None:
+                _put(heat, doubtful[others], hotter)
+        parts.append((heat, is_found, is_only, steps))
+    heats, founds, onlys, steps_taken = zip(*parts, strict=True)
+    whole = heats[0] if len(heats) == 1 else Heat(
+        **{f.name: np.concatenate([getattr(heat, f.name) for heat in heats]) for f in dataclasses.fields(Heat)}
+    )  # fmt: skip
+    return whole, np.concatenate(founds), np.concatenate(onlys), max(steps_taken)
+
+
+def _surplus(heat: Heat) -> Array:
+    """ln(in/out): above zero the row is too cool, also where heat would have to come out of the floor."""
+    return np.where(heat.heat_out > 0, np.log(heat.heat_in / heat.heat_out), np.inf)
+
+
+def _put(whole: Heat, rows: Codes, part: Heat) -> None:
+    """Set some rows of an evaluation from another one."""
+    for item in dataclasses.fields(Heat):
+        getattr(whole, item.name)[rows] = getattr(part, item.name)
+
+
+def _root(balance: Balance, low: Array, high: Array) -> tuple[Heat, Flags, int]:
+    """Return the balance where heat in equals heat out, between two bounds of ln(rise); if it was found; and steps."""
+    rows = np.arange(len(balance))
+    found = np.zeros(len(balance), dtype=bool)
+    whole: Heat | None = None
+    top = high
+    guess = np.log(np.maximum(balance.guess(), LEAST_RISE))
+    x = np.where((guess > low) & (guess < high), guess, (low + 3 * high) / 4)
+    x_old = y_old = x_older = y_older = np.full(len(x), np.nan)
     steps = 0
-    for steps in range(1, MOST_STEPS + 1):  # noqa: B007  (the count is returned)
-        heat = balance.at(np.exp(x))
-        y = np.log(heat.heat_in / heat.heat_out)
-        found |= has_root & (np.abs(heat.heat_in - heat.heat_out) <= TOLERANCE * heat.friction_power)
-        is_open = has_root & ~found
-        if not is_open.any():
-            break
-        low = np.where(y > 0, x, low)
-        high = np.where(y > 0, high, x)
-        slope = (y - y_old) / (x - x_old)
-        step = x - y / slope
-        middle = (low + high) / 2
-        is_good = (step > low) & (step < high)  # false for NaN too
-        x_new = np.where(is_good, step, middle)
-        x_old, y_old = np.where(is_open, x, x_old), np.where(is_open, y, y_old)
-        x = np.where(is_open, x_new, x)
-    return np.exp(x), found, steps
+    for steps in range(1, MOST_STEPS + 1):
+        rise = np.exp(x)
+        heat = balance.at(rise)
+        whole = heat if whole is None else whole
+        y = _surplus(heat)
+        surplus = np.abs(heat.heat_in - heat.heat_out)
+        is_done = surplus <= TOLERANCE * heat.friction_power + ROUNDING * heat.heat_in
+        # Where great flows pass by a little friction, the balance is closed when no number lies between.
+        is_done |= (high - low < NARROWEST) & (surplus <= TOLERANCE * heat.heat_in)
+        is_lost = (x == top) & (y > 0)  # too cool even at the top: there is no root below
+        if (is_done | is_lost).any():
+            ended = is_done | is_lost
+            found[rows[is_done]] = True
+            if heat is not whole:
+                _put(whole, rows[ended], heat.take(ended))
+            if ended.all():
+                break
+        low, high = np.where(y > 0, x, low), np.where(y > 0, high, x)
+        step = _step(x, y, x_old, y_old, x_older, y_older)
+        # A step over the untried top goes to the top itself; any other that leaves the bracket halves it.
+        middle = np.where((step >= high) & (high == top), top, (low + high) / 2)
+        new = np.where((step > low) & (step < high) & (steps < SEARCH_STEPS), step, middle)
+        is_open = ~(is_done | is_lost)
+        x_older, y_older, x_old, y_old = x_old, y_old, x, y
+        x = np.where(is_open, new, x)
+        if is_open.mean() < COMPACT:
+            keep = np.flatnonzero(is_open)
+            balance, rows = balance.take(keep), rows[keep]
+            low, high, top, x, x_old, y_old, x_older, y_older = (
+                array[keep] for array in (low, high, top, x, x_old, y_old, x_older, y_older)
+            )
+    assert whole is not None  # there is a first step
+    return whole, found, steps
+
+
+def _step(x: Array, y: Array, x_old: Array, y_old: Array, x_older: Array, y_older: Array) -> Array:
+    """Return where the curve through the last three points meets zero, or through two, or through one with a slope.
+
+    x as a parabola over y, since y over x is nearly straight.
+    """
+    slope = (x - x_old) / (y - y_old)
+    slope = np.where(slope < 0, slope, 1 / FIRST_SLOPE)  # false for NaN too
+    secant = x - y * slope
+    bend = (slope - (x_old - x_older) / (y_old - y_older)) / (y - y_older)
+    bent = secant + bend * y * y_old
+    # A bend that moves the step by more than half of its length is none of this curve's.
+    return np.where(np.abs(bent - secant) <= 0.5 * np.abs(secant - x), bent, secant)
+
+
+def _is_certain(balance: Balance, heat: Heat) -> Flags:
+    """Return where no hotter root can be: the mixed film's heat cannot grow as fast as what leaves.
+
+    Over ln(rise) its torque grows by at most most_mixed / e times -d ln(nu) / d ln(rise), which is
+    B ln(Z) Z / (Z - 0.7) rise / T with the constants of ASTM D341: ln(Z) is greatest at the root itself, rise / T at
+    the top.
+    """
+    z = heat.viscosity + 0.7
+    top = (TOP_TEMPERATURE - balance.floor) / (TOP_TEMPERATURE + 273.15)
+    steepness = balance.walther_b * np.log(z) * z / heat.viscosity * top
+    certain: Flags = balance.watt_a_torque * balance.most_mixed / np.e * steepness < heat.heat_out
+    return certain
+
+
+def _others(balance: Balance, root: Array, high: Array) -> tuple[Codes, Heat | None, Flags]:
+    """Look round a root, given as ln(rise): rows with a hotter one, the balance there, and rows with any other."""
+    up, down = np.linspace(1e-6, 1.0, LOOKS), np.linspace(-LOOK_DOWN, -1e-6, LOOKS)
+    places = np.concatenate([root + up[:, None] * (high - root), root + down[:, None]])
+    every = balance.take(np.tile(np.arange(len(balance)), len(places)))
+    is_short = (_surplus(every.at(np.exp(places.ravel()))) > 0).reshape(places.shape)
+    above, below = is_short[: LOOKS - 1], is_short[LOOKS:]
+    rows = np.flatnonzero(above.any(axis=0))
+    is_other: Flags = np.logical_or(above.any(axis=0), ~below.all(axis=0))
+    if not len(rows):
+        return rows, None, is_other
+    last = LOOKS - 2 - above[::-1, rows].argmax(axis=0)
+    heat, _, _ = _root(balance.take(rows), places[last, rows], places[last + 1, rows])
+    return rows, heat, is_other

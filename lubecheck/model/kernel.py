@@ -80,6 +80,9 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         judged = {
             "film": limits.reduce(p, limits.film(p, kappa)),
             "temperature": limits.reduce(p, limits.temperature(p, state)),
+            "rings": limits.reduce(p, limits.ring_temperature(p, state)),
+            "flash_point": limits.reduce(p, limits.flash_point(p, state)),
+            "clearance": limits.reduce(p, limits.internal_clearance(p, state)),
             "cold_start": limits.reduce(p, limits.cold_start(p)),
             "fill": limits.reduce(p, limits.fill(p)),
             "oil_level": limits.reduce(p, limits.oil_level(p)),
@@ -176,6 +179,8 @@ def _proposed(points: Points, allowed: Array) -> Array:
 
 def _hottest(points: Points, state: Equilibrium) -> Codes:
     """Return the row of every position that runs hottest; one without an equilibrium counts as hottest of all."""
+    if points.cases == len(points):
+        return np.arange(len(points))
     heat = np.where(state.is_found, state.temperature, np.inf)
     order = np.lexsort((-np.arange(len(heat)), heat, points.case))
     hottest: Codes = order[np.r_[points.starts[1:], len(points)] - 1]

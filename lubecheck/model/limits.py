@@ -13,7 +13,7 @@ import numpy as np
 
 from lubecheck.model.equilibrium import Equilibrium
 from lubecheck.model.points import Codes, Flags, Points
-from lubecheck.physics import churning, fatigue, grease_amount, loads, speed
+from lubecheck.physics import churning, clearance, fatigue, grease_amount, loads, speed
 from lubecheck.units import Array
 
 NEAR = 0.85  # of a limit: from here on the state is `near`
@@ -22,6 +22,7 @@ WITHIN, NEAR_CODE, UNKNOWN, BEYOND = range(4)
 
 COLD_REFERENCE = 20.0  # degC from which a lower temperature limit counts down
 ELEMENT_SHARE = 0.3  # rolling element diameter over D - d: estimate, 0.25 to 0.33
+FLASH_MARGIN = 50.0  # K that oil stays below its flash point: common practice, 30 to 60
 REGREASE_RANGE = (0.4, 2.0)  # of the side rule: from the weekly rule of thumb to twice the usual dose, estimate
 
 
@@ -53,7 +54,9 @@ class Judged:
 
 def state_of(use: Array) -> Codes:
     """Return the state of each use, from positive evidence only: what is not a number is unknown."""
-    return np.select([use <= NEAR, use <= 1.0, use > 1.0], [WITHIN, NEAR_CODE, BEYOND], UNKNOWN).astype(np.intp)
+    # The codes count up: above NEAR one, above the limit two more.
+    code = (use > NEAR) + 2 * (use > 1.0)
+    return np.where(np.isnan(use), UNKNOWN, code).astype(np.intp, copy=False)
 
 
 def reduce(points: Points, limit: Use) -> Judged:
@@ -168,6 +171,34 @@ def acceleration(points: Points) -> Use:
         pitch_diameter=points.pitch_diameter, traction=speed.TRACTION, element=_ELEMENT_OF_KIND[points.kind],
     )  # fmt: skip
     return Use(points.acceleration, allowed, points.acceleration / allowed, np.ones(len(points), dtype=bool))
+
+
+def internal_clearance(points: Points, state: Equilibrium) -> Use:
+    """Clearance that fits and a warm inner ring take over what the class has on the average."""
+    p = points
+    warmth = clearance.thermal_loss.plain(state.excess, bore=p.bore, outside=p.outside)
+    lost = p.fit_loss + warmth
+    return Use(lost, p.clearance, np.maximum(lost, 0.0) / p.clearance, ~np.isnan(p.fit_loss))
+
+
+def flash_point(points: Points, state: Equilibrium) -> Use:
+    """Rise of the hottest ring over the rise that stays clear of the oil's flash point by a margin."""
+    p = points
+    hottest = np.maximum(state.temperature, np.maximum(state.inner, state.outer))
+    top = p.flash_point - FLASH_MARGIN
+    allowed = top - p.ambient
+    use = np.where(allowed > 0, (hottest - p.ambient) / allowed, np.inf)
+    use = np.where(np.isnan(top), np.nan, np.where(state.is_found, use, np.inf))
+    return Use(hottest, top, use, (p.is_grease == 0) & ~np.isnan(top))
+
+
+def ring_temperature(points: Points, state: Equilibrium) -> Use:
+    """Rise of the hotter ring over the rise to the temperature that the rings are stabilised to."""
+    p = points
+    hottest = np.maximum(state.inner, state.outer)
+    allowed = p.stabilised_to - p.ambient
+    use = np.where(allowed > 0, (hottest - p.ambient) / allowed, np.inf)
+    return Use(hottest, p.stabilised_to, np.where(state.is_found, use, np.inf), np.ones(len(p), dtype=bool))
 
 
 def minimum_load(points: Points, state: Equilibrium) -> Use:

@@ -15,17 +15,22 @@ from typing import Any
 import numpy as np
 from numpy.typing import NDArray
 
+from lubecheck.data import coolants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
 from lubecheck.model.assumptions import HOTTEST_SHAFT, HOUSING_AREA, SMALLEST_AREA
-from lubecheck.model.entries import Amount, Case, Duty, GreasePlan
+from lubecheck.model.entries import Amount, Case, Duty, GreasePlan, Housing
 from lubecheck.model.shaft import acceleration_of, loads_of
 from lubecheck.physics import (
+    churning,
+    clearance,
     cooling,
     fatigue,
+    friction,
     grease_amount,
     grease_corrections,
     grease_life,
+    heat_paths,
     loads,
     oil_life,
     speed,
@@ -53,7 +58,8 @@ INSIDE_ANSWERS = ("vibration", "orientation", "turning_ring")
 REGREASE_RULES = tuple(grease_amount.REGREASE_GRAMS)
 RULE_DAYS = {"weekly": 7.0, "monthly": 28.0}  # the rhythm that a regrease rule is made for
 
-# Highest temperatures of parts, degC: common practice for polyamide 66 cages and nitrile lip seals.
+# Highest temperatures of parts, degC: common practice for polyamide 66 cages and nitrile lip seals. Rings have
+# a limit of their own, since they are the hottest parts.
 POLYAMIDE_LIMIT = 120.0
 NITRILE_LIMIT = 100.0
 
@@ -62,7 +68,6 @@ LIMIT_ORIGINS: tuple[tuple[str, str], ...] = (
     ("lubricant", "din-51825"),
     ("cage of polyamide", "common-practice"),
     ("seals of nitrile rubber", "common-practice"),
-    ("dimensional stability of the rings", "common-practice"),
     ("your own limit", "user"),
 )
 
@@ -73,10 +78,8 @@ FIN_LENGTH = 2.0  # bores of bare shaft on the free side that act as a fin: esti
 SHAFT_COEFFICIENT = 15.0  # W/(m^2*K), turning shaft in air, radiation included: estimate, 10 to 30
 OIL_HEAT_CAPACITY = 1900.0  # J/(kg*K), mineral oil at 50 degC; 1700 to 2100, handbooks, from memory
 STREAM_CONTACT = 0.5  # share of its warming that circulating oil takes at the bearing: estimate, 0.3 to 0.8
-RUN_IN_GREASE = 0.5  # of the oil-bath f0, Harris, range 0.35 to 0.7
-MIST = 0.5  # of the oil-bath f0, Harris
-VERTICAL_BATH = 2.0  # of the oil-bath f0 for a vertical shaft in a bath or jet, Harris
 BEYOND_SETTINGS = -1  # Points.setting of oil dirtier than ISO 281 has a setting for
+FACTORS = ("cooling_factor", "f0_factor", "f1_factor", "churning_factor", "mixed_factor", "seal_factor", "ring_factor")
 PROPOSED_HOUSING_FILL = 0.4  # common practice, 30 to 50 %
 
 
@@ -106,6 +109,8 @@ class Points:
     exponent: Array
     f0: Array  # for the lubrication at hand
     f1: Array
+    load_z: Array  # of f1 = z (P0/C0)^y; 0 where f1 is constant
+    load_y: Array
     minimum_load_share: Array
     speed_limit: Array  # rpm, of the family with the lubricant at hand
     kinematic_limit: Array  # rpm, of cage and contact seals
@@ -121,9 +126,10 @@ class Points:
     walther_b: Array
     density: Array
     lowest: Array
-    stabilised_to: Array  # degC up to which the rings keep their size
-    highest: Array  # of lubricant, cage, seals, rings and the user's limit
+    highest: Array  # of lubricant, cage, seals and the user's limit
     limit_origin: Codes
+    stabilised_to: Array  # degC, of the rings
+    flash_point: Array  # degC; NaN for grease and where it is not known
     life_reference: Array
     life_step: Array  # rise that halves the life of the grease
     grease_failed: Array  # share of bearings whose grease may have failed at the end of its interval or life
@@ -136,6 +142,11 @@ class Points:
     pressure: Array
     housing_area: Array  # NaN where the conductance is given
     conductance: Array  # NaN where the area is known
+    frame_temperature: Array
+    frame_conductance: Array
+    coolant_inlet: Array
+    coolant_conductance: Array
+    solar_heat: Array
     shaft_temperature: Array
     shaft_conductance: Array  # towards the machine, to shaft_temperature
     fin_conductance: Array  # of the free shaft end, to the ambient
@@ -151,6 +162,9 @@ class Points:
     void: Array
     housing_fill: Array
     is_open: Array
+    passage: Array  # share of surplus grease that seals or shields let out
+    clearance: Array  # mm, mean of the class; NaN where there is none to judge
+    fit_loss: Array  # mm; NaN where no fit is stated
     proposed_fill: Array
     is_proposed_fill: Array
     interval: Array  # running hours; NaN where none is planned
@@ -174,6 +188,9 @@ class Points:
     f0_factor: Array
     f1_factor: Array
     churning_factor: Array
+    mixed_factor: Array
+    seal_factor: Array
+    ring_factor: Array
 
     def __len__(self) -> int:
         return len(self.speed)
@@ -238,15 +255,16 @@ def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dic
     shared |= _surroundings_columns(case, reading)
     shared |= _housing_columns(case, reading, shared)
     shared |= _requirement_columns(case, reading, family)
+    shared |= _clearance_columns(case)
     rows = []
-    friction = _friction_columns(case, reading)
+    rubbing = _friction_columns(case, reading)
     year = seasons(case)
     for season in year:
         for duty in case.duty:
-            row = shared | _duty_columns(case, duty, reading, shared, season) | friction
+            row = shared | _duty_columns(case, duty, reading, shared, season) | rubbing
             row["share"] /= len(year)
             row |= _amount_columns(case, reading, row)
-            row |= {"case": number, "cooling_factor": 1.0, "f0_factor": 1.0, "f1_factor": 1.0, "churning_factor": 1.0}
+            row |= {"case": number, **dict.fromkeys(FACTORS, 1.0)}
             rows.append(row)
     _propose_one_fill(case, rows)
     return rows
@@ -320,6 +338,7 @@ def _bearing_columns(bearing: Bearing, reading: Mapping[str, Any]) -> dict[str, 
         "elements_mass": bearing.elements_mass,
         "is_sealed": float(bearing.sealed_sides == 2),
         "rubbing_seals": float(bearing.sealed_sides) if bearing.seal == "contact seals" else 0.0,
+        "passage": 1.0 - bearing.sealed_sides / 2 * (1.0 - churning.PASSAGE[bearing.seal]),
     }
 
 
@@ -352,7 +371,6 @@ def _lubricant_columns(case: Case) -> dict[str, float]:
         _known(lubricant.highest),
         POLYAMIDE_LIMIT if case.bearing.cage == "polyamide" else math.inf,
         NITRILE_LIMIT if case.bearing.seal == "contact seals" else math.inf,
-        float(case.bearing.stabilised_to),
         math.inf if case.limits.highest_temperature is None else case.limits.highest_temperature,
     )
     # A lubricant whose top temperature nobody stated leaves the limit unknown, whatever the other parts allow.
@@ -363,8 +381,9 @@ def _lubricant_columns(case: Case) -> dict[str, float]:
         "walther_b": float(b),
         "density": lubricant.density_15,
         "lowest": _known(lubricant.lowest),
-        "stabilised_to": float(case.bearing.stabilised_to),
         "highest": highest,
+        "stabilised_to": float(case.bearing.stabilised_to),
+        "flash_point": math.nan if case.is_grease else _known(lubricant.flash_point),
         "limit_origin": 0 if math.isnan(highest) else limits.index(highest),
         "life_reference": _known(lubricant.life_reference),
         "life_step": float(grease_corrections.halving_step.plain(_known(lubricant.life_reference))),
@@ -435,14 +454,60 @@ def _housing_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, f
         )
     )
     stream = cooling.stream_conductance.plain(case.oil.flow or 0.0, row["density"], OIL_HEAT_CAPACITY)
-    return {
+    sunny = area if housing.conductance is None else HOUSING_AREA["pedestal"][1] * square
+    frame = 0.0
+    if housing.frame_conductance is not None:
+        frame = housing.frame_conductance
+    elif housing.frame_temperature is not None:
+        frame = float(
+            heat_paths.joint_conductance.plain(heat_paths.JOINT.nominal, outside=row["outside"], width=row["width"])
+        )
+    return _coolant_columns(housing, row) | {
+        "frame_conductance": frame,
+        "solar_heat": float(heat_paths.solar_heat.plain(housing.solar or 0.0, sunny)),
         "housing_area": area,
         "conductance": _known(housing.conductance),
         "shaft_conductance": shaft,
         "fin_conductance": fin,
-        "oil_conductance": STREAM_CONTACT * float(stream),
+        "oil_conductance": (case.oil.contact or STREAM_CONTACT) * float(stream),
         "machine_heat": housing.machine_heat or 0.0,
         "held_temperature": math.nan,
+    }
+
+
+def _coolant_columns(housing: Housing, row: Mapping[str, float]) -> dict[str, float]:
+    """Conductance into the stream of a cooling jacket, and the inlet temperature it counts from."""
+    if housing.coolant is None or housing.coolant_flow is None or housing.coolant_inlet is None:
+        return {"coolant_conductance": 0.0, "coolant_inlet": 0.0}
+    fluid = coolants.at(housing.coolant, housing.coolant_inlet)
+    section = heat_paths.DUCT * row["width"]  # mm^2, of a duct as high as its hydraulic diameter round the bearing
+    wall = heat_paths.duct_coefficient.plain(
+        housing.coolant_flow * 1e6 / 60 / section / 1000,
+        diameter=heat_paths.DUCT,
+        kinematic_viscosity=fluid.kinematic_viscosity,
+        conductivity=fluid.conductivity,
+        prandtl=fluid.prandtl,
+    )
+    area = housing.jacket_area if housing.jacket_area is not None else math.pi * row["outside"] * row["width"]
+    stream = cooling.stream_conductance.plain(housing.coolant_flow, fluid.density, fluid.heat_capacity)
+    conductance = heat_paths.exchanger_conductance.plain(stream=stream, wall=wall * area * 1e-6)
+    return {"coolant_conductance": float(conductance), "coolant_inlet": housing.coolant_inlet}
+
+
+def _clearance_columns(case: Case) -> dict[str, float]:
+    """Mean clearance of the class, and what the stated fits take of it."""
+    bearing, housing = case.bearing, case.housing
+    if housing.shaft_fit is None:
+        return {"clearance": math.nan, "fit_loss": math.nan}
+    whole = clearance.initial(bearing.family, bearing.bore, bearing.clearance)
+    shaft = clearance.shaft_interference.plain(bearing.bore, clearance.SHAFT_FITS.index(housing.shaft_fit))
+    outer = -1.0  # loose, as bearings usually are in their housing
+    if housing.housing_fit is not None:
+        code = clearance.HOUSING_FITS.index(housing.housing_fit)
+        outer = float(clearance.housing_interference.plain(bearing.outside, code))
+    return {
+        "clearance": math.nan if whole is None else sum(whole) / 2,
+        "fit_loss": float(clearance.fit_loss.plain(shaft=shaft, housing=outer)),
     }
 
 
@@ -495,6 +560,7 @@ def _duty_columns(
     if shaft is None:
         shaft = max(ambient, HOTTEST_SHAFT) if is_hot else ambient
     on_bearing = loads_of(case, duty)
+    frame = case.housing.frame_temperature
     return {
         "share": 1.0 if duty.share is None else duty.share,
         "speed": duty.speed,
@@ -506,23 +572,21 @@ def _duty_columns(
         "shaft_temperature": shaft,
         "shaft_conductance": row["shaft_conductance"] if is_path else 0.0,
         "oil_inlet": case.oil.inlet if case.oil.inlet is not None else ambient,
+        "frame_temperature": ambient if frame is None else frame,
     }
 
 
 def _friction_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float]:
     bearing = case.bearing
-    if case.is_grease:
-        factor = RUN_IN_GREASE
-    else:
-        supply = case.oil.supply or reading["[oil] supply"]
-        factor = {"bath": 1.0, "circulating": 1.0, "mist": MIST}[supply]
-        if supply != "mist" and _is_vertical(case, reading):
-            factor *= VERTICAL_BATH
-        if supply == "bath":
-            # Immersion above the lowest element's centre adds churning: a fully flooded bearing has about three times
-            # the viscous friction (Eschmann, range 2 to 3), taken linear in the level up to the top of the bearing.
-            factor *= 1 + 2 * min(1.0, max(0.0, case.oil.level or 0.0) / bearing.outside)
-    return {"f0": bearing.f0 * factor, "f1": bearing.f1}
+    supply = "grease" if case.is_grease else case.oil.supply or reading["[oil] supply"]
+    shaft = "vertical" if _is_vertical(case, reading) else "horizontal"
+    factor = friction.LUBRICATION[supply, shaft].nominal
+    if supply == "bath":
+        factor *= float(churning.bath_factor.plain(level=case.oil.level or 0.0, outside=bearing.outside))
+    z, y = (0.0, 0.0)
+    if bearing.load_torque == "load dependent":
+        z, y = friction.LOAD_FORM[bearing.family]
+    return {"f0": bearing.f0 * factor, "f1": bearing.f1, "load_z": z, "load_y": y}
 
 
 def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, float]) -> dict[str, float]:

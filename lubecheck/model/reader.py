@@ -18,7 +18,7 @@ from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any, TypeVar
 
-from lubecheck.data import bearings, lubricants
+from lubecheck.data import bearings, coolants, lubricants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis, analyse
@@ -43,6 +43,7 @@ from lubecheck.model.entries import (
 )
 from lubecheck.model.shaft import Problem, duty_faults, faults, opposed_faults
 from lubecheck.model.toml_lines import key_lines
+from lubecheck.physics import friction
 from lubecheck.units import KINDS, UnreadableText, split_text, to_house
 
 STANDARD_INPUT = "-"
@@ -355,7 +356,7 @@ class _Reading:
         given = {
             key: getattr(table, key)
             for key in ("dynamic_rating", "static_rating", "fatigue_limit", "mass", "contact_angle", "clearance",
-                        "seal", "cage", "f0", "f1")
+                        "seal", "cage", "f0", "f1", "load_torque")
             if getattr(table, key) is not None
         }  # fmt: skip
         try:
@@ -368,6 +369,11 @@ class _Reading:
                     outside=float(table.outside or 0),
                     width=float(table.width or 0),
                 )
+            if table.load_torque == "load dependent" and found.family not in friction.LOAD_FORM:
+                expected = (
+                    f"constant for {found.family}: load dependent is published for {', '.join(friction.LOAD_FORM)}"
+                )
+                raise InputError([Fault("load_torque", shown(table.load_torque), expected)])
             return bearings.with_given(found, **given)
         except InputError as refused:
             self._carry(path, refused)
@@ -434,6 +440,25 @@ class _Reading:
                 "either machine_heat or shaft_temperature: both say what the machine sends",
                 plain=True,
             )
+
+        self._coolant(housing)
+        if housing.frame_conductance is not None and housing.frame_temperature is None:
+            self.fault(("housing", "frame_temperature"), "nothing", "the frame's temperature", plain=True)
+
+    def _coolant(self, housing: Housing) -> None:
+        """Refuse a cooling jacket that is not whole, or whose fluid is none."""
+        keys = ("coolant", "coolant_flow", "coolant_inlet")
+        stated = [key for key in keys if getattr(housing, key) is not None]
+        for key in keys:
+            if key not in stated and (stated or housing.jacket_area is not None):
+                self.fault(
+                    ("housing", key), "nothing", "a jacket's coolant, coolant_flow and coolant_inlet", plain=True
+                )
+        if len(stated) == len(keys):
+            try:
+                coolants.at(str(housing.coolant), float(housing.coolant_inlet or 0.0))
+            except InputError as refused:
+                self._carry(("housing",), refused)
 
     def _season_conflicts(self, around: Surroundings | None) -> None:
         if around is None:

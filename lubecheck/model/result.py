@@ -81,13 +81,56 @@ class Operating(Figures):
     """The operating point: the state of the duty point that runs hottest."""
 
     temperature = Declared("degC", "temperature of bearing and lubricant")
+    inner_ring_temperature = Declared("degC", "temperature of inner ring and shaft")
+    outer_ring_temperature = Declared("degC", "temperature of outer ring and housing, what a sensor there reads")
+    inner_ring_excess = Declared("delta_degC", "what the inner ring is warmer than the outer")
     viscosity = Declared("mm^2/s", "kinematic viscosity of the (base) oil at that temperature")
     reference_viscosity = Declared("mm^2/s", "viscosity that the bearing needs (ISO 281)")
     viscosity_ratio = Declared("1", "viscosity ratio kappa, what there is over what is needed")
-    friction_torque = Declared("N*mm", "torque of viscous friction, load and churning together")
+    friction_torque = Declared("N*mm", "torque of viscous friction, load, seals and churning together")
     friction_power = Declared("W", "heat of all that friction")
     churning_power = Declared("W", "the part of it that overfilled grease makes")
     heat_removed = Declared("W", "heat that leaves by housing, shaft and oil, net of what comes in by them")
+    viscous_torque = Declared("N*mm", "torque that the oil's viscosity makes")
+    load_torque = Declared("N*mm", "torque that the load makes on a full film")
+    mixed_film_torque = Declared("N*mm", "what the load torque grows by where the surfaces touch")
+    seal_torque = Declared("N*mm", "torque of rubbing seals")
+    churning_torque = Declared("N*mm", "torque of churned grease")
+    viscous_power = Declared("W", "heat of the viscous torque")
+    load_power = Declared("W", "heat of the load torque")
+    mixed_film_power = Declared("W", "heat of the mixed film")
+    seal_power = Declared("W", "heat of rubbing seals")
+
+
+@dataclass(frozen=True)
+class Heat(Figures):
+    """Where the heat of the operating point comes from and goes to; a path below zero brings heat in."""
+
+    friction = Declared("W", "from friction and churning")
+    machine = Declared("W", "from the machine, stated in watts")
+    sun = Declared("W", "from the sun")
+    air = Declared("W", "from the housing to the air by convection")
+    radiation = Declared("W", "from the housing by radiation")
+    stated = Declared("W", "by the stated conductance, all paths from the housing together")
+    free_shaft = Declared("W", "along the free end of the shaft")
+    machine_shaft = Declared("W", "along the shaft towards the machine")
+    frame = Declared("W", "into the base or frame")
+    coolant = Declared("W", "into the cooling jacket")
+    oil = Declared("W", "with circulating oil")
+
+
+@dataclass(frozen=True)
+class HeatShares(Figures):
+    """The same as shares of all the heat that leaves; 0 for a path that brings heat in."""
+
+    air = Declared("1", "from the housing to the air by convection")
+    radiation = Declared("1", "from the housing by radiation")
+    stated = Declared("1", "by the stated conductance, all paths from the housing together")
+    free_shaft = Declared("1", "along the free end of the shaft")
+    machine_shaft = Declared("1", "along the shaft towards the machine")
+    frame = Declared("1", "into the base or frame")
+    coolant = Declared("1", "into the cooling jacket")
+    oil = Declared("1", "with circulating oil")
 
 
 @dataclass(frozen=True)
@@ -288,6 +331,8 @@ class Result:
     limits: tuple[Limit, ...]
     operating: Operating
     duty: tuple[Operating, ...]  # the same figures for each duty point
+    heat: Heat  # of the operating point
+    heat_shares: HeatShares
     grease: Grease | None  # None for oil
     life: Life
     loads: Loads

@@ -21,6 +21,7 @@ from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
 from lubecheck.model.interval_lines import interval_note, percentile
 from lubecheck.model.kernel import Outcome, parts_rows, takes_loads
+from lubecheck.model.limits import FLASH_MARGIN
 from lubecheck.model.points import (
     BEYOND_SETTINGS,
     DEFAULT_KAPPA,
@@ -34,7 +35,7 @@ from lubecheck.model.points import (
 from lubecheck.model.result import Assumed
 from lubecheck.model.shaft import loads_of
 from lubecheck.model.side_figures import curing_preload, safe_speed
-from lubecheck.physics import cleanliness, fatigue, grease_life, oil_life
+from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_life, oil_life
 from lubecheck.units import KINDS
 
 SAFETY = (
@@ -191,6 +192,30 @@ def _acceleration(case: Case, outcome: Outcome, row: int) -> str:
     return join(held, advice, _duty(case, row))
 
 
+def _rings(case: Case, outcome: Outcome, row: int) -> str:
+    state = outcome.state
+    if not state.is_found[row]:
+        return "no equilibrium, so no temperature of the rings"
+    hotter = "inner" if state.excess[row] >= 0 else "outer"
+    limit = "dimensional stability of the rings"
+    return join(limit, f"the {hotter} one is hotter by {abs(state.excess[row]):.1f} K", _duty(case, row))
+
+
+def _flash(case: Case, outcome: Outcome, row: int) -> str:
+    return f"the oil's flash point of {outcome.points.flash_point[row]:.0f} degC less {FLASH_MARGIN:.0f} K"
+
+
+def _clearance(case: Case, outcome: Outcome, row: int) -> str:
+    points, judged = outcome.points, outcome.judged["clearance"]
+    if math.isnan(points.clearance[row]):
+        return f"no clearance table for {case.bearing.family} of this bore, or class"
+    left = judged.allowed[0] - judged.demand[0]
+    sign = "; below zero: the bearing is preloaded, take a class with more" if left < 0 else ""
+    taken = f"{points.fit_loss[row] * 1000:.0f} um by the fits, the rest by a warmer inner ring"
+    whole = f"{left * 1000:.0f} um are left of {judged.allowed[0] * 1000:.0f} on the average"
+    return f"{case.bearing.clearance}: {whole}{sign}; {taken}"
+
+
 def _minimum_load(case: Case, outcome: Outcome, row: int) -> str:
     judged = outcome.judged["minimum_load"]
     advice = ""
@@ -308,6 +333,9 @@ _NOTES = {
     "film": _film,
     "temperature": _temperature,
     "cold_start": _cold,
+    "rings": _rings,
+    "flash_point": _flash,
+    "clearance": _clearance,
     "fill": _fill,
     "interval": _interval,
     "regrease_amount": _regrease,
@@ -341,7 +369,17 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
         dwell = float(oil_life.dwell_time.plain(case.oil.volume, case.oil.flow))
         if dwell < oil_life.LEAST_DWELL:
             said.append(f"the oil rests {dwell * 60:.1f} min in the circuit: under 5 min air and water stay in it")
+    points = outcome.points
     churned = float(outcome.state.churning_power[0])
+    if points.is_bath[0] and points.level[0] > 0:
+        factor = float(churning.bath_factor.plain(level=points.level[0], outside=points.outside[0]))
+        said.append(
+            f"oil stands above the middle of the lowest element: it churns {factor:.2f} times the usual friction"
+        )
+    if not outcome.state.is_only[: len(case.duty)].all():
+        said.append("more than one temperature would balance the heat, since the film is thin: the hottest is shown")
+    if case.housing.shaft_fit is None and case.bearing.family in clearance.KINDS:
+        said.append("internal clearance was not judged: state [housing] shaft_fit")
     if churned > 0:
         power = float(outcome.state.friction_power[0])
         said.append(f"churning makes {churned:.1f} of {power:.1f} W: the surplus cannot leave and will not run in")

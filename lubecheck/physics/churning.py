@@ -7,45 +7,108 @@ Weigand; Harris).
 
 from __future__ import annotations
 
+from collections.abc import Mapping
+
 import numpy as np
 
 from lubecheck.method import method
-from lubecheck.units import Cm3, Mm, MPaS, NMm, Number, Pa, PerSecond, Rpm, Share, Watt
+from lubecheck.physics.friction import Factor
+from lubecheck.units import Cm3, DegC, Mm, MPaS, NMm, Number, Pa, PerSecond, Rpm, Share, Watt
+
+# The figures of the model, each with its range and its source. The names below are what the functions use.
+PARAMETERS: Mapping[str, Factor] = {
+    "clear share": Factor(0.33, 0.30, 0.35, "common-practice", "fill that finds its place in the bearing by itself"),
+    "gap share": Factor(0.175, 0.15, 0.20, "own-estimate", "gap in which grease is sheared, of the section height"),
+    "yield stress": Factor(300.0, 150.0, 600.0, "palacios", "Pa at 25 degC, soap grease of NLGI 2"),
+    "consistency": Factor(20.0, 10.0, 40.0, "palacios", "Pa s^0.5, soap grease of NLGI 2; goes with the yield stress"),
+    "exponent": Factor(0.5, 0.4, 0.6, "palacios", "of the power-law part"),
+    "softening": Factor(0.01, 0.005, 0.015, "palacios", "1/K, by which yield stress and consistency fall"),
+    "most churning": Factor(4.0, 1.0, 4.0, "eschmann", "times the run-in viscous torque on top of it: 2 to 5 in all"),
+    "fresh grease": Factor(2.2, 2.0, 4.0, "eschmann", "times the run-in viscous torque, of fresh grease"),
+    "passage, shields": Factor(0.5, 0.2, 0.8, "own-estimate", "share of the surplus that leaves past two shields"),
+}
+
+# Yield stress at rest by NLGI grade in Pa: soap greases, halved to doubled within a grade; see greases.csv.
+NLGI_YIELD: Mapping[str, float] = {
+    "000": 15.0, "00": 40.0, "0": 90.0, "1": 170.0, "2": 300.0, "3": 550.0, "4": 1000.0, "5": 1800.0, "6": 3000.0,
+}  # fmt: skip
+
+# Share of the surplus that can leave past what closes one side: an open side all, a shield some, a lip none.
+PASSAGE: Mapping[str, float] = {"open": 1.0, "shields": PARAMETERS["passage, shields"].nominal, "contact seals": 0.0}
+SOFTENING = PARAMETERS["softening"].nominal
+REFERENCE = 25.0  # degC, at which yield stress is stated
+FLOODED = 2.0  # added to 1 when a bearing stands in oil to its top: Eschmann, 2 to 3 times in all, from memory
 
 # Share of the free volume above which grease moves on into the housing when there is room. Common practice puts it at
 # 0.30 to 0.35.
-CLEAR_SHARE = 0.33
+CLEAR_SHARE = PARAMETERS["clear share"].nominal
 
 # The gap in which held grease is sheared, as a share of the section height (D - d)/2. Estimate, range 0.15 to 0.20.
-GAP_SHARE = 0.175
+GAP_SHARE = PARAMETERS["gap share"].nominal
 
 # Exponent of the power-law part of the shear stress of a soap grease (Palacios). From memory, range 0.4 to 0.6.
-POWER_EXPONENT = 0.5
+POWER_EXPONENT = PARAMETERS["exponent"].nominal
 
 # Churning adds at most this many times the run-in viscous torque: published range "2 to 5 times", of which 1 is the
 # run-in torque itself (Eschmann; Harris).
-MOST_CHURNING = 4.0
+MOST_CHURNING = PARAMETERS["most churning"].nominal
 
 
 @method(source="own-estimate", valid={"fill": (0.0, 1.0), "housing_fill": (0.0, 1.0)})
-def held_volume(*, fill: Share, free_volume: Cm3, void: Cm3, housing_fill: Share, is_open: Number) -> Cm3:
+def held_volume(
+    *, fill: Share, free_volume: Cm3, void: Cm3, housing_fill: Share, is_open: Number, passage: Share
+) -> Cm3:
     """Volume of grease that cannot clear and stays to be churned.
 
-    V_held = max(0, max(0, fill - 0.33) V_free - room), room = (1 - housing_fill) V_void; none with the relief open.
+    V_held = V - passage min(V, room), V = max(0, fill - 0.33) V_free, room = (1 - housing_fill) V_void, and without end
+    where the relief is open.
 
     fill [1]: grease in the bearing as a share of its free volume
     free_volume [cm^3]: free volume of the bearing
     void [cm^3]: space in the housing beside the bearing
     housing_fill [1]: share of that space already filled
     is_open [1]: 1 where a relief or drain is open, else 0
+    passage [1]: share of the surplus that can leave at all: 1 past open sides, 0 past contact seals (`PASSAGE`)
     returns [cm^3]
 
-    >>> held_volume(fill=1, free_volume="50 cm^3", void="0 cm^3", housing_fill=0, is_open=0).round(6)
+    >>> held_volume(fill=1, free_volume="50 cm^3", void="0 cm^3", housing_fill=0, is_open=0, passage=1).round(6)
     <Quantity(33.5, 'centimeter ** 3')>
     """
     excess = np.maximum(0.0, fill - CLEAR_SHARE) * free_volume
     room = (1.0 - housing_fill) * void
-    return np.where(is_open > 0, 0.0, np.maximum(0.0, excess - room))
+    leaves = np.where(is_open > 0, excess, np.minimum(excess, room))
+    return excess - passage * leaves
+
+
+@method(source="palacios", valid={"temperature": (-50.0, 250.0)})
+def softening(temperature: DegC) -> Number:
+    """Yield stress of a grease over that at 25 degC: exp(-0.01 (T - 25)), halved in 70 K.
+
+    From memory, 0.005 to 0.015 a kelvin; above the dropping point a grease is an oil, which this does not show.
+
+    temperature [degC]: temperature T, any shape
+    returns [1]
+
+    >>> softening("75 degC").round(3)
+    <Quantity(0.607, 'dimensionless')>
+    """
+    return np.exp((temperature - REFERENCE) * -SOFTENING)
+
+
+@method(source="eschmann", valid={"level": (-5000.0, 5000.0), "outside": (1.0, 1e4)})
+def bath_factor(*, level: Mm, outside: Mm) -> Number:
+    """Viscous friction over that of an oil bath to the centre of the lowest rolling element.
+
+    1 up to that level; above it linear up to 3 where the bearing stands in oil to its top (published 2 to 3).
+
+    level [mm]: oil level above (+) or below (-) the centre of the lowest element, any shape
+    outside [mm]: outside diameter D, broadcasts
+    returns [1]
+
+    >>> bath_factor(level="50 mm", outside="100 mm")
+    <Quantity(2.0, 'dimensionless')>
+    """
+    return 1.0 + FLOODED * np.clip(level / outside, 0.0, 1.0)
 
 
 @method(source="own-estimate")

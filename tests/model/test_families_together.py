@@ -92,7 +92,8 @@ def test_a_sealed_bearing_cannot_be_regreased():
 )
 def test_cage_seals_and_heat_stabilisation_set_the_top_temperature(designation, highest, part):
     case = case_of(designation, lubricant__highest='"180 degC"')
-    limit = lubecheck.check(case).limit("temperature")
+    # Rings have a limit of their own, since they run hotter than the lubricant.
+    limit = lubecheck.check(case).limit("rings" if "rings" in part else "temperature")
     assert limit.allowed == highest
     assert part in limit.note
 

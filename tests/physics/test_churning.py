@@ -15,7 +15,9 @@ volumes = st.floats(0.1, 1e4)
 
 def held(fill, free=50.0, void=0.0, housing_fill=0.0, is_open=0.0):
     return float(
-        churning.held_volume.plain(fill=fill, free_volume=free, void=void, housing_fill=housing_fill, is_open=is_open)
+        churning.held_volume.plain(
+            fill=fill, free_volume=free, void=void, housing_fill=housing_fill, is_open=is_open, passage=1.0
+        )
     )
 
 

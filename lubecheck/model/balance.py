@@ -1,0 +1,358 @@
+"""The heat balance of a position: two rings with the lubricant between them, and every way that heat takes.
+
+    machine shaft, free shaft, watts of the machine -- inner ring
+                                                          |        circulating oil
+                                                      lubricant -- (friction and churning make their heat here)
+                                                          |
+                     air, radiation, frame, coolant, sun -- outer ring and housing
+
+The lubricant's temperature is that of friction and film. All paths follow from the outer ring's temperature without a
+further search: what the housing gives off has come from the lubricant, which says how much warmer that is, and the
+inner ring floats between the lubricant and the shaft. One unknown is left a row.
+
+Everything is counted from the coldest sink, the floor: no node can be colder, so that every term has one sign.
+"""
+
+from __future__ import annotations
+
+import dataclasses
+from collections.abc import Callable, Mapping
+from dataclasses import dataclass
+from typing import Any
+
+import numpy as np
+
+from lubecheck.data import air
+from lubecheck.model.points import Points, seal_diameter
+from lubecheck.physics import churning, cooling, film, friction, heat_paths, loads, viscosity
+from lubecheck.units import Array
+
+Air = Callable[[Array, Array], air.AirProperties]
+
+EMISSIVITY = 0.9  # painted, oily or rusted housing: handbooks, 0.85 to 0.95
+GREASE_CONSISTENCY = 1 / 15  # Pa s^0.5 a Pa of yield stress: 20 at 300 Pa (NLGI 2, representative)
+HOTTEST_LUBRICANT = 400.0  # degC: friction is held to its value there, so that a search may look beyond
+HELD_TOGETHER = 1e12  # W/K: a stated temperature is that of the whole bearing
+USUAL_STILL = 11.0  # W/(m^2*K), of still air with radiation: for a first guess, as the next three
+USUAL_BLOWN = 4.0  # W/(m^2*K) for each m/s
+USUAL_RISE = 25.0  # K
+THINNING = 0.65  # exponent by which the rise follows the heat
+PATHS = ("air", "radiation", "stated", "free_shaft", "machine_shaft", "frame", "coolant", "oil")
+
+
+@dataclass(frozen=True, slots=True)
+class Heat:
+    """One evaluation of the balance."""
+
+    floor: Array  # degC, the coldest sink
+    inner_rise: Array  # K above it, as the next two
+    lubricant_rise: Array
+    outer_rise: Array
+    viscosity: Array
+    viscous_torque: Array
+    mixed_torque: Array
+    churning_torque: Array
+    friction_power: Array
+    heat_in: Array  # friction, machine, sun and warm sinks, counted from the floor
+    heat_out: Array
+    housing: Array  # W/K, of the housing to the ambient
+    radiation: Array  # W/(m^2*K), the part of it by radiation
+
+    @property
+    def inner(self) -> Array:
+        """Temperature of inner ring and shaft, degC."""
+        return self.floor + self.inner_rise
+
+    @property
+    def lubricant(self) -> Array:
+        """Temperature of the lubricant, degC."""
+        return self.floor + self.lubricant_rise
+
+    @property
+    def outer(self) -> Array:
+        """Temperature of outer ring and housing, degC."""
+        return self.floor + self.outer_rise
+
+    def take(self, rows: Any) -> Heat:
+        """Return the evaluation of some of the rows."""
+        return Heat(**{f.name: getattr(self, f.name)[rows] for f in dataclasses.fields(self)})
+
+
+@dataclass(frozen=True, slots=True)
+class Balance:
+    """What does not depend on temperature, worked out once for every row."""
+
+    air: Air
+    floor: Array  # degC, the coldest sink
+    ambient: Array
+    pressure: Array
+    speed: Array
+    watt_a_torque: Array
+    walther_a: Array
+    walther_b: Array
+    millipascal: Array  # mPa s a mm^2/s
+    viscous_factor: Array  # on Palmgren's viscous torque at f0 1
+    pitch_diameter: Array
+    equivalent_load: Array
+    load_torque: Array
+    most_mixed: Array  # N mm, of the mixed film at kappa 0
+    reference_viscosity: Array
+    seal_torque: Array
+    held_volume: Array
+    shear_rate: Array
+    yield_stress: Array
+    churning_factor: Array
+    ring: Array  # W/K, between a ring and the lubricant
+    area: Array  # m^2
+    diameter: Array  # mm, of a cylinder as long as it is wide with that area
+    forced: Array  # m/s
+    stated: Array  # W/K, NaN where the area is known
+    cooling_factor: Array
+    solar_heat: Array
+    machine_heat: Array
+    free_shaft: Array  # W/K, and so on
+    machine_shaft: Array
+    frame: Array
+    coolant: Array
+    oil: Array
+    ambient_over: Array  # K over the floor, and so on
+    shaft_over: Array
+    frame_over: Array
+    coolant_over: Array
+    oil_over: Array
+    steady_out: Array  # W/K, of the outer ring's paths that do not depend on temperature
+    steady_in: Array  # W, from the warm ones among all paths that do not depend on temperature
+
+    def __len__(self) -> int:
+        return len(self.floor)
+
+    def take(self, rows: Any) -> Balance:
+        """Return the balance of some of the rows."""
+        taken = {f.name: getattr(self, f.name)[rows] for f in dataclasses.fields(self) if f.name != "air"}
+        return Balance(air=self.air, **taken)
+
+    def at(self, rise: Array) -> Heat:
+        """Evaluate the balance with the outer ring at a rise above the floor."""
+        housing, radiation = self._housing(self.floor + rise)
+        given_off = housing * (rise - self.ambient_over) + self.frame * (rise - self.frame_over)
+        given_off += self.coolant * (rise - self.coolant_over) - self.solar_heat
+        lubricant = rise + given_off / self.ring
+        # The inner ring floats between the lubricant and the shaft.
+        shaft = self.machine_shaft * self.shaft_over + self.free_shaft * self.ambient_over
+        inside = self.machine_shaft + self.free_shaft
+        inner = (self.ring * lubricant + shaft + self.machine_heat) / (self.ring + inside)
+        nu, viscous, mixed, churned = self._torques(self.floor + lubricant)
+        power = self.watt_a_torque * (viscous + self.load_torque + mixed + self.seal_torque + churned)
+        heat_in = power + self.steady_in + housing * self.ambient_over
+        heat_out = (housing + self.steady_out) * rise + inside * inner + self.oil * lubricant
+        return Heat(
+            floor=self.floor,
+            inner_rise=inner,
+            lubricant_rise=lubricant,
+            outer_rise=rise,
+            viscosity=nu,
+            viscous_torque=viscous,
+            mixed_torque=mixed,
+            churning_torque=churned,
+            friction_power=power,
+            heat_in=heat_in,
+            heat_out=heat_out,
+            housing=housing,
+            radiation=radiation,
+        )
+
+    def guess(self) -> Array:
+        """Return a first guess of the rise: the network with fixed conductances, and friction at a guessed warmth."""
+        usual = self.cooling_factor * self.area * (USUAL_STILL + USUAL_BLOWN * self.forced)
+        housing = np.where(np.isnan(self.stated), usual, self.stated)
+        outside = housing + self.steady_out
+        outside_heat = housing * self.ambient_over + self.frame * self.frame_over
+        outside_heat += self.coolant * self.coolant_over + self.solar_heat
+        inside = self.machine_shaft + self.free_shaft
+        inside_heat = self.machine_shaft * self.shaft_over + self.free_shaft * self.ambient_over + self.machine_heat
+        # What each ring passes on to the lubricant.
+        to_outside, to_inside = self.ring / (self.ring + outside), self.ring / (self.ring + inside)
+        whole = outside * to_outside + inside * to_inside + self.oil
+        heat = outside_heat * to_outside + inside_heat * to_inside + self.oil * self.oil_over
+        idle = heat / whole  # K, of the lubricant without friction
+        _, viscous, mixed, churned = self._torques(self.floor + idle + USUAL_RISE)
+        friction_heat = self.watt_a_torque * (viscous + self.load_torque + mixed + self.seal_torque + churned)
+        # Friction falls by about 2 % a kelvin: the rise for which it falls as the heat needs.
+        warm = friction_heat / whole
+        rise = USUAL_RISE * np.exp(THINNING * np.log(np.maximum(warm, 1e-9) / USUAL_RISE))
+        return (self.ring * (idle + rise) + outside_heat) / (self.ring + outside)
+
+    def _torques(self, lubricant: Array) -> tuple[Array, Array, Array, Array]:
+        """Viscosity, and the torques of viscous friction, mixed film and churning."""
+        # Outside these bounds the search only passes through.
+        temperature = np.minimum(np.maximum(lubricant, self.floor), HOTTEST_LUBRICANT)
+        nu = viscosity.viscosity_from_constants.plain(temperature, a=self.walther_a, b=self.walther_b)
+        viscous = friction.no_load_torque.plain(self.viscous_factor, nu, self.speed, self.pitch_diameter)
+        kappa = film.viscosity_ratio.plain(nu=nu, nu_1=self.reference_viscosity)
+        mixed = self.most_mixed * friction.mixed_film_share.plain(kappa)
+        return nu, viscous, mixed, self._churned(temperature, nu, viscous)
+
+    def _churned(self, temperature: Array, nu: Array, viscous: Array) -> Array:
+        churned = np.zeros_like(nu)
+        rows = np.flatnonzero(self.held_volume > 0)  # most positions hold none
+        if len(rows):
+            soft = self.yield_stress[rows] * churning.softening.plain(temperature[rows])
+            stress = churning.shear_stress.plain(
+                self.shear_rate[rows],
+                yield_stress=soft,
+                consistency=soft * GREASE_CONSISTENCY,
+                base_viscosity=nu[rows] * self.millipascal[rows],
+            )
+            sheared = churning.shear_power.plain(self.held_volume[rows], self.shear_rate[rows], stress)
+            churned[rows] = churning.held_to_range.plain(
+                churning_torque=self.churning_factor[rows] * sheared / self.watt_a_torque[rows],
+                run_in_torque=viscous[rows],
+            )
+        return churned
+
+    def _housing(self, outer: Array) -> tuple[Array, Array]:
+        """Conductance of the housing to the ambient, W/K, and the coefficient of radiation, W/(m^2*K)."""
+        air_film = self.air((outer + self.ambient) / 2, self.pressure)
+        nu = air_film.kinematic_viscosity_mm2
+        still = cooling.natural_convection.plain(
+            surface=outer,
+            ambient=self.ambient,
+            diameter=self.diameter,
+            kinematic_viscosity=nu,
+            conductivity=air_film.conductivity,
+            prandtl=air_film.prandtl,
+            expansion=air_film.expansion,
+        )
+        blown = cooling.forced_convection.plain(
+            velocity=self.forced,
+            diameter=self.diameter,
+            kinematic_viscosity=nu,
+            conductivity=air_film.conductivity,
+            prandtl=air_film.prandtl,
+        )
+        convection = cooling.mixed_convection.plain(natural=still, forced=blown)
+        radiation = cooling.radiation.plain(surface=outer, surroundings=self.ambient, emissivity=EMISSIVITY)
+        by_area = (convection + radiation) * self.area
+        return self.cooling_factor * np.where(np.isnan(self.stated), by_area, self.stated), radiation
+
+    def paths(self, heat: Heat) -> Mapping[str, Array]:
+        """What leaves by each path, W; below zero: it comes in."""
+        is_stated = ~np.isnan(self.stated)
+        over_air = heat.outer_rise - self.ambient_over
+        housing, radiated = heat.housing * over_air, heat.radiation * self.cooling_factor * self.area * over_air
+        paths = (
+            np.where(is_stated, 0.0, housing - radiated),
+            np.where(is_stated, 0.0, radiated),
+            np.where(is_stated, housing, 0.0),
+            self.free_shaft * (heat.inner_rise - self.ambient_over),
+            self.machine_shaft * (heat.inner_rise - self.shaft_over),
+            self.frame * (heat.outer_rise - self.frame_over),
+            self.coolant * (heat.outer_rise - self.coolant_over),
+            self.oil * (heat.lubricant_rise - self.oil_over),
+        )
+        return dict(zip(PATHS, paths, strict=True))
+
+
+def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
+    """Work out the balance of every row as far as it does not depend on temperature."""
+    p = points
+    equivalent = loads.dynamic_equivalent_load.plain(
+        radial_load=p.radial_load,
+        axial_load=p.axial_load,
+        static_rating=p.static_rating,
+        f0_load=p.f0_load,
+        contact_angle=p.contact_angle,
+        rule=p.rule,
+    )
+    load_torque = p.f1_factor * friction.load_torque.plain(_load_factor(p), equivalent, p.pitch_diameter)
+    # Oil bearings have no fill: nothing is held.
+    fill = np.where(p.is_grease > 0, np.minimum(np.nan_to_num(p.fill), 1.0), 0.0)
+    is_by_area = np.isnan(p.conductance)
+    area = np.where(is_by_area, p.housing_area, 1.0) * 1e-6
+    free_shaft = p.cooling_factor * np.where(is_by_area, p.fin_conductance, 0.0)
+    sinks = (
+        (p.frame_conductance, p.frame_temperature),
+        (p.coolant_conductance, p.coolant_inlet),
+        (p.shaft_conductance, p.shaft_temperature),
+        (p.oil_conductance, p.oil_inlet),
+        (free_shaft, p.ambient),
+    )
+    floor = p.ambient
+    for conductance, temperature in sinks:
+        floor = np.where(conductance > 0, np.minimum(floor, temperature), floor)
+    warm = sum((conductance * (temperature - floor) for conductance, temperature in sinks), np.zeros(len(p)))
+    return Balance(
+        air=air_properties,
+        floor=floor,
+        ambient=p.ambient,
+        pressure=p.pressure,
+        speed=p.speed,
+        watt_a_torque=friction.power.plain(1.0, p.speed),
+        walther_a=p.walther_a,
+        walther_b=p.walther_b,
+        millipascal=p.density * 1e-3,  # mm^2/s times kg/m^3 is 1e-3 mPa s
+        viscous_factor=p.f0_factor * p.f0,
+        pitch_diameter=p.pitch_diameter,
+        equivalent_load=equivalent,
+        load_torque=load_torque,
+        most_mixed=p.mixed_factor * load_torque,
+        reference_viscosity=film.reference_viscosity.plain(p.speed, p.pitch_diameter),
+        seal_torque=p.seal_factor
+        * friction.seal_torque.plain(
+            seal_diameter(p.bore, p.outside), p.rubbing_seals, friction.SEAL_LINE_FRICTION.nominal
+        ),
+        held_volume=churning.held_volume.plain(
+            fill=fill,
+            free_volume=p.free_volume,
+            void=p.void,
+            housing_fill=p.housing_fill,
+            is_open=p.is_open,
+            passage=p.passage,
+        ),
+        shear_rate=churning.shear_rate.plain(p.speed, bore=p.bore, outside=p.outside),
+        yield_stress=p.yield_stress,
+        churning_factor=p.churning_factor,
+        ring=np.where(
+            np.isnan(p.held_temperature),
+            p.ring_factor * heat_paths.ring_conductance.plain(p.speed, pitch_diameter=p.pitch_diameter, width=p.width),
+            HELD_TOGETHER,
+        ),
+        area=area,
+        diameter=np.sqrt(area / np.pi) * 1000,
+        forced=p.draught,
+        stated=p.conductance,
+        cooling_factor=p.cooling_factor,
+        solar_heat=p.solar_heat,
+        machine_heat=p.machine_heat,
+        free_shaft=free_shaft,
+        machine_shaft=p.shaft_conductance,
+        frame=p.frame_conductance,
+        coolant=p.coolant_conductance,
+        oil=p.oil_conductance,
+        ambient_over=p.ambient - floor,
+        shaft_over=p.shaft_temperature - floor,
+        frame_over=p.frame_temperature - floor,
+        coolant_over=p.coolant_inlet - floor,
+        oil_over=p.oil_inlet - floor,
+        steady_out=p.frame_conductance + p.coolant_conductance,
+        steady_in=warm + p.machine_heat + p.solar_heat,
+    )
+
+
+def _load_factor(points: Points) -> Array:
+    """f1 of every row: constant, or z (P0/C0)^y where the case asks for that form."""
+    p = points
+    rows = np.flatnonzero(p.load_z > 0)
+    if not len(rows):
+        return p.f1
+    load = loads.static_equivalent_load.plain(
+        radial_load=p.radial_load[rows],
+        axial_load=p.axial_load[rows],
+        contact_angle=p.contact_angle[rows],
+        rule=p.rule[rows],
+    )
+    factor = p.f1.copy()
+    factor[rows] = friction.load_coefficient.plain(
+        p.load_z[rows], p.load_y[rows], static_load=load, static_rating=p.static_rating[rows]
+    )
+    return factor
