@@ -93,7 +93,7 @@ def test_water_shortens_life_by_cantleys_law_and_says_so():
 
 
 def test_a_wet_place_whose_oil_was_not_tested_is_judged_at_the_wettest_oil_too():
-    text = PUMP.replace('vibration = "smooth"', 'vibration = "smooth"\nwater = "wet"')
+    text = PUMP.replace('water = "dry"', 'water = "wet"')
     limit = lubecheck.check(read_case(text)).limit("fatigue_life")
     assert limit.state == "unknown"
     assert "state [cleanliness] water" in limit.note
