@@ -80,7 +80,7 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
     if outcome.judged["interval"].applies[0]:
         interval = chosen("interval", points.interval[0], outcome.proposed_interval[0])
     feeding = None
-    if case.is_grease and interval is not None and interval < CONTINUOUS_BELOW_DAYS * hours_per_day:
+    if regrease is not None and interval is not None and interval < CONTINUOUS_BELOW_DAYS * hours_per_day:
         feeding = feed(case)[1]
     kept = case.grease if case.is_grease else case.oil
     # An interval that the user plans by the calendar has the standstills in it already.

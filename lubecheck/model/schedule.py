@@ -20,6 +20,7 @@ from lubecheck.units import POUND_G
 
 ROUTES = {"weekly": 7, "monthly": 28, "quarterly": 91}  # days; 4 and 13 weeks, so that a round keeps its weekday
 NEGLECTED = 2.0  # intervals overdue from which the filling is renewed by purging: estimate of this program
+NO_ROOM = "open a way out or clean out"
 GRAMS_PER_OUNCE = POUND_G / 16
 
 
@@ -28,7 +29,7 @@ class PlanRow:
     """One position of the plan. A field that does not apply is None."""
 
     position: str
-    action: str  # "regrease", "feed continuously", "change the oil", "replace the bearing", "settle the verdict"
+    action: str  # "regrease", "feed continuously", "change the oil", "replace the bearing" and so on
     lubricant: str
     first_fill_g: float | None
     housing_fill_g: float | None
@@ -89,6 +90,8 @@ def _row(result: Result, start: datetime.date, round_days: int | None, route: st
         notes.append("due more often than daily: use an automatic feeder or oil")
     last = None if plan.last_done is None else datetime.date.fromisoformat(plan.last_done)
     due, said = _due(plan, interval_h, planned, last, start, round_days)
+    if action == NO_ROOM:
+        due, said = start, ["to be done before it runs on; the interval counts from the new filling"]
     notes += said
     purge = _purge(result, interval_h, days, last, start)
     if purge is not None:
@@ -140,7 +143,10 @@ def _action(result: Result) -> str:
         return "change the oil"
     if plan.feed_g_per_h is not None:
         return "feed continuously"
-    return "regrease" if plan.regrease_g is not None else "replace the bearing"
+    if plan.regrease_g is not None:
+        return "regrease"
+    is_closed = result.amounts is None or result.amounts.figures["regrease_quantity"].value is None
+    return "replace the bearing" if is_closed else NO_ROOM
 
 
 def _density(result: Result) -> float:

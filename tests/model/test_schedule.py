@@ -129,6 +129,15 @@ def test_a_standstill_counts_only_for_an_interval_in_running_hours():
     assert schedule([by_hours], START)[0].planned_days == 420 + 21  # 420 days of running hold one whole year of it
 
 
+def test_a_position_without_room_is_not_taken_for_a_closed_bearing():
+    result = lubecheck.check(lubecheck.load_case(EXAMPLES / "overfilled_motor.toml"))
+    row = schedule([result], START)[0]
+    assert row.action == "open a way out or clean out"
+    assert row.next_due == START
+    assert row.amount_g is None
+    assert row.feed_g_per_h is None
+
+
 def test_strokes_grams_ounces_and_volume_agree():
     row = schedule([lubecheck.check(lubecheck.load_case(EXAMPLES / "new_motor.toml"))], START)[0]
     assert row.amount_g == pytest.approx(row.strokes * row.stroke_g)
