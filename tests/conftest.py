@@ -9,6 +9,7 @@ import pytest
 
 ROOT = Path(__file__).parents[1]
 EXAMPLES = ROOT / "examples"
+collect_ignore = ["benchmarks"]  # scripts that are run on purpose, with paths of their own
 
 BASE = """\
 [bearing]

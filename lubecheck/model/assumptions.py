@@ -7,6 +7,7 @@ nothing is assumed in silence. A decision left out (a fill, an interval) is no f
 
 from __future__ import annotations
 
+import math
 from collections.abc import Callable, Iterator
 from dataclasses import dataclass
 from typing import Any
@@ -25,7 +26,6 @@ HOUSING_AREA = {
 }
 SMALLEST_AREA = min(low for low, _, _ in HOUSING_AREA.values())
 
-HOTTEST_SHAFT = 140.0  # degC, of a machine that nobody described: common practice for hot fans and motors, estimate
 # mm, where 0.00411 (1 - 3.8974/Dpw^(1/3)) and 0.00617 (1 - 4.06/Dpw^(1/3)) of ISO 281, Annex A, meet
 DIRTIEST_CODE_FROM = 84.3
 # Time from rest to speed. The rule of the shortest is an estimate: unloaded motors started direct on line need about
@@ -35,6 +35,7 @@ ORDINARY_RUN_UP = 5.0  # s: estimate, a start that nobody calls rapid takes 2 to
 SHORTEST_RUN_UP = 1e-3  # s a mm of mean diameter
 WETTEST_OIL = cleanliness.WATER_RANGE[1]  # beyond it the effect on life is not known
 WET = tuple(answer.word for answer in grease_life.WATER[-2:])  # surroundings that put water into the oil
+PROPOSED_HOUSING_FILL = 0.4  # common practice, 30 to 50 %
 LARGEST_ALTITUDE = 5000e3  # mm, the highest that a case may state
 
 
@@ -65,6 +66,15 @@ def _missing(table: str, key: str, *, grease: bool | None = None) -> Callable[[C
         return getattr(getattr(case, table), key) is None and (grease is None or case.is_grease == grease)
 
     return test
+
+
+def is_bath(case: Case) -> bool:
+    """Tell an oil bath, which is also what a supply that nobody named is read as."""
+    return not case.is_grease and case.oil.supply in (None, "bath")
+
+
+def _is_estimated(key: str) -> Callable[[Case], bool]:
+    return lambda case: key in case.bearing.estimated
 
 
 def _no_cooling(case: Case) -> bool:
@@ -114,7 +124,12 @@ FACTS: tuple[Fact, ...] = (
     Fact("surroundings", "orientation", "horizontal", "vertical", "horizontal", "common-practice", THERMAL,
          _missing("surroundings", "orientation")),
     Fact("housing", "kind", "pedestal", "smallest", "pedestal", "own-estimate", THERMAL, _no_cooling),
-    Fact("housing", "machine_heat", 0.0, HOTTEST_SHAFT, "none", "own-estimate", THERMAL, _no_machine_heat),
+    # What a machine sends cannot be guessed, nor bounded: not a number, so that what hangs on it is not judged.
+    Fact("housing", "machine_heat", 0.0, math.nan, "none", "own-estimate", THERMAL, _no_machine_heat),
+    Fact("bearing", "cage", "metal", "polyamide", "metal", "common-practice", ("temperature",),
+         lambda case: case.bearing.cage is None),
+    *(Fact("bearing", key, "estimate", "low", "estimated", "iso-281", ("fatigue_life", "static_load"),
+           _is_estimated(key)) for key in ("dynamic_rating", "static_rating", "fatigue_limit")),
     Fact("housing", "solar", 0.0, 0.0, "none, in the shade", "common-practice", THERMAL,
          lambda case: case.housing.solar is None),
     Fact("housing", "void", None, 0.0, "as much as the bearing's free volume", "own-estimate",
@@ -123,12 +138,16 @@ FACTS: tuple[Fact, ...] = (
          _missing("housing", "relief", grease=True)),
     Fact("grease", "fill", 0.5, 1.0, "30 to 100 %", "common-practice", ("fill", *THERMAL),
          lambda case: case.is_grease and case.grease.fill == "unknown"),
+    Fact("grease", "housing_fill", PROPOSED_HOUSING_FILL, 1.0, "40 % beside an unknown fill", "common-practice",
+         ("fill", *THERMAL), lambda case: case.grease.fill == "unknown" and case.grease.housing_fill is None),
     Fact("grease", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
          lambda case: _no_grease_hours(case) and not _plans_running_hours(case)),
     # Grease ages at rest too: an interval in running hours is worst for a machine that hardly runs.
     Fact("grease", "hours_per_day", 24.0, 0.1, "24 h", "common-practice", ("interval",),
          lambda case: _no_grease_hours(case) and _plans_running_hours(case)),
     Fact("oil", "supply", "bath", "bath", "bath", "common-practice", THERMAL, _missing("oil", "supply", grease=False)),
+    Fact("oil", "level", "middle", "flooded", "the middle of the lowest rolling element", "neale",
+         ("oil_level", *THERMAL), lambda case: not case.is_grease and case.oil.level is None and is_bath(case)),
     Fact("oil", "hours_per_day", 24.0, 24.0, "24 h", "common-practice", ("interval",),
          _missing("oil", "hours_per_day", grease=False)),
     Fact("duty", "acceleration", "ordinary", "shortest", f"no rapid starts or stops, {ORDINARY_RUN_UP:g} s to speed",

@@ -13,9 +13,10 @@ from collections.abc import Callable
 
 import numpy as np
 
+from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import judge
-from lubecheck.model.points import PROPOSED_HOUSING_FILL, Points, join
+from lubecheck.model.points import Points, join
 from lubecheck.model.result import Loss, LossAccount
 from lubecheck.physics import film, loads, viscosity
 from lubecheck.physics.fatigue import SETTINGS

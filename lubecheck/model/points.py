@@ -18,7 +18,7 @@ from numpy.typing import NDArray
 from lubecheck.data import coolants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
-from lubecheck.model.assumptions import HOTTEST_SHAFT, HOUSING_AREA, SMALLEST_AREA
+from lubecheck.model.assumptions import HOUSING_AREA, PROPOSED_HOUSING_FILL, SMALLEST_AREA
 from lubecheck.model.entries import Amount, Case, Duty, GreasePlan, Housing
 from lubecheck.model.shaft import acceleration_of, loads_of
 from lubecheck.physics import (
@@ -80,7 +80,6 @@ OIL_HEAT_CAPACITY = 1900.0  # J/(kg*K), mineral oil at 50 degC; 1700 to 2100, ha
 STREAM_CONTACT = 0.5  # share of its warming that circulating oil takes at the bearing: estimate, 0.3 to 0.8
 BEYOND_SETTINGS = -1  # Points.setting of oil dirtier than ISO 281 has a setting for
 FACTORS = ("cooling_factor", "f0_factor", "f1_factor", "churning_factor", "mixed_factor", "seal_factor", "ring_factor")
-PROPOSED_HOUSING_FILL = 0.4  # common practice, 30 to 50 %
 
 
 @dataclass(frozen=True, slots=True)
@@ -251,7 +250,7 @@ def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dic
     """
     shared = _bearing_columns(case.bearing, reading)
     family = FAMILIES[case.bearing.family]
-    shared |= _lubricant_columns(case)
+    shared |= _lubricant_columns(case, reading)
     shared |= _surroundings_columns(case, reading)
     shared |= _housing_columns(case, reading, shared)
     shared |= _requirement_columns(case, reading, family)
@@ -306,14 +305,20 @@ def seasons(case: Case) -> tuple[float, ...]:
     return tuple(low + (high - low) * w ** math.exp(least) for w in wave)
 
 
+def _stated(value: float | None, assumed: float) -> float:
+    return assumed if value is None else value
+
+
 def _known(value: float | None) -> float:
     return math.nan if value is None else float(value)
 
 
 def _bearing_columns(bearing: Bearing, reading: Mapping[str, Any]) -> dict[str, float]:
     family = FAMILIES[bearing.family]
-    low = {key: bearing.estimated.get(key, (1.0, 1.0))[0] if reading.get("[bearing] ratings") == "low" else 1.0
-           for key in ("dynamic_rating", "static_rating", "fatigue_limit")}  # fmt: skip
+    low = {
+        key: bearing.estimated[key][0] if reading.get(f"[bearing] {key}") == "low" else 1.0
+        for key in ("dynamic_rating", "static_rating", "fatigue_limit")
+    }
     volume = grease_amount.free_volume.plain(
         bore=bearing.bore, outside=bearing.outside, width=bearing.width, mass=bearing.mass
     )
@@ -362,14 +367,15 @@ def seal_diameter(bore: Any, outside: Any) -> Any:
     return bore + 0.2 * (outside - bore)
 
 
-def _lubricant_columns(case: Case) -> dict[str, float]:
+def _lubricant_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float]:
     lubricant = case.lubricant
+    cage = case.bearing.cage or reading.get("[bearing] cage")
     family = FAMILIES[case.bearing.family]
     mean_diameter = (case.bearing.bore + case.bearing.outside) / 2
     a, b = viscosity.walther_constants.plain(nu_40=lubricant.nu_40, nu_100=lubricant.nu_100)
     limits = (
         _known(lubricant.highest),
-        POLYAMIDE_LIMIT if case.bearing.cage == "polyamide" else math.inf,
+        POLYAMIDE_LIMIT if cage == "polyamide" else math.inf,
         NITRILE_LIMIT if case.bearing.seal == "contact seals" else math.inf,
         math.inf if case.limits.highest_temperature is None else case.limits.highest_temperature,
     )
@@ -470,7 +476,9 @@ def _housing_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, f
         "shaft_conductance": shaft,
         "fin_conductance": fin,
         "oil_conductance": (case.oil.contact or STREAM_CONTACT) * float(stream),
-        "machine_heat": housing.machine_heat or 0.0,
+        "machine_heat": reading.get("[housing] machine_heat", 0.0)
+        if housing.machine_heat is None
+        else housing.machine_heat,
         "held_temperature": math.nan,
     }
 
@@ -553,12 +561,11 @@ def _duty_columns(
     ambient = season if duty.ambient is None else duty.ambient
     draught = duty.draught if duty.draught is not None else around.draught
     shaft = duty.shaft_temperature if duty.shaft_temperature is not None else case.housing.shaft_temperature
-    is_hot = shaft is None and bool(reading.get("[housing] machine_heat", 0.0))
-    # The shaft towards the machine carries heat where its temperature is stated or has to be feared; where the
-    # machine's heat is stated in watts, or all paths together as one conductance, it is in there already.
-    is_path = shaft is not None or is_hot or (case.housing.machine_heat is None and case.housing.conductance is None)
+    # The shaft towards the machine carries heat where its temperature is stated; where the machine's heat is stated in
+    # watts, or all paths together as one conductance, it is in there already.
+    is_path = shaft is not None or (case.housing.machine_heat is None and case.housing.conductance is None)
     if shaft is None:
-        shaft = max(ambient, HOTTEST_SHAFT) if is_hot else ambient
+        shaft = ambient
     on_bearing = loads_of(case, duty)
     frame = case.housing.frame_temperature
     return {
@@ -582,11 +589,18 @@ def _friction_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float
     shaft = "vertical" if _is_vertical(case, reading) else "horizontal"
     factor = friction.LUBRICATION[supply, shaft].nominal
     if supply == "bath":
-        factor *= float(churning.bath_factor.plain(level=case.oil.level or 0.0, outside=bearing.outside))
+        factor *= float(churning.bath_factor.plain(level=_level(case, reading), outside=bearing.outside))
     z, y = (0.0, 0.0)
     if bearing.load_torque == "load dependent":
         z, y = friction.LOAD_FORM[bearing.family]
     return {"f0": bearing.f0 * factor, "f1": bearing.f1, "load_z": z, "load_y": y}
+
+
+def _level(case: Case, reading: Mapping[str, Any]) -> float:
+    """Return the oil level from the centre of the lowest element; flooded reaches over the bearing."""
+    if case.oil.level is not None:
+        return case.oil.level
+    return case.bearing.outside if reading.get("[oil] level") == "flooded" else 0.0
 
 
 def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, float]) -> dict[str, float]:
@@ -603,7 +617,9 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
     else:
         fill = volume_of(plan.fill, volume, grams_per_cm3) / volume
     room = volume if void is None else void
-    housing_fill = PROPOSED_HOUSING_FILL if plan.housing_fill is None else plan.housing_fill
+    housing_fill = plan.housing_fill
+    if housing_fill is None:
+        housing_fill = reading.get("[grease] housing_fill", PROPOSED_HOUSING_FILL)
     if plan.given is not None:
         # What the bearing has no room for went into the space beside it.
         found = fill_found(plan, fill, volume, grams_per_cm3)
@@ -623,7 +639,7 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
         "regrease_mass": mass * grams_per_cm3,
         "regrease_rule": REGREASE_RULES.index(plan.rule or "side"),
         "is_bath": float(not case.is_grease and (case.oil.supply or reading.get("[oil] supply")) == "bath"),
-        "level": case.oil.level or 0.0,
+        "level": _level(case, reading),
         "is_circulating": float(not case.is_grease and case.oil.supply == "circulating"),
     }
 

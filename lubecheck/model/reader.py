@@ -195,6 +195,7 @@ class _Reading:
         cleanliness = self._table(document, "cleanliness", Cleanliness) or Cleanliness()
         limits = self._table(document, "limits", Requirements) or Requirements()
         self._housing_conflicts(housing)
+        self._stream_needs(oil)
         self._season_conflicts(surroundings)
         if grease.given is not None and grease.given.kind == "strokes" and grease.stroke is None:
             self.fault(("grease", "stroke"), "nothing", 'a weighed stroke such as "1.2 g", as strokes were given',
@@ -423,6 +424,13 @@ class _Reading:
                     line=self.lines.get(here) or self.lines.get(path),
                 )
             )
+
+    def _stream_needs(self, oil: OilPlan) -> None:
+        """Circulating oil cools by its flow and its inlet temperature: neither can be guessed."""
+        if oil.supply == "circulating":
+            for key, entry in entries(OilPlan):
+                if key in ("flow", "inlet") and getattr(oil, key) is None:
+                    self.fault(("oil", key), "nothing", f"{entry.expected}, since the oil circulates", plain=True)
 
     def _housing_conflicts(self, housing: Housing) -> None:
         if housing.conductance is not None:

@@ -16,7 +16,7 @@ from lubecheck.data.oil_analysis import OilAnalysis
 from lubecheck.model import given as after
 from lubecheck.model import limits, oil_words
 from lubecheck.model.amounts import CARTRIDGE_G
-from lubecheck.model.assumptions import FACTS, Fact
+from lubecheck.model.assumptions import FACTS, PROPOSED_HOUSING_FILL, Fact
 from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
 from lubecheck.model.interval_lines import interval_note, percentile
@@ -28,7 +28,6 @@ from lubecheck.model.points import (
     DEFAULT_LIFE,
     DEFAULT_RELIABILITY,
     LIMIT_ORIGINS,
-    PROPOSED_HOUSING_FILL,
     RULE_DAYS,
     seasons,
 )
@@ -422,7 +421,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     said = []
     judged_too = {fact.name for fact in moving}
     for fact in FACTS:
-        if fact.is_missing(case):
+        if fact.is_missing(case) and fact.usual != "estimate":  # estimated figures are listed with their values below
             worst = " (judged at its worst as well)" if fact.name in judged_too else ""
             said.append(Assumed(fact.name, fact.text + worst, fact.basis))
     own = case.limits
@@ -432,7 +431,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         ("[limits] least_viscosity_ratio", own.least_viscosity_ratio, f"{DEFAULT_KAPPA:g}", "common-practice"),
     )
     said += [Assumed(name, text, source) for name, value, text, source in defaults if value is None]
-    if case.is_grease and case.grease.housing_fill is None:
+    if case.is_grease and case.grease.housing_fill is None and case.grease.fill != "unknown":
         said.append(
             Assumed("[grease] housing_fill", f"{PROPOSED_HOUSING_FILL * 100:.0f} % proposed", "common-practice")
         )

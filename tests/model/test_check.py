@@ -104,15 +104,6 @@ def test_what_is_not_finite_never_leaves(results):
                     assert value is None or math.isfinite(value)
 
 
-def keys_of_base():
-    table = None
-    for line in BASE.splitlines():
-        if line.startswith("["):
-            table = line.strip("[]")
-        elif " = " in line:
-            yield table, line.partition(" = ")[0]
-
-
 # Cases in which a single given fact is what makes it bad or good, besides the base itself.
 VARIANTS = {
     "base": {},
@@ -127,15 +118,86 @@ VARIANTS = {
 }  # fmt: skip
 FACTS = {(table, key) for table, form in TABLES.items() for key, entry in entries(form) if entry.role == "fact"}
 
+OIL = """\
+[bearing]
+designation = "6313"
+dynamic_rating = "90 kN"
+static_rating = "58 kN"
+mass = "2.1 kg"
+cage = "steel"
 
-@pytest.mark.parametrize("variant", VARIANTS)
+[lubricant]
+name = "mineral-vg-68"
+
+[[duty]]
+speed = "2960 rpm"
+radial_load = "2.1 kN"
+axial_load = "3.4 kN"
+
+[surroundings]
+ambient = "25 degC"
+coldest = "0 degC"
+draught = "1.5 m/s"
+altitude = "150 m"
+water = "dry"
+vibration = "smooth"
+orientation = "horizontal"
+
+[housing]
+kind = "gearbox wall"
+shaft_temperature = "70 degC"
+
+[oil]
+supply = "bath"
+level = "0 mm"
+interval = "4 month"
+hours_per_day = "24 h"
+
+[cleanliness]
+setting = "bath -/17/14"
+
+[limits]
+life = "5000 h"
+"""
+CIRCULATING = OIL.replace(
+    'supply = "bath"\nlevel = "0 mm"\n', 'supply = "circulating"\nflow = "1 l/min"\ninlet = "50 degC"\n'
+)
+# Texts, and the changes of each in which a single stated fact is what makes it good or bad.
+REMOVALS = {
+    **{name: (BASE, changes) for name, changes in VARIANTS.items()},
+    "oil": (OIL, {}),
+    "flooded": (OIL, {("oil", "level"): '"40 mm"'}),
+    "hot water": (OIL, {("housing", "shaft_temperature"): '"180 degC"'}),
+    "wet oil": (OIL, {("surroundings", "water"): '"wet"'}),
+    "circulating": (CIRCULATING.replace("bath -/17/14", "circulating -/17/14"), {}),
+    "hot inlet": (CIRCULATING.replace("bath -/17/14", "circulating -/17/14"), {("oil", "inlet"): '"95 degC"'}),
+    "seldom": (BASE, {("grease", "hours_per_day"): '"2 h"', ("grease", "interval"): '"5000 h"'}),
+    "watts": (with_key(BASE, "housing", "shaft_temperature", None), {("housing", "machine_heat"): '"100 W"'}),
+    "hot shaft": (BASE, {("housing", "shaft_temperature"): '"230 degC"'}),
+    "weak": (BASE, {("bearing", "dynamic_rating"): '"46 kN"', ("bearing", "static_rating"): '"27 kN"',
+                    ("duty", "radial_load"): '"4.8 kN"', ("limits", "life"): '"60000 h"'}),
+    "polyamide": (BASE, {("bearing", "cage"): '"polyamide"', ("surroundings", "ambient"): '"85 degC"'}),
+    "packed, unknown": (BASE, {("grease", "fill"): '"unknown"', ("grease", "housing_fill"): '"100 %"'}),
+}  # fmt: skip
+
+
+def keys_of(text):
+    table = None
+    for line in text.splitlines():
+        if line.startswith("["):
+            table = line.strip("[]")
+        elif " = " in line:
+            yield table, line.partition(" = ")[0]
+
+
+@pytest.mark.parametrize("variant", REMOVALS)
 def test_taking_a_fact_away_never_improves_the_verdict(variant):
-    text = BASE
-    for (table, key), value in VARIANTS[variant].items():
+    text, changes = REMOVALS[variant]
+    for (table, key), value in changes.items():
         text = with_key(text, table, key, value)
     before = lubecheck.check(read_case(text))
     compared = 0
-    for table, key in keys_of_base():
+    for table, key in keys_of(text):
         if (table, key) not in FACTS:
             continue
         try:
@@ -150,7 +212,7 @@ def test_taking_a_fact_away_never_improves_the_verdict(variant):
             for other in after.limits:
                 if other.name == limit.name:
                     assert worse[other.state] >= worse[limit.state], (table, key, limit.name)
-    assert compared >= 10
+    assert compared >= 8
 
 
 def test_a_fact_that_matters_makes_its_limit_unknown_and_is_named():

@@ -190,7 +190,8 @@ def oil_case(supply="bath", water="dry", ambient="40 degC"):
     text = BASE[: BASE.index("[grease]")].replace("polyurea-110-2", "mineral-vg-46")
     text = with_key(text, "surroundings", "water", f'"{water}"')
     text = with_key(text, "surroundings", "ambient", f'"{ambient}"')
-    return read_case(text + f'[oil]\nsupply = "{supply}"\nhours_per_day = "24 h"\nvolume = "1.2 l"\n')
+    stream = 'flow = "1 l/min"\ninlet = "50 degC"\n' if supply == "circulating" else ""
+    return read_case(text + f'[oil]\nsupply = "{supply}"\nhours_per_day = "24 h"\nvolume = "1.2 l"\n{stream}')
 
 
 def test_oil_is_judged_by_bath_rule_and_oxidation_and_the_shorter_governs():

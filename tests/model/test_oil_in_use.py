@@ -172,7 +172,9 @@ def test_a_dirtier_code_shortens_life_and_one_beyond_the_standard_is_unknown() -
 
 
 def test_circulating_oil_is_read_as_filtered_off_line_and_told_the_way_out() -> None:
-    text = with_key(UNSET, "oil", "supply", '"circulating"').replace('level = "0 mm"\n', "")
+    text = with_key(UNSET, "oil", "supply", '"circulating"').replace(
+        'level = "0 mm"\n', 'flow = "1 l/min"\ninlet = "50 degC"\n'
+    )
     by_code = result(text, iso_code="19/17/14")
     (chosen,) = [item for item in by_code.assumed if item.name == "[cleanliness] setting"]
     assert "in line" in chosen.value
