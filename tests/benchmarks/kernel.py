@@ -12,8 +12,6 @@ from collections.abc import Callable
 
 import numpy as np
 from scipy.optimize import brentq, elementwise
-from test_heat import random_rows
-from test_kernel import random_points
 
 from lubecheck.model import equilibrium
 from lubecheck.model.balance import balance_of
@@ -35,6 +33,9 @@ def seconds(run: Callable[[], object], times: int = 5) -> float:
 
 def main() -> None:
     """Print the rates."""
+    from test_heat import random_rows  # the tests' own rows, on the path of this run only
+    from test_kernel import random_points
+
     points = random_points(ROWS)
     solve = seconds(lambda: equilibrium.solve(points))
     print(f"judge: {ROWS / seconds(lambda: judge(points)):,.0f} positions/s")
