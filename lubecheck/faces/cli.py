@@ -12,11 +12,20 @@ import typer
 from lubecheck import __version__
 from lubecheck.faces.fluids_command import EPILOG as FLUIDS_EPILOG
 from lubecheck.faces.fluids_command import fluids
-from lubecheck.faces.options import LubricantsOption, Units, UnitsOption, console, own_lubricants
+from lubecheck.faces.options import (
+    BEYOND,
+    GRAVITY,
+    UNKNOWN,
+    WITHIN_OR_NEAR,
+    LubricantsOption,
+    Units,
+    UnitsOption,
+    console,
+    exit_code,
+    own_lubricants,
+)
 from lubecheck.faces.swap_command import EPILOG as SWAP_EPILOG
 from lubecheck.faces.swap_command import swap
-
-WITHIN_OR_NEAR, BEYOND, REFUSED, UNKNOWN = range(4)  # exit codes
 
 app = typer.Typer(
     name="lubecheck",
@@ -147,10 +156,7 @@ def plan(
         typer.echo(face.to_json(rows))
     elif to is None:
         face.print_plan(rows, console(), units.value)
-    raise typer.Exit(max((exit_code(result.verdict, fail_on.value) for result in results), key=_GRAVITY.index))
-
-
-_GRAVITY = (WITHIN_OR_NEAR, UNKNOWN, BEYOND)  # beyond is the worst that a plan may hold
+    raise typer.Exit(max((exit_code(result.verdict, fail_on.value) for result in results), key=GRAVITY.index))
 
 
 @app.command(
@@ -269,14 +275,3 @@ def bearings(
         bearing_list.print_sheets(found, console(), units.value)
     if faults:
         raise InputError(faults)
-
-
-def exit_code(verdict: str, fail_on: str = "beyond") -> int:
-    """Return the exit code of a verdict.
-
-    >>> [exit_code(state) for state in ("within", "near", "beyond", "unknown")], exit_code("near", "near")
-    ([0, 0, 1, 3], 1)
-    """
-    if verdict == fail_on:
-        return BEYOND
-    return {"within": WITHIN_OR_NEAR, "near": WITHIN_OR_NEAR, "beyond": BEYOND, "unknown": UNKNOWN}[verdict]

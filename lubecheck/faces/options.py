@@ -1,4 +1,4 @@
-"""What the commands share: their unit systems, the user's own lubricants, and the console that results go to."""
+"""What the commands share: exit codes, unit systems, the user's own lubricants, and the console that results go to."""
 
 from __future__ import annotations
 
@@ -13,6 +13,10 @@ if TYPE_CHECKING:
     from rich.console import Console
 
     from lubecheck.data.lubricant import Lubricant
+
+
+WITHIN_OR_NEAR, BEYOND, REFUSED, UNKNOWN = range(4)  # exit codes
+GRAVITY = (WITHIN_OR_NEAR, UNKNOWN, BEYOND)  # in rising order, for the worst of several positions
 
 
 class Units(StrEnum):
@@ -52,3 +56,14 @@ def console() -> Console:
 
     no_color = bool(os.environ.get("NO_COLOR")) or os.environ.get("CLICOLOR") == "0"
     return Console(file=sys.stdout, no_color=no_color or None, highlight=False, soft_wrap=False)
+
+
+def exit_code(verdict: str, fail_on: str = "beyond") -> int:
+    """Return the exit code of a verdict.
+
+    >>> [exit_code(state) for state in ("within", "near", "beyond", "unknown")], exit_code("near", "near")
+    ([0, 0, 1, 3], 1)
+    """
+    if verdict == fail_on:
+        return BEYOND
+    return {"within": WITHIN_OR_NEAR, "near": WITHIN_OR_NEAR, "beyond": BEYOND, "unknown": UNKNOWN}[verdict]

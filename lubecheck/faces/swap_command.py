@@ -50,7 +50,7 @@ def swap(
 ) -> None:
     """Tell whether another lubricant may take the place of the one a position has, and how to change over."""
     from lubecheck.data import lubricants as tables
-    from lubecheck.faces.cli import BEYOND, WITHIN_OR_NEAR, exit_code
+    from lubecheck.faces.options import BEYOND, WITHIN_OR_NEAR, exit_code
     from lubecheck.model.reader import load_case
 
     paths = _case_paths(cases)
