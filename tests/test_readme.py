@@ -52,3 +52,9 @@ def test_the_table_of_swaps_tells_each_verdict():
     assert {name for name, _ in rows} == set(made)
     for name, verdict in rows:
         assert lubecheck.swap(lubecheck.load_case(EXAMPLES / "swap" / f"{name}.toml"), made[name]).verdict == verdict
+
+
+def test_no_heading_of_the_texts_stands_twice():
+    for name in ("README.md", "DEVELOPERS.md"):
+        headings = re.findall(r"^#+ .*$", (ROOT / name).read_text(encoding="utf-8"), flags=re.MULTILINE)
+        assert len(headings) == len(set(headings)), name

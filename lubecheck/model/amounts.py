@@ -6,8 +6,8 @@ import math
 
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
-from lubecheck.model.points import REGREASE_RULES, volume_of
 from lubecheck.model.result import Amounts, PlanLine
+from lubecheck.model.rows import REGREASE_RULES, volume_of
 from lubecheck.physics import grease_amount
 from lubecheck.units import DAY_H, YEAR_H
 

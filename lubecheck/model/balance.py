@@ -23,7 +23,8 @@ from typing import Any
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model.points import Points, seal_diameter
+from lubecheck.model.points import Points
+from lubecheck.model.rows import seal_diameter
 from lubecheck.physics import churning, cooling, film, friction, heat_paths, loads, viscosity
 from lubecheck.units import Array
 

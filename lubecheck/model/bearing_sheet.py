@@ -13,8 +13,8 @@ from lubecheck.data.bearing_series import SERIES
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, SOURCES
 from lubecheck.errors import Fault, InputError, nearest, shown
-from lubecheck.model.points import NITRILE_LIMIT, POLYAMIDE_LIMIT, kinematic_limit
 from lubecheck.model.reader import STANDARD_INPUT, load_case
+from lubecheck.model.rows import NITRILE_LIMIT, POLYAMIDE_LIMIT, kinematic_limit
 from lubecheck.model.side_figures import reference_speed
 from lubecheck.physics import grease_amount, loads
 

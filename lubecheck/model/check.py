@@ -23,8 +23,9 @@ from lubecheck.model.kernel import Outcome, judge
 from lubecheck.model.limits import NEAR_CODE, STATES, UNKNOWN
 from lubecheck.model.losses import account
 from lubecheck.model.plan import plan_line
-from lubecheck.model.points import Points, from_rows, join, rows_of
+from lubecheck.model.points import Points, from_rows, join
 from lubecheck.model.result import Damage, Grease, Heat, HeatShares, Life, Limit, Operating, PlanLine, Result
+from lubecheck.model.rows import rows_of
 from lubecheck.physics import friction
 from lubecheck.units import Array
 

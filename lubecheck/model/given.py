@@ -8,7 +8,7 @@ from __future__ import annotations
 from lubecheck.model import limits
 from lubecheck.model.entries import Amount, Case
 from lubecheck.model.kernel import Outcome
-from lubecheck.model.points import fill_found, given_volume, volume_of
+from lubecheck.model.rows import fill_found, given_volume, volume_of
 
 # After regreasing: +14 to 17 K can be normal, over 28 K is a concern; it levels in 3 to 4 h and is back within about
 # 24 h. Field notes of 2016, a band and not a model.

@@ -21,8 +21,9 @@ from lubecheck.model.equilibrium import Air, Equilibrium
 from lubecheck.model.kernel import Outcome, judge
 from lubecheck.model.limits import BEYOND, NEAR_CODE, STATES, UNKNOWN, Judged
 from lubecheck.model.plan import plan_line
-from lubecheck.model.points import Codes, Flags, Points, from_rows, join, rows_of
+from lubecheck.model.points import Codes, Flags, Points, from_rows, join
 from lubecheck.model.result import Declared, Figures, Limit
+from lubecheck.model.rows import rows_of
 from lubecheck.units import Array
 
 READINGS = 2  # positions a case takes: usual, worst

@@ -7,8 +7,8 @@ import math
 from lubecheck.model.assumptions import FACTS
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
-from lubecheck.model.points import INTERVAL_ANSWERS, answer_factor, seasons
 from lubecheck.model.result import IntervalLine
+from lubecheck.model.rows import INTERVAL_ANSWERS, answer_factor, seasons
 from lubecheck.physics import grease_life, oil_life
 
 Factors = tuple[tuple[str, float], ...]

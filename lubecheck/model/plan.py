@@ -8,8 +8,8 @@ from lubecheck.model.amounts import CONTINUOUS_BELOW_DAYS, feed, housing_fill
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import room_for_grease
-from lubecheck.model.points import volume_of
 from lubecheck.model.result import PlanLine
+from lubecheck.model.rows import volume_of
 from lubecheck.units import YEAR_H
 
 

@@ -22,16 +22,9 @@ from lubecheck.model.equilibrium import TOP_TEMPERATURE
 from lubecheck.model.interval_lines import interval_note, percentile
 from lubecheck.model.kernel import Outcome, parts_rows, takes_loads
 from lubecheck.model.limits import FLASH_MARGIN
-from lubecheck.model.points import (
-    BEYOND_SETTINGS,
-    DEFAULT_KAPPA,
-    DEFAULT_LIFE,
-    DEFAULT_RELIABILITY,
-    LIMIT_ORIGINS,
-    RULE_DAYS,
-    seasons,
-)
+from lubecheck.model.points import BEYOND_SETTINGS
 from lubecheck.model.result import Assumed
+from lubecheck.model.rows import DEFAULT_KAPPA, DEFAULT_LIFE, DEFAULT_RELIABILITY, LIMIT_ORIGINS, RULE_DAYS, seasons
 from lubecheck.model.shaft import loads_of
 from lubecheck.model.side_figures import curing_preload, safe_speed
 from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_life, oil_life

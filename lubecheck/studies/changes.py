@@ -19,8 +19,8 @@ from lubecheck.data.bearing_series import of_family
 from lubecheck.errors import InputError
 from lubecheck.model.entries import TABLES, Amount, Case, entries
 from lubecheck.model.glance import Glances
-from lubecheck.model.points import running_hours
 from lubecheck.model.reader import read_value
+from lubecheck.model.rows import running_hours
 from lubecheck.physics import fatigue, grease_life
 from lubecheck.units import KINDS, UnreadableText
 

@@ -19,7 +19,8 @@ from lubecheck.model.circuit import Circuit
 from lubecheck.model.cleanliness import numbers_of
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import Outcome, judge
-from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join, rows_of
+from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join
+from lubecheck.model.rows import rows_of
 from lubecheck.physics import cleanliness, fatigue
 
 CAUTIONS = (

@@ -18,7 +18,8 @@ from lubecheck.model.check import readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import judge
-from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join, rows_of
+from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join
+from lubecheck.model.rows import rows_of
 from lubecheck.physics import fatigue, viscosity
 from lubecheck.physics.wanted_life import bracketed_root
 from lubecheck.units import Array

@@ -10,8 +10,9 @@ import lubecheck
 from lubecheck.data.families import FAMILIES
 from lubecheck.model.check import readings
 from lubecheck.model.kernel import judge
-from lubecheck.model.points import from_rows, join, rows_of
+from lubecheck.model.points import from_rows, join
 from lubecheck.model.reader import read_case
+from lubecheck.model.rows import rows_of
 
 ONE_OF_EACH = {
     "6309": "deep groove ball", "4209": "double row deep groove ball", "2209": "self-aligning ball",

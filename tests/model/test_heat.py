@@ -14,8 +14,9 @@ from lubecheck.faces.record import of_result
 from lubecheck.model import equilibrium
 from lubecheck.model.balance import PATHS, balance_of
 from lubecheck.model.check import readings
-from lubecheck.model.points import Points, from_rows, join, rows_of
+from lubecheck.model.points import Points, from_rows, join
 from lubecheck.model.reader import load_case, read_case
+from lubecheck.model.rows import rows_of
 
 ROWS = 100_000
 

@@ -13,8 +13,9 @@ from hypothesis import strategies as st
 import lubecheck
 from lubecheck.model.check import readings
 from lubecheck.model.kernel import judge
-from lubecheck.model.points import from_rows, rows_of, seasons
+from lubecheck.model.points import from_rows
 from lubecheck.model.reader import read_case
+from lubecheck.model.rows import rows_of, seasons
 from lubecheck.physics import grease_life
 
 

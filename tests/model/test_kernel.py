@@ -13,8 +13,9 @@ from lubecheck.model import equilibrium, limits
 from lubecheck.model.balance import balance_of
 from lubecheck.model.check import readings
 from lubecheck.model.kernel import judge
-from lubecheck.model.points import Points, from_rows, join, rows_of
+from lubecheck.model.points import Points, from_rows, join
 from lubecheck.model.reader import load_case
+from lubecheck.model.rows import rows_of
 
 ROWS = 10_000
 

@@ -9,8 +9,8 @@ import lubecheck
 from lubecheck.data import lubricants
 from lubecheck.errors import CaseError
 from lubecheck.model.check import readings
-from lubecheck.model.points import rows_of
 from lubecheck.model.reader import read_case
+from lubecheck.model.rows import rows_of
 from lubecheck.physics.viscosity import kinematic_viscosity
 
 PUMP = """\

@@ -68,7 +68,8 @@ def test_the_circuits_figures_are_those_of_a_check_at_the_same_oil(circuit, resu
     """The pinion's own check, with its bearing at 62 degC by a conductance found by halving."""
     from lubecheck.model.check import readings
     from lubecheck.model.kernel import judge
-    from lubecheck.model.points import from_rows, rows_of
+    from lubecheck.model.points import from_rows
+    from lubecheck.model.rows import rows_of
 
     case = circuit.members[0].case
     points = from_rows(rows_of(case, readings(case)[1][0])).changed(held_temperature=62.0)
