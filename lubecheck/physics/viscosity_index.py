@@ -60,6 +60,7 @@ _LAST = len(_Y) - 1
 
 _SLOPE_B = 0.00715  # D2270, procedure B: index = (10^N - 1)/0.00715 + 100
 _LEAST_Y = 2.0  # mm^2/s at 100 degC; the index is not defined below
+_ROUNDING = 1e-9  # of ln(U) at that end: an index worked out from there has to lead back there
 _LOG_MOST_Y = np.log(1e6)  # mm^2/s: upper end of the bracket of the inverse, beyond any lubricant
 
 
@@ -146,7 +147,8 @@ def nu_100_from_index(nu_40: Mm2PerS, index: Number) -> Mm2PerS:
         level = np.where(by_a, low + share * (high - low), high)
         step = (log_u(low, high, log_y) - target) / (rise * y / level - power)
         log_y = np.clip(log_y - step, start, end)
-    return np.where(target >= log_u(_L[0], _H[0], _LOG_Y[0]), np.exp(log_y), np.nan)
+    least = log_u(_L[0], _H[0], _LOG_Y[0])
+    return np.where(target >= least - _ROUNDING, np.exp(log_y), np.nan)
 
 
 @method(source="astm-d2270", valid={"nu_100": (_LEAST_Y, 1e5), "index": (-200.0, 1000.0)})

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import numpy as np
 import pytest
-from hypothesis import assume, given
+from hypothesis import assume, example, given
 from hypothesis import strategies as st
 
 from lubecheck.errors import ArgumentError, OutOfRange
@@ -19,6 +19,7 @@ from lubecheck.physics.viscosity import (
     fit,
     kinematic_from_saybolt,
     kinematic_viscosity,
+    nu_40_from_index,
     nu_100_from_index,
     pressure_coefficient,
     pressure_coefficient_by_slope,
@@ -168,11 +169,19 @@ def test_the_inverse_index_comes_back_over_the_whole_range(nu_40: float, index: 
 
 
 @given(nu_100=st.floats(2, 400), ratio=st.floats(1.5, 40))
+@example(nu_100=2.0, ratio=1.8372362505099724)  # index 841: at the end of the range it is rounded to the other side
 def test_the_viscosity_at_100_degc_comes_back_to_a_hundredth(nu_100: float, ratio: float) -> None:
     nu_40 = nu_100 * ratio
     index = viscosity_index.plain(nu_40=nu_40, nu_100=nu_100)
     if -200 <= index <= 1000:
         assert nu_100_from_index.plain(nu_40, index) == pytest.approx(nu_100, abs=0.01)
+
+
+def test_the_least_viscosity_at_100_degc_comes_back_at_every_index() -> None:
+    index = np.arange(-100.0, 1000.0)
+    nu_40 = nu_40_from_index.plain(nu_100=2.0, index=index)
+    assert nu_100_from_index.plain(nu_40, index) == pytest.approx(2.0, rel=1e-9)
+    assert np.isnan(nu_100_from_index.plain(nu_40 * 0.999999, index)).all()
 
 
 def test_the_index_rises_with_the_viscosity_at_100_degc() -> None:
