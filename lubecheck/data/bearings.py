@@ -11,6 +11,8 @@ import math
 import re
 from typing import Any
 
+import numpy as np
+
 from lubecheck.data import bearing_designation as reader
 from lubecheck.data.bearing_series import SERIES, Series, of_family
 from lubecheck.data.dimensions import Boundary
@@ -28,6 +30,7 @@ from lubecheck.data.rolling_bearing import (
     fatigue_spread,
 )
 from lubecheck.errors import Fault, InputError, nearest, shown
+from lubecheck.physics import grease_amount
 
 __all__ = [
     "ARRANGEMENTS",
@@ -168,6 +171,8 @@ def with_given(bearing: Bearing, **given: Any) -> Bearing:
     if not faults and stated.get("fatigue_limit", 0.0) >= stated.get("static_rating", math.inf):
         expected = f"less than the static rating {stated['static_rating']:g} N"
         faults.append(Fault("fatigue_limit", f"{stated['fatigue_limit']:g} N", expected))
+    if "mass" in stated and not faults:
+        faults = _filled(bearing, float(stated["mass"]))
     if faults:
         raise InputError(faults)
     if "contact_angle" in stated and bearing.family in CONTACT_ANGLES:
@@ -204,6 +209,15 @@ def _at_angle(bearing: Bearing, contact_angle: float) -> Bearing:
     estimated = {key: spread for key, spread in bearing.estimated.items() if key != "contact_angle"}
     basis = {**bearing.basis, "contact_angle": "user"}
     return dataclasses.replace(bearing, estimated=estimated, basis=basis, **changed)
+
+
+def _filled(bearing: Bearing, mass: float) -> list[Fault]:
+    """Refuse a mass that leaves no room for rolling elements to roll in."""
+    size = {"bore": bearing.bore, "outside": bearing.outside, "width": bearing.width}
+    if np.isfinite(grease_amount.free_volume.plain(**size, mass=mass)):
+        return []
+    most = float(grease_amount.free_volume.plain(**size, mass=0.0)) * grease_amount.STEEL_DENSITY
+    return [Fault("mass", f"{mass:g} g", f"less than {most:.4g} g, at which steel fills the bearing's whole envelope")]
 
 
 def _nearest(text: str) -> str | None:

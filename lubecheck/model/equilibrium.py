@@ -32,7 +32,7 @@ TOLERANCE = 1e-9  # of the friction power, residual of the balance
 ROUNDING = 1e-14  # of the heat that flows: what float64 leaves of it
 SEARCH_STEPS = 30  # from here on the bracket is halved
 MOST_STEPS = 100  # halving needs about 50
-NARROWEST = 1e-13  # of a bracket of ln(rise)
+NARROWEST = 4 * np.finfo(np.float64).eps  # of a bracket of ln(rise), relative: two or three numbers lie between
 LEAST_RISE = 1e-9  # K above the coldest sink: the lower end of the bracket
 FIRST_SLOPE = -1.5  # of ln(in/out) over ln(rise): 1.2 from heat out, the rest from viscosity
 CHUNK = 8_192  # rows that stay in the cache together
@@ -49,6 +49,7 @@ class Equilibrium:
     inner: Array  # degC, of inner ring and shaft
     outer: Array  # degC, of outer ring and housing
     is_found: Flags  # an equilibrium below TOP_TEMPERATURE exists and the solve converged to it
+    is_too_hot: Flags  # there is none below TOP_TEMPERATURE; where neither holds the solve did not end
     is_only: Flags  # false where a thin film lets other temperatures balance as well and the hottest was taken
     residual: Array  # W, heat in less heat out
     steps: int
@@ -80,14 +81,16 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
     """Find the equilibrium of every row."""
     with np.errstate(all="ignore"):
         balance = balance_of(points, air_properties)
-        heat, is_found, is_only, steps = _roots(balance)
-        is_found &= heat.lubricant <= TOP_TEMPERATURE
+        heat, has_root, is_lost, is_only, steps = _roots(balance)
+        is_found = has_root & (heat.lubricant <= TOP_TEMPERATURE)
+        is_too_hot = is_lost | (has_root & ~is_found)
         # A bearing whose temperature is stated needs no balance: its residual is the heat that holds it there.
         is_held = ~np.isnan(points.held_temperature)
         held = np.flatnonzero(is_held)
         if len(held):
             _put(heat, held, balance.take(held).at(points.held_temperature[held] - balance.floor[held]))
             is_found |= is_held
+            is_too_hot &= ~is_held
         lost = np.where(is_found, 1.0, np.nan)
         paths = {name: path * lost for name, path in balance.paths(heat).items()}
     residual = (heat.heat_in - heat.heat_out) * lost
@@ -96,6 +99,7 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
         inner=heat.inner * lost,
         outer=heat.outer * lost,
         is_found=is_found,
+        is_too_hot=is_too_hot,
         is_only=is_only,
         residual=residual,
         steps=steps,
@@ -114,13 +118,13 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
     )
 
 
-def _roots(balance: Balance) -> tuple[Heat, Flags, Flags, int]:
-    """Return the balance of every row at its root, if that was found, if it is the only one, and the steps."""
+def _roots(balance: Balance) -> tuple[Heat, Flags, Flags, Flags, int]:
+    """Return the balance of every row at its root; if that was found, is too hot, is the only one; and the steps."""
     parts = []
     for start in range(0, len(balance), CHUNK):
         few = balance.take(slice(start, start + CHUNK)) if len(balance) > CHUNK else balance
         low, high = np.full(len(few), np.log(LEAST_RISE)), np.log(TOP_TEMPERATURE - few.floor)
-        heat, is_found, steps = _root(few, low, high)
+        heat, is_found, is_lost, steps = _root(few, low, high)
         is_only = np.ones(len(few), dtype=bool)
         doubtful = np.flatnonzero(is_found & ~_is_certain(few, heat))
         if len(doubtful):
@@ -129,17 +133,18 @@ def _roots(balance: Balance) -> tuple[Heat, Flags, Flags, int]:
             is_only[doubtful] = ~is_other
             if hotter is not None:
                 _put(heat, doubtful[others], hotter)
-        parts.append((heat, is_found, is_only, steps))
-    heats, founds, onlys, steps_taken = zip(*parts, strict=True)
+        parts.append((heat, is_found, is_lost, is_only, steps))
+    heats, founds, lost, onlys, steps_taken = zip(*parts, strict=True)
     whole = heats[0] if len(heats) == 1 else Heat(
         **{f.name: np.concatenate([getattr(heat, f.name) for heat in heats]) for f in dataclasses.fields(Heat)}
     )  # fmt: skip
-    return whole, np.concatenate(founds), np.concatenate(onlys), max(steps_taken)
+    return whole, np.concatenate(founds), np.concatenate(lost), np.concatenate(onlys), max(steps_taken)
 
 
 def _surplus(heat: Heat) -> Array:
     """ln(in/out): above zero the row is too cool, also where heat would have to come out of the floor."""
-    return np.where(heat.heat_out > 0, np.log(heat.heat_in / heat.heat_out), np.inf)
+    # What is not a number stays none: it must not pass for heat that cannot leave.
+    return np.where(heat.heat_out <= 0, np.inf, np.log(heat.heat_in / heat.heat_out))
 
 
 def _put(whole: Heat, rows: Codes, part: Heat) -> None:
@@ -148,10 +153,13 @@ def _put(whole: Heat, rows: Codes, part: Heat) -> None:
         getattr(whole, item.name)[rows] = getattr(part, item.name)
 
 
-def _root(balance: Balance, low: Array, high: Array) -> tuple[Heat, Flags, int]:
-    """Return the balance where heat in equals heat out, between two bounds of ln(rise); if it was found; and steps."""
+def _root(balance: Balance, low: Array, high: Array) -> tuple[Heat, Flags, Flags, int]:
+    """Return the balance where heat in equals heat out, between two bounds of ln(rise); if it was found; and steps.
+
+    The third is true where more heat comes in than leaves even at the upper bound, so that there is none below.
+    """
     rows = np.arange(len(balance))
-    found = np.zeros(len(balance), dtype=bool)
+    found, lost = np.zeros(len(balance), dtype=bool), np.zeros(len(balance), dtype=bool)
     whole: Heat | None = None
     top = high
     guess = np.log(np.maximum(balance.guess(), LEAST_RISE))
@@ -166,11 +174,14 @@ def _root(balance: Balance, low: Array, high: Array) -> tuple[Heat, Flags, int]:
         surplus = np.abs(heat.heat_in - heat.heat_out)
         is_done = surplus <= TOLERANCE * heat.friction_power + ROUNDING * heat.heat_in
         # Where great flows pass by a little friction, the balance is closed when no number lies between.
-        is_done |= (high - low < NARROWEST) & (surplus <= TOLERANCE * heat.heat_in)
+        is_done |= (high - low <= NARROWEST * np.maximum(np.abs(low), np.abs(high))) & (
+            surplus <= TOLERANCE * heat.heat_in
+        )
         is_lost = (x == top) & (y > 0)  # too cool even at the top: there is no root below
         if (is_done | is_lost).any():
             ended = is_done | is_lost
             found[rows[is_done]] = True
+            lost[rows[is_lost & ~is_done]] = True
             if heat is not whole:
                 _put(whole, rows[ended], heat.take(ended))
             if ended.all():
@@ -190,7 +201,7 @@ def _root(balance: Balance, low: Array, high: Array) -> tuple[Heat, Flags, int]:
                 array[keep] for array in (low, high, top, x, x_old, y_old, x_older, y_older)
             )
     assert whole is not None  # there is a first step
-    return whole, found, steps
+    return whole, found, lost, steps
 
 
 def _step(x: Array, y: Array, x_old: Array, y_old: Array, x_older: Array, y_older: Array) -> Array:
@@ -233,5 +244,5 @@ def _others(balance: Balance, root: Array, high: Array) -> tuple[Codes, Heat | N
     if not len(rows):
         return rows, None, is_other
     last = LOOKS - 2 - above[::-1, rows].argmax(axis=0)
-    heat, _, _ = _root(balance.take(rows), places[last, rows], places[last + 1, rows])
+    heat, _, _, _ = _root(balance.take(rows), places[last, rows], places[last + 1, rows])
     return rows, heat, is_other

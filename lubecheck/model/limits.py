@@ -79,11 +79,21 @@ def film(points: Points, kappa: Array) -> Use:
     return Use(points.least_kappa, kappa, points.least_kappa / kappa, np.ones(len(points), dtype=bool))
 
 
+def _rise_over(points: Points, state: Equilibrium, hottest: Array, top: Array) -> Array:
+    """Rise over the ambient against the rise that a top temperature leaves.
+
+    Where nothing balances below the top of the search it is beyond, whatever the limit, stated or not; where the solve
+    did not end nothing is known.
+    """
+    allowed = top - points.ambient
+    use = np.where(allowed > 0, (hottest - points.ambient) / allowed, np.inf)
+    use = np.where(np.isnan(top) | ~state.is_found, np.nan, use)
+    return np.where(state.is_too_hot, np.inf, use)
+
+
 def temperature(points: Points, state: Equilibrium) -> Use:
     """Rise over the rise to the lowest top temperature of lubricant, cage, seal, rings and the user."""
-    allowed = points.highest - points.ambient
-    use = np.where(allowed > 0, (state.temperature - points.ambient) / allowed, np.inf)
-    use = np.where(np.isnan(points.highest), np.nan, np.where(state.is_found, use, np.inf))
+    use = _rise_over(points, state, state.temperature, points.highest)
     return Use(state.temperature, points.highest, use, np.ones(len(points), dtype=bool))
 
 
@@ -186,19 +196,15 @@ def flash_point(points: Points, state: Equilibrium) -> Use:
     p = points
     hottest = np.maximum(state.temperature, np.maximum(state.inner, state.outer))
     top = p.flash_point - FLASH_MARGIN
-    allowed = top - p.ambient
-    use = np.where(allowed > 0, (hottest - p.ambient) / allowed, np.inf)
-    use = np.where(np.isnan(top), np.nan, np.where(state.is_found, use, np.inf))
-    return Use(hottest, top, use, (p.is_grease == 0) & ~np.isnan(top))
+    return Use(hottest, top, _rise_over(p, state, hottest, top), (p.is_grease == 0) & ~np.isnan(top))
 
 
 def ring_temperature(points: Points, state: Equilibrium) -> Use:
     """Rise of the hotter ring over the rise to the temperature that the rings are stabilised to."""
     p = points
     hottest = np.maximum(state.inner, state.outer)
-    allowed = p.stabilised_to - p.ambient
-    use = np.where(allowed > 0, (hottest - p.ambient) / allowed, np.inf)
-    return Use(hottest, p.stabilised_to, np.where(state.is_found, use, np.inf), np.ones(len(p), dtype=bool))
+    use = _rise_over(p, state, hottest, p.stabilised_to)
+    return Use(hottest, p.stabilised_to, use, np.ones(len(p), dtype=bool))
 
 
 def minimum_load(points: Points, state: Equilibrium) -> Use:

@@ -104,9 +104,15 @@ def _film(case: Case, outcome: Outcome, row: int) -> str:
     return join(f"kappa is {kappa:.2f}, at least {asked:.2f} is asked for", advice, _duty(case, row))
 
 
+def _not_found(outcome: Outcome, row: int) -> str:
+    if outcome.state.is_too_hot[row]:
+        return f"no equilibrium below {TOP_TEMPERATURE:g} degC: the heat cannot be carried off"
+    return "the balance of heat was not solved, so nothing is known"
+
+
 def _temperature(case: Case, outcome: Outcome, row: int) -> str:
     if not outcome.state.is_found[row]:
-        return f"no equilibrium below {TOP_TEMPERATURE:g} degC: the heat cannot be carried off"
+        return _not_found(outcome, row)
     points = outcome.points
     if math.isnan(points.highest[row]):
         return "state [lubricant] highest"
@@ -187,7 +193,7 @@ def _acceleration(case: Case, outcome: Outcome, row: int) -> str:
 def _rings(case: Case, outcome: Outcome, row: int) -> str:
     state = outcome.state
     if not state.is_found[row]:
-        return "no equilibrium, so no temperature of the rings"
+        return _not_found(outcome, row)
     hotter = "inner" if state.excess[row] >= 0 else "outer"
     limit = "dimensional stability of the rings"
     return join(limit, f"the {hotter} one is hotter by {abs(state.excess[row]):.1f} K", _duty(case, row))

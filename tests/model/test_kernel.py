@@ -144,6 +144,33 @@ def test_without_a_mixed_film_the_balance_has_one_root_because_it_only_falls(man
     assert (steps <= 1e-9 * np.abs(surplus[:-1]).max(axis=0)).all()
 
 
+def test_without_an_equilibrium_the_state_is_beyond_even_where_nobody_stated_a_top_temperature():
+    hot = points_of("new_motor").changed(conductance=0.01, shaft_conductance=0.0, speed=6000.0, highest=np.nan)
+    outcome = judge(hot)
+    assert outcome.state.is_too_hot[0]
+    assert limits.STATES[outcome.judged["temperature"].state[0]] == "beyond"
+
+
+def test_what_was_not_solved_is_unknown_and_not_beyond():
+    lost = judge(points_of("new_motor").changed(conductance=np.nan, housing_area=np.nan))
+    assert not lost.state.is_found[0]
+    assert not lost.state.is_too_hot[0]
+    for name in ("temperature", "rings", "film", "interval", "fatigue_life"):
+        assert limits.STATES[lost.judged[name].state[0]] == "unknown", name
+
+
+def test_a_little_friction_beside_a_great_heat_is_solved_to_what_its_numbers_hold():
+    base = points_of("new_motor")
+    watts = np.array([0.0, 1.0, 10.0, 100.0])
+    many = base.take(np.zeros(4, dtype=int)).changed(
+        case=np.arange(4), speed=0.1, machine_heat=watts, conductance=10.0, ambient=-50.0, shaft_conductance=0.0
+    )
+    state = equilibrium.solve(many)
+    assert state.is_found.all()
+    flow = sum(np.abs(path) for path in state.paths.values()) + 10.0 * 323.0
+    assert (np.abs(state.residual) <= np.maximum(1e-6 * state.friction_power, 1e-13 * flow)).all()
+
+
 def test_without_an_equilibrium_the_state_is_beyond_and_nothing_is_a_number():
     hot = points_of("new_motor").changed(conductance=0.01, shaft_conductance=0.0, speed=6000.0)
     outcome = judge(hot)

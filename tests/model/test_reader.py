@@ -38,6 +38,7 @@ BAD_VALUES = [
     ("bearing", "mass", '"nan kg"', "finite"),
     ("bearing", "mass", '"inf kg"', "finite"),
     ("bearing", "mass", "nan", "mass"),
+    ("bearing", "mass", '"1.5 kg"', "less than 1229 g"),
     ("bearing", "cage", '"steal"', "steel"),
     ("bearing", "seal", '"shield"', "shields"),
     ("bearing", "clearance", '"C9"', "C3"),
