@@ -48,6 +48,7 @@ LIFE_REFERENCE: Mapping[str, float] = {
     "PTFE": 100.0,
 }
 GREASE_ONLY = ("thickener", "nlgi", "yield_stress", "life_reference")
+CHANGED = ", figures changed by the user"
 OIL_ONLY = ("pour_point", "flash_point", "iso_vg")
 
 
@@ -130,7 +131,19 @@ def with_given(lubricant: Lubricant, **given: Any) -> Lubricant:
         assumed.append(f"viscosity index {index:.0f} of {lubricant.key} kept for {alone} = {stated[alone]:g} {unit}")
     ranges = {name: span for name, span in lubricant.ranges.items() if name not in stated and figures[name] is not None}
     made = from_figures(ranges=ranges, **{**figures, **stated})
-    return dataclasses.replace(made, assumed=(*assumed, *made.assumed))
+    is_changed = any(
+        _differs(getattr(made, name), getattr(lubricant, name)) for name in stated.keys() | {"nu_40", "nu_100"}
+        if name not in (*WAYS, "name")
+    )  # fmt: skip
+    name = made.name + (CHANGED if is_changed and not made.name.endswith(CHANGED) else "")
+    return dataclasses.replace(made, name=name, assumed=(*assumed, *made.assumed))
+
+
+def _differs(one: Any, other: Any) -> bool:
+    """Tell whether two figures differ by more than rounding."""
+    if isinstance(one, float) and isinstance(other, float):
+        return not math.isclose(one, other, rel_tol=1e-6)
+    return bool(one != other)
 
 
 def contradictions(lubricant: Lubricant) -> list[Fault]:

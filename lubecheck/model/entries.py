@@ -22,6 +22,7 @@ from lubecheck.physics import cleanliness, clearance, fatigue, grease_amount, gr
 from lubecheck.units import KINDS
 
 SUPPLIES = ("bath", "circulating", "jet", "mist")
+STREAMS = ("circulating", "jet")  # supplies whose oil flows through the bearing and takes heat along
 RELIEFS = ("open", "closed")
 HOUSINGS = ("pedestal", "split plummer", "flange", "motor end shield", "gearbox wall")
 FILTERS = ("in line", "off line", "none")

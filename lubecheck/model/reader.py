@@ -25,6 +25,7 @@ from lubecheck.data.oil_analysis import OilAnalysis, analyse
 from lubecheck.errors import CaseError, Fault, InputError, nearest, shown
 from lubecheck.model.cleanliness import contradictions
 from lubecheck.model.entries import (
+    STREAMS,
     TABLES,
     Amount,
     BearingTable,
@@ -48,6 +49,7 @@ from lubecheck.units import KINDS, UnreadableText, split_text, to_house
 
 STANDARD_INPUT = "-"
 _ANALYSED = ("measured_viscosity", "water", "iso_code")  # keys of [lubricant] that are of the oil in use
+_KIND_OF_GREASE = ("thickener", "base_oil", "nlgi")  # keys of [lubricant] that make it another one
 _LARGEST_FILE = 1_000_000  # bytes; a case is a page of text, so more is a slip of the hand
 
 T = TypeVar("T")
@@ -196,6 +198,8 @@ class _Reading:
         limits = self._table(document, "limits", Requirements) or Requirements()
         self._housing_conflicts(housing)
         self._stream_needs(oil)
+        self._beside_conductance(housing, duty, surroundings)
+        self._shaft_heat(housing, duty)
         self._season_conflicts(surroundings)
         if grease.given is not None and grease.given.kind == "strokes" and grease.stroke is None:
             self.fault(("grease", "stroke"), "nothing", 'a weighed stroke such as "1.2 g", as strokes were given',
@@ -208,6 +212,8 @@ class _Reading:
                 )
             if surroundings is not None and isinstance(cleanliness.setting, str):
                 self._setting_fits(cleanliness.setting, lubricant, oil)
+            if lubricant.kind == "oil":
+                self._stream(oil)
             if analysis is not None and analysis.code is not None and oil.supply == "mist":
                 self.fault(
                     ("lubricant", "iso_code"), str(analysis.code), "no such key for mist: ISO 281 has no setting"
@@ -392,8 +398,13 @@ class _Reading:
             return None
         try:
             if table.name is not None:
-                if table.index is not None:
-                    self.fault((*path, "index"), table.index, "no such key beside a name, which already says it")
+                said_by_name = [key for key in ("index", *_KIND_OF_GREASE) if getattr(table, key) is not None]
+                for key in said_by_name:
+                    figures = "" if key == "index" else "; another lubricant is given by its figures, without a name"
+                    self.fault(
+                        (*path, key), getattr(table, key), f"no such key beside a name, which already says it{figures}"
+                    )
+                if said_by_name:
                     return None
                 return lubricants.with_given(lubricants.find(table.name, self.own), **stated)
             if any(fault.key.startswith("lubricant.") for fault in self.faults):
@@ -441,6 +452,8 @@ class _Reading:
                         getattr(housing, key),
                         "no such key beside conductance, which is all heat paths together",
                     )
+        if housing.kind is not None and housing.area is not None:
+            self.fault(("housing", "kind"), housing.kind, "either kind or area: both say how large the housing is")
         if housing.machine_heat is not None and housing.shaft_temperature is not None:
             self.fault(
                 ("housing", "machine_heat"),
@@ -452,6 +465,38 @@ class _Reading:
         self._coolant(housing)
         if housing.frame_conductance is not None and housing.frame_temperature is None:
             self.fault(("housing", "frame_temperature"), "nothing", "the frame's temperature", plain=True)
+
+    def _beside_conductance(self, housing: Housing, duty: Sequence[Duty], around: Surroundings | None) -> None:
+        """Refuse a draught beside a conductance, in which the air is already."""
+        if housing.conductance is None:
+            return
+        places: list[tuple[tuple[str | int, ...], float | None]] = [
+            (("duty", i, "draught"), point.draught) for i, point in enumerate(duty)
+        ]
+        if around is not None:
+            places.append((("surroundings", "draught"), around.draught))
+        for path, draught in places:
+            if draught is not None:
+                self.fault(path, f"{draught:g} m/s",
+                           "no such key beside [housing] conductance, which is all heat paths together",
+                           plain=True)  # fmt: skip
+
+    def _shaft_heat(self, housing: Housing, duty: Sequence[Duty]) -> None:
+        """Refuse the temperature of the shaft in a state beside the heat that the machine sends."""
+        for i, point in enumerate(duty):
+            if housing.machine_heat is not None and point.shaft_temperature is not None:
+                self.fault(("duty", i, "shaft_temperature"), f"{point.shaft_temperature:g} degC",
+                           "either this or [housing] machine_heat: both say what the machine sends",
+                           plain=True)  # fmt: skip
+
+    def _stream(self, oil: OilPlan) -> None:
+        """Refuse the facts of a stream of oil where no oil circulates."""
+        for key, unit in (("flow", "l/min"), ("inlet", "degC"), ("contact", "of its warming")):
+            value = getattr(oil, key)
+            if value is not None and oil.supply not in STREAMS:
+                supply = "no supply" if oil.supply is None else f'supply "{oil.supply}"'
+                expected = "no such key, or a [oil] supply whose oil flows through the bearing: circulating or jet"
+                self.fault(("oil", key), f"{value:g} {unit} beside {supply}", expected, plain=True)
 
     def _coolant(self, housing: Housing) -> None:
         """Refuse a cooling jacket that is not whole, or whose fluid is none."""

@@ -6,7 +6,7 @@ import json
 import math
 
 import pytest
-from conftest import BASE, EXAMPLES
+from conftest import BASE, EXAMPLES, with_key
 
 import lubecheck
 from lubecheck.faces.record import of_result, to_json
@@ -62,6 +62,7 @@ def test_a_case_without_equilibrium_has_null_and_no_number():
     text = BASE.replace('kind = "motor end shield"\n', 'conductance = "0.01 W/K"\n').replace(
         'shaft_temperature = "75 degC"\n', 'machine_heat = "50 W"\n'
     )
+    text = with_key(text, "surroundings", "draught", None)
     result = lubecheck.check(read_case(text))
     record = json.loads(to_json(result), parse_constant=pytest.fail)
     assert record["operating"]["temperature"]["value"] is None

@@ -86,6 +86,7 @@ BAD_VALUES = [
     ("housing", "area", '"0.1 m"', "area"),
     ("housing", "conductance", '"1.4 W/K"', "conductance"),
     ("housing", "machine_heat", '"12 W"', "either"),
+    ("housing", "area", '"0.1 m^2"', "either kind or area"),
     ("housing", "relief", '"shut"', "closed"),
     ("grease", "fill", '"15 mm"', "mass"),
     ("grease", "fill", "15", "share"),
@@ -259,3 +260,42 @@ def test_every_key_says_what_it_is_and_what_it_expects(table, key, entry):
     assert entry.expected
     if entry.kinds and not entry.words:
         assert entry.example, (table, key)
+
+
+PUMP = (EXAMPLES / "oil_bath_pump.toml").read_text()
+
+
+@pytest.mark.parametrize(
+    ("text", "changes", "key", "word"),
+    [
+        (BASE, [("housing", "area", '"0.1 m^2"')], "housing.kind", "either kind or area"),
+        (BASE, [("housing", "kind", None), ("housing", "conductance", '"1 W/K"')], "surroundings.draught",
+         "beside [housing] conductance"),
+        (BASE, [("housing", "kind", None), ("housing", "conductance", '"1 W/K"'), ("surroundings", "draught", None),
+                ("duty", "draught", '"2 m/s"')], "duty[1].draught", "beside [housing] conductance"),
+        (BASE, [("housing", "shaft_temperature", None), ("housing", "machine_heat", '"12 W"'),
+                ("duty", "shaft_temperature", '"75 degC"')], "duty[1].shaft_temperature", "either this or"),
+        (PUMP, [("oil", "flow", '"0.5 l/min"')], "oil.flow", "circulating"),
+        (PUMP, [("oil", "inlet", '"45 degC"')], "oil.inlet", "circulating"),
+        (PUMP, [("oil", "supply", None), ("oil", "flow", '"0.5 l/min"')], "oil.flow", "beside no supply"),
+        (PUMP, [("oil", "supply", '"mist"'), ("cleanliness", "setting", '"normal"'), 
+                ("oil", "inlet", '"45 degC"')], "oil.inlet", 'beside supply "mist"'),
+        (BASE, [("lubricant", "thickener", '"sodium"')], "lubricant.thickener", "by its figures"),
+        (BASE, [("lubricant", "nlgi", '"000"')], "lubricant.nlgi", "by its figures"),
+        (BASE, [("lubricant", "base_oil", '"ester"')], "lubricant.base_oil", "by its figures"),
+    ],
+)  # fmt: skip
+def test_facts_that_contradict_each_other_are_one_clear_fault(text, changes, key, word):
+    for table, name, value in changes:
+        text = with_key(text, table, name, value)
+    (fault,) = [fault for fault in faults_of(text) if fault.key == key]
+    assert word in str(fault)
+    assert len(faults_of(text)) == 1
+    assert fault.line
+
+
+def test_a_lubricant_whose_figures_were_changed_says_so_in_its_name():
+    changed = read_case(with_key(BASE, "lubricant", "nu_40", '"90 mm^2/s"')).lubricant
+    assert changed.name == read_case(BASE).lubricant.name + ", figures changed by the user"
+    same = read_case(with_key(BASE, "lubricant", "nu_40", '"110 mm^2/s"')).lubricant
+    assert same.name == read_case(BASE).lubricant.name
