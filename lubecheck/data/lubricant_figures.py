@@ -215,6 +215,7 @@ def _expand(figures: Figures, spread: dict[str, tuple[float, float]], assumed: l
         faults.extend(refused.faults)
         return
     figures.setdefault("name", read.text)
+    figures.setdefault("source", read.source)
     for name, value in read.facts.items():
         if name in figures and figures[name] != value and name in ("kind", "nlgi", "base_oil", "iso_vg"):
             faults.append(Fault(name, f"{figures[name]}", f"{value}, as {read.text} states"))

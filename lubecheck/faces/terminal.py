@@ -106,7 +106,10 @@ def _limits(result: Result, console: Console, system: str) -> None:
     if notes:
         console.print(Text("\nWhy", style="bold"))
         console.print(why)
-    if not is_wide:
+    if is_wide:
+        keys = dict.fromkeys(limit.basis for limit in result.limits)
+        bullets("Sources", (f"{key}: {cite(key)}" for key in keys), console)
+    else:
         bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console)
 
 
@@ -211,6 +214,8 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
         key: " (proposed)" if key in plan.is_proposed else "" for key in ("fill", "interval", "regrease_amount")
     }
     parts = [printable(plan.lubricant)]
+    if plan.is_as_supplied:
+        parts.append("as supplied, closed on both sides")
     if plan.first_fill_g is not None:
         strokes = _strokes(plan.first_fill_strokes, plan.stroke_g, system)
         parts.append(f"first fill {figure(plan.first_fill_g, 'g', system)}{strokes}{proposed['fill']}")

@@ -11,8 +11,8 @@ from lubecheck.data import air
 from lubecheck.model import intervals, limits
 from lubecheck.model.equilibrium import TOP_TEMPERATURE, Air, Equilibrium, solve
 from lubecheck.model.limits import Judged
-from lubecheck.model.points import BEYOND_SETTINGS, Codes, Flags, Points
-from lubecheck.physics import cleanliness, fatigue, film, grease_amount, loads
+from lubecheck.model.points import BEYOND_SETTINGS, Codes, Points
+from lubecheck.physics import cleanliness, fatigue, film, grease_amount
 from lubecheck.units import Array
 
 PROPOSED_SHARE = 0.8  # of the allowed interval that is proposed: leaves a fifth for what varies, so that it is `within`
@@ -64,7 +64,7 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         load_ratio = state.equivalent_load / (p.dynamic_rating * hot)
         row_rating, row_life = _lives(p, state, load_ratio, factor)
         rating, modified = intervals.damage_sum(p, row_rating), intervals.damage_sum(p, row_life)
-        lines = intervals.of(p, state.temperature, load_ratio)
+        lines = intervals.of(p, state.temperature, np.where(limits.takes_loads(p), load_ratio, np.nan))
         allowed = lines.allowed
         planned = p.interval[p.starts]
         is_grease = p.is_grease[p.starts] > 0
@@ -149,25 +149,9 @@ def _lives(points: Points, state: Equilibrium, load_ratio: Array, factor: Array)
     a1 = fatigue.reliability_factor.plain(p.reliability)
     modified = fatigue.modified_life.plain(basic_life=hours, reliability_factor=a1, life_modification_factor=factor)
     modified = modified * cleanliness.water_factor.plain(p.water)
-    is_valid = (load_ratio <= fatigue.GREATEST_LOAD_RATIO) & takes_loads(p)
+    is_valid = (load_ratio <= fatigue.GREATEST_LOAD_RATIO) & limits.takes_loads(p)
     is_valid &= (state.temperature <= p.stabilised_to) & ~cleanliness.water_factor.outside(content=p.water)
     return hours, np.where(is_valid, modified, np.nan)
-
-
-def takes_loads(points: Points) -> Flags:
-    """Return where the load rule of the family counts every load that there is."""
-    p = points
-    axial_counts = loads.TAKES_AXIAL[p.rule] | (p.axial_load == 0)
-    flags: Flags = axial_counts & (loads.TAKES_RADIAL[p.rule] | (p.radial_load == 0)) & ~parts_rows(p)
-    return flags
-
-
-def parts_rows(points: Points) -> Flags:
-    """Return where the radial load on a thrust spherical roller bearing is so great that its washers part."""
-    p = points
-    share = loads.GREATEST_THRUST_SPHERICAL_RADIAL
-    flags: Flags = (p.rule == loads.RULES.index("thrust spherical")) & (p.radial_load > share * np.abs(p.axial_load))
-    return flags
 
 
 def _proposed(points: Points, allowed: Array) -> Array:

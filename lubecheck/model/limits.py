@@ -208,19 +208,37 @@ def ring_temperature(points: Points, state: Equilibrium) -> Use:
 
 
 def minimum_load(points: Points, state: Equilibrium) -> Use:
-    """Least load that makes the elements roll over the load that is there."""
+    """Least load that makes the elements roll over the load that is there; unknown where a load is not counted."""
     least = points.minimum_load_share * points.dynamic_rating
-    return Use(least, state.equivalent_load, least / state.equivalent_load, np.ones(len(points), dtype=bool))
+    use = np.where(takes_loads(points), least / state.equivalent_load, np.nan)
+    return Use(least, state.equivalent_load, use, np.ones(len(points), dtype=bool))
+
+
+def takes_loads(points: Points) -> Flags:
+    """Return where the load rule of the family counts every load that there is."""
+    p = points
+    axial_counts = loads.TAKES_AXIAL[p.rule] | (p.axial_load == 0)
+    flags: Flags = axial_counts & (loads.TAKES_RADIAL[p.rule] | (p.radial_load == 0)) & ~parts_rows(p)
+    return flags
+
+
+def parts_rows(points: Points) -> Flags:
+    """Return where the radial load on a thrust spherical roller bearing is so great that its washers part."""
+    p = points
+    share = loads.GREATEST_THRUST_SPHERICAL_RADIAL
+    flags: Flags = (p.rule == loads.RULES.index("thrust spherical")) & (p.radial_load > share * np.abs(p.axial_load))
+    return flags
 
 
 def static_load(points: Points) -> Use:
-    """Static safety that is asked for over the one that is there."""
+    """Static safety that is asked for over the one that is there; unknown where a load is not counted."""
     load = loads.static_equivalent_load.plain(
         radial_load=points.radial_load, axial_load=points.axial_load, contact_angle=points.contact_angle,
         rule=points.rule,
     )  # fmt: skip
     safety = points.static_rating / load
-    return Use(points.static_safety, safety, points.static_safety / safety, np.ones(len(points), dtype=bool))
+    use = np.where(takes_loads(points), points.static_safety / safety, np.nan)
+    return Use(points.static_safety, safety, use, np.ones(len(points), dtype=bool))
 
 
 def of_positions(points: Points, demand: Array, allowed: Array, applies: Flags) -> Judged:

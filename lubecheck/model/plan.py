@@ -87,9 +87,8 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
     is_by_calendar = kept.interval is not None and kept.interval.is_calendar and "interval" not in proposed
     shutdown = 0.0 if is_by_calendar else kept.shutdown or 0.0
     if case.is_grease and points.is_sealed[0]:
-        regrease = interval = None
-        feeding = None
-        proposed = [name for name in proposed if name == "fill"]
+        fill = regrease = interval = stroke = feeding = None  # it comes filled and stays so
+        proposed = []
     return PlanLine(
         lubricant=case.lubricant.name,
         first_fill_g=fill,
@@ -102,6 +101,7 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
         hours_per_day=hours_per_day,
         is_proposed=tuple(proposed),
         steps=_steps(case, is_sealed=bool(points.is_sealed[0]), feeding=feeding, has_room=regrease is not None),
+        is_as_supplied=case.is_grease and bool(points.is_sealed[0]),
         housing_fill_g=housing_fill(case, outcome)[1],
         feed_g_per_h=feeding,
         oil_change_cm3=None if case.is_grease else case.oil.volume,

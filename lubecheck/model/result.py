@@ -242,6 +242,7 @@ class PlanLine:
     hours_per_day: float
     is_proposed: tuple[str, ...]  # "fill", "interval", "regrease_amount": what the user left to be proposed
     steps: tuple[str, ...]
+    is_as_supplied: bool = False  # closed on both sides: filled by its maker, never by the user
     housing_fill_g: float | None = None
     feed_g_per_h: float | None = None  # stands in for an interval that is too short
     oil_change_cm3: float | None = None

@@ -53,7 +53,7 @@ NITRILE_LIMIT = 100.0
 
 # What a row's highest temperature comes from: words and source, in the order of Points.limit_origin.
 LIMIT_ORIGINS: tuple[tuple[str, str], ...] = (
-    ("lubricant", "din-51825"),
+    ("lubricant", ""),  # the lubricant's own source
     ("cage of polyamide", "common-practice"),
     ("seals of nitrile rubber", "common-practice"),
     ("your own limit", "user"),

@@ -20,8 +20,8 @@ from lubecheck.model.assumptions import FACTS, PROPOSED_HOUSING_FILL, Fact
 from lubecheck.model.entries import BearingTable, Case, entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
 from lubecheck.model.interval_lines import interval_note, percentile
-from lubecheck.model.kernel import Outcome, parts_rows, takes_loads
-from lubecheck.model.limits import FLASH_MARGIN
+from lubecheck.model.kernel import Outcome
+from lubecheck.model.limits import FLASH_MARGIN, parts_rows, takes_loads
 from lubecheck.model.points import BEYOND_SETTINGS
 from lubecheck.model.result import Assumed
 from lubecheck.model.rows import DEFAULT_KAPPA, DEFAULT_LIFE, DEFAULT_RELIABILITY, LIMIT_ORIGINS, RULE_DAYS, seasons
@@ -44,6 +44,7 @@ WEIGH = (
     "weigh a stroke in a minute and state [grease] stroke: ten strokes on a piece of paper on a letter scale, grams "
     "over ten; guns give 0.8 to 3 g a stroke"
 )
+_BESIDE_THE_BEARING = ("[housing] void", "[housing] relief")  # where grease of an open bearing goes
 _DIRTY = 0.05  # e_C below which dirt is likelier to end a bearing than the lubricant: estimate, from severe on
 _HOT = 150.0  # degC from which ratings are lowered
 LONG_LIFE = 200_000.0  # h, beyond which a fatigue life says no more than "not this"
@@ -73,7 +74,10 @@ def basis(name: str, case: Case, outcome: Outcome) -> str:
     points = outcome.points
     own = case.limits
     if name == "temperature":
-        return LIMIT_ORIGINS[int(points.limit_origin[outcome.judged[name].row[0]])][1]
+        origin, source = LIMIT_ORIGINS[int(points.limit_origin[outcome.judged[name].row[0]])]
+        return _stated_or(case, "lubricant.highest") if origin == "lubricant" else source
+    if name == "cold_start":
+        return _stated_or(case, "lubricant.lowest")
     if name == "interval" and not case.is_grease:
         is_bath_rule = outcome.lines.bath[0] <= outcome.lines.oxidation[0]
         return "bath-handbooks" if is_bath_rule or not points.is_circulating[0] else "whitby"
@@ -81,6 +85,11 @@ def basis(name: str, case: Case, outcome: Outcome) -> str:
         return "booser"
     stated = {"film": own.least_viscosity_ratio, "static_load": own.static_safety}
     return "user" if stated.get(name) is not None else ""
+
+
+def _stated_or(case: Case, key: str) -> str:
+    """Return the source of a figure of the lubricant: the user where the case states it, else that of the lubricant."""
+    return "user" if key in dict(case.given) else case.lubricant.source
 
 
 def limit_note(name: str, case: Case, outcome: Outcome) -> str:
@@ -155,6 +164,8 @@ def _interval(case: Case, outcome: Outcome, row: int) -> str:
         if case.grease.interval is not None:
             return "closed on both sides: do not regrease"
         level = percentile(float(points.grease_failed[0]))
+        if uncounted := _uncounted(outcome):
+            return join(uncounted, "closed on both sides: do not regrease")
         return f"closed on both sides: life of its grease ({level}) against the wanted life; do not regrease"
     said = "" if case.grease.interval is not None else "proposed"
     share = float(grease_life.classical_share.plain(points.speed[hottest], points.bore[hottest]))
@@ -164,7 +175,8 @@ def _interval(case: Case, outcome: Outcome, row: int) -> str:
         )
         return join(said, f"{valid}: feed continuously or ask the grease's maker")
     if np.isnan(outcome.allowed_interval[0]):
-        return join(said, "load or temperature outside the range of the classical line")
+        uncounted = _uncounted(outcome)
+        return join(said, uncounted or "load or temperature outside the range of the classical line")
     return join(said, interval_note(case, outcome))
 
 
@@ -214,8 +226,17 @@ def _clearance(case: Case, outcome: Outcome, row: int) -> str:
     return f"{case.bearing.clearance}: {whole}{sign}; {taken}"
 
 
+def _uncounted(outcome: Outcome) -> str:
+    """Say which load the family has no rule for; empty where all are counted."""
+    if parts_rows(outcome.points).any():
+        return "the radial load is over 0.55 of the axial one, so that the washers part"
+    return "" if takes_loads(outcome.points).all() else "the family takes no load in one of the stated directions"
+
+
 def _minimum_load(case: Case, outcome: Outcome, row: int) -> str:
     judged = outcome.judged["minimum_load"]
+    if math.isnan(judged.use[0]):
+        return join(_uncounted(outcome), _duty(case, row))
     advice = ""
     if judged.use[0] > 1:
         preload = curing_preload(outcome.points, row)
@@ -227,6 +248,10 @@ def _minimum_load(case: Case, outcome: Outcome, row: int) -> str:
 
 def _static(case: Case, outcome: Outcome, row: int) -> str:
     judged = outcome.judged["static_load"]
+    if math.isnan(judged.use[0]):
+        return join(_uncounted(outcome), _duty(case, row))
+    if math.isinf(judged.allowed[0]):
+        return join("no load at all", _duty(case, row))
     return join(f"S0 is {judged.allowed[0]:.2f}, at least {judged.demand[0]:.2f}", _duty(case, row))
 
 
@@ -296,10 +321,8 @@ def _outside_life(outcome: Outcome) -> str:
         reasons.append("P is over 0.5 C")
     if (outcome.points.setting == BEYOND_SETTINGS).any():
         reasons.append("the oil is dirtier than it has a setting for")
-    if parts_rows(outcome.points).any():
-        reasons.append("the radial load is over 0.55 of the axial one, so that the washers part")
-    elif not takes_loads(outcome.points).all():
-        reasons.append("the family takes no load in one of the stated directions")
+    if uncounted := _uncounted(outcome):
+        reasons.append(uncounted)
     if (outcome.state.temperature > outcome.points.stabilised_to).any():
         reasons.append(f"the rings are stabilised to {outcome.points.stabilised_to[0]:g} degC only")
     if cleanliness.water_factor.outside(content=outcome.points.water).any():
@@ -356,7 +379,7 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
     if len(case.duty) > 1:
         said.append(f"operating point: the hottest of {len(case.duty)} duty points")
     said += _loads(case)
-    if case.is_grease and case.grease.stroke is None:
+    if case.is_grease and case.grease.stroke is None and case.bearing.sealed_sides != 2:
         said.append(WEIGH)
     said += after.advice(case, outcome)
     if case.is_grease and case.grease.rule in RULE_DAYS:
@@ -419,8 +442,10 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     """Return everything that was not said, with the reading or the default that stood in for it."""
     said = []
     judged_too = {fact.name for fact in moving}
+    comes_filled = _comes_filled(case)
     for fact in FACTS:
-        if fact.is_missing(case) and fact.usual != "estimate":  # estimated figures are listed with their values below
+        is_beside = comes_filled and fact.name in _BESIDE_THE_BEARING
+        if fact.is_missing(case) and not is_beside and fact.usual != "estimate":  # estimates are listed below
             worst = " (judged at its worst as well)" if fact.name in judged_too else ""
             said.append(Assumed(fact.name, fact.text + worst, fact.basis))
     own = case.limits
@@ -430,7 +455,8 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         ("[limits] least_viscosity_ratio", own.least_viscosity_ratio, f"{DEFAULT_KAPPA:g}", "common-practice"),
     )
     said += [Assumed(name, text, source) for name, value, text, source in defaults if value is None]
-    if case.is_grease and case.grease.housing_fill is None and case.grease.fill != "unknown":
+    is_proposed = case.grease.housing_fill is None and case.grease.fill != "unknown"
+    if case.is_grease and is_proposed and not comes_filled:
         said.append(
             Assumed("[grease] housing_fill", f"{PROPOSED_HOUSING_FILL * 100:.0f} % proposed", "common-practice")
         )
@@ -461,6 +487,11 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     if case.bearing.cage is None:
         said.append(Assumed("[bearing] cage", "metal", "common-practice"))
     return tuple(said)
+
+
+def _comes_filled(case: Case) -> bool:
+    """Tell whether a bearing is as its maker filled and closed it: what is beside it is no question then."""
+    return case.is_grease and case.bearing.sealed_sides == 2 and case.grease.fill is None and case.grease.given is None
 
 
 def bearing(bearing: Bearing) -> str:

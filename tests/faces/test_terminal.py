@@ -12,6 +12,7 @@ from rich.console import Console
 import lubecheck
 from lubecheck.faces.terminal import STYLES, print_result
 from lubecheck.model.reader import read_case
+from lubecheck.sources import cite
 
 
 def printed(text_or_path, *, width=100, system="si", **options) -> str:
@@ -35,6 +36,7 @@ def test_every_limit_shows_its_state_in_words_and_its_source(path):
         for limit in result.limits:
             assert re.search(rf"{limit.name.replace('_', ' ')}\s+{limit.state}", text), limit.name
             assert limit.basis in text if width == 120 else limit.name.replace("_", " ") + ": " in text
+            assert cite(limit.basis) in " ".join(text.split())
         assert result.verdict.upper() in text
 
 

@@ -11,10 +11,11 @@ import pytest
 from conftest import BASE, EXAMPLES, with_key
 
 import lubecheck
+from lubecheck.faces.terminal import plan_parts
 from lubecheck.model.entries import TABLES, entries
 from lubecheck.model.reader import read_case
 from lubecheck.model.result import Figures, Grease, Life, Operating
-from lubecheck.sources import cite
+from lubecheck.sources import SOURCES, cite
 
 GRAVITY = {"within": 0, "near": 1, "unknown": 2, "beyond": 3}
 
@@ -365,3 +366,38 @@ def test_a_stroke_that_is_more_than_the_dose_is_not_rounded_up():
     text = with_key(with_key(BASE, "grease", "regrease_amount", '"12 g"'), "grease", "stroke", '"20 g"')
     result = lubecheck.check(read_case(text))
     assert result.plan.regrease_strokes == 0
+
+
+def test_limits_of_temperature_name_the_lubricant_s_source_or_the_user():
+    greased = lubecheck.check(read_case(BASE))
+    assert greased.limit("cold_start").basis == greased.limit("temperature").basis == "grease-selection-handbooks"
+    stated = with_key(with_key(BASE, "lubricant", "highest", '"120 degC"'), "lubricant", "lowest", '"-25 degC"')
+    assert {lubecheck.check(read_case(stated)).limit(name).basis for name in ("cold_start", "temperature")} == {"user"}
+    oiled = lubecheck.check(lubecheck.load_case(EXAMPLES / "oil_bath_pump.toml"))
+    assert oiled.limit("cold_start").basis == oiled.limit("temperature").basis == "base-oil-handbooks"
+    named = with_key(BASE, "lubricant", "name", None).replace(
+        "[lubricant]\n",
+        '[lubricant]\ndesignation = "KP2K-30"\nbase_oil = "mineral"\nnu_40 = "150 mm^2/s"\nindex = 95\n',
+    )
+    assert lubecheck.check(read_case(named)).limit("temperature").basis == "din-51825"
+
+
+def test_what_is_known_from_memory_is_not_called_seen():
+    assert SOURCES[lubecheck.check(read_case(BASE)).limit("speed").basis].certainty == "memory"
+
+
+@pytest.mark.parametrize("designation", ["6309-2RS", "6309-2Z"])
+def test_a_bearing_closed_on_both_sides_gets_no_first_fill_and_nothing_beside_it_is_assumed(designation):
+    text = BASE.replace('"6309"', f'"{designation}"')
+    for table, key in (("grease", "fill"), ("grease", "housing_fill"), ("grease", "interval"), ("housing", "void"),
+                       ("housing", "relief")):  # fmt: skip
+        text = with_key(text, table, key, None)
+    result = lubecheck.check(read_case(text))
+    assert result.plan.is_as_supplied
+    assert result.plan.first_fill_g is result.plan.first_fill_strokes is result.plan.regrease_g is None
+    assert result.plan.is_proposed == ()
+    assert not any("weigh a stroke" in note for note in result.notes)
+    assert not {"[housing] void", "[housing] relief", "[grease] housing_fill"} & {item.name for item in result.assumed}
+    shown = " ".join(plan_parts(result.plan, "si"))
+    assert "as supplied" in shown
+    assert "first fill" not in shown

@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
+import dataclasses
 import json
+import re
 
 import pytest
 from conftest import BASE, EXAMPLES, with_key
@@ -64,7 +66,40 @@ def test_any_case_ends_in_a_verdict_or_a_refusal(changed, without_ratings):
     else:
         complete = []
         check_record(result)
+        check_texts(dataclasses.asdict(result))
     assert all(complete)
+
+
+def check_texts(part):
+    """No text of a result may print a number that is none."""
+    if isinstance(part, dict):
+        part = [*part.keys(), *part.values()]
+    if isinstance(part, str):
+        assert not re.search(r"(?<![\w-])-?(nan|inf|None)(?!\w)", part), part
+    elif isinstance(part, (list, tuple)):
+        for item in part:
+            check_texts(item)
+
+
+UNCOUNTED = [
+    ("NU 210", "0 N", "2 kN"),
+    ("51108", "1 kN", "2 kN"),
+    ("29320", "3 kN", "5 kN"),
+    ("NU 210-2Z", "0 N", "2 kN"),
+]
+
+
+@pytest.mark.parametrize(("designation", "radial", "axial"), UNCOUNTED)
+def test_loads_that_the_family_has_no_rule_for_are_unknown_and_no_number(designation, radial, axial):
+    text = with_key(with_key(BASE, "duty", "radial_load", f'"{radial}"'), "duty", "axial_load", f'"{axial}"')
+    for key in ("dynamic_rating", "static_rating", "mass", "cage"):
+        text = with_key(text, "bearing", key, None)
+    text = with_key(with_key(text, "bearing", "designation", f'"{designation}"'), "grease", "fill", None)
+    result = lubecheck.check(read_case(with_key(text, "grease", "interval", None)))
+    for name in ("static_load", "minimum_load", "interval", "fatigue_life"):
+        assert result.limit(name).state == "unknown", name
+        assert result.limit(name).note, name
+    check_texts(dataclasses.asdict(result))
 
 
 def check_record(result):

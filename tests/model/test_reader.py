@@ -278,7 +278,7 @@ PUMP = (EXAMPLES / "oil_bath_pump.toml").read_text()
         (PUMP, [("oil", "flow", '"0.5 l/min"')], "oil.flow", "circulating"),
         (PUMP, [("oil", "inlet", '"45 degC"')], "oil.inlet", "circulating"),
         (PUMP, [("oil", "supply", None), ("oil", "flow", '"0.5 l/min"')], "oil.flow", "beside no supply"),
-        (PUMP, [("oil", "supply", '"mist"'), ("cleanliness", "setting", '"normal"'), 
+        (PUMP, [("oil", "supply", '"mist"'), ("cleanliness", "setting", '"normal"'),
                 ("oil", "inlet", '"45 degC"')], "oil.inlet", 'beside supply "mist"'),
         (BASE, [("lubricant", "thickener", '"sodium"')], "lubricant.thickener", "by its figures"),
         (BASE, [("lubricant", "nlgi", '"000"')], "lubricant.nlgi", "by its figures"),
