@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+import re
 from typing import TYPE_CHECKING
 
 from lubecheck.units import KINDS, Kind, from_house
@@ -81,6 +82,33 @@ def figure(value: float | None, unit: str, system: str) -> str:
     if value is None:
         return "-"
     return f"{amount(value, unit, system)} {shown_unit(unit, system)}".rstrip()
+
+
+_NUMBER = r"-?[0-9]+(?:\.[0-9]+)?(?:e[+-]?[0-9]+)?"
+# As texts write the house units; a kelvin of a text is always a difference.
+_WORDS = {KINDS[name].unit: KINDS[name].unit for name in _INCH} | {"K": KINDS["temperature difference"].unit}
+# One number, several of a size ("45 x 100 x 25 mm") or a range ("14 to 17 K"), then a house unit that ends there.
+_UNITS = "|".join(re.escape(unit) for unit in sorted(_WORDS, key=len, reverse=True))
+_FIGURES = re.compile(rf"(?<![\w.,/-])({_NUMBER}(?: (?:x|to) {_NUMBER})*) ({_UNITS})(?![\w/^*]|\.[0-9])")
+
+
+def in_system(text: str, system: str) -> str:
+    """Return a finished text with the figures of house units in it as they are shown.
+
+    Strict: only a number, or numbers joined by "x" or "to", right before a house unit that stands alone.
+
+    >>> in_system("P is 1868 N, 45 x 100 x 25 mm, 110 mm^2/s at 40 degC, 14 to 17 K", "inch")
+    'P is 420 lbf, 1.77 x 3.94 x 0.984 in, 110 mm^2/s at 104 degF, 25.2 to 30.6 delta_degF'
+    """
+    if system != "inch":
+        return text
+
+    def shown(found: re.Match[str]) -> str:
+        unit = _WORDS[found[2]]
+        figures = re.sub(_NUMBER, lambda one: number(converted(float(one[0]), unit, system)), found[1])
+        return f"{figures} {shown_unit(unit, system)}"
+
+    return _FIGURES.sub(shown, text)
 
 
 def printable(text: str) -> str:

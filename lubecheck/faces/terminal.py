@@ -12,7 +12,7 @@ from rich.padding import Padding
 from rich.table import Table
 from rich.text import Text
 
-from lubecheck.faces.display import amount, figure, is_plain, number, printable, shown_unit
+from lubecheck.faces.display import amount, figure, in_system, is_plain, number, printable, shown_unit
 from lubecheck.faces.losses import print_damage, print_losses
 from lubecheck.model.result import Figures, Limit, PlanLine, Result
 from lubecheck.sources import cite
@@ -33,26 +33,29 @@ _WIDE = 100  # columns from which sources stand beside the limits
 
 def print_result(result: Result, console: Console, system: str = "si", *, losses: bool = False) -> None:
     """Print a result; its loss account where that is asked for."""
-    _heading(result, console)
+    _heading(result, console, system)
     _limits(result, console, system)
     _operating(result, console, system)
     _heat(result, console)
-    _interval_lines(result, console)
+    _interval_lines(result, console, system)
     print_damage(result.damage, console, system)
     if losses:
         print_losses(result.losses, console)
     _plan(result, console, system)
     _remedies(result, console)
-    bullets("Notes", result.notes, console)
-    bullets("Not said, so assumed", (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed), console)
+    bullets("Notes", (in_system(note, system) for note in result.notes), console)
+    assumed = (f"{a.name}: {in_system(a.value, system)} ({a.basis})" for a in result.assumed)
+    bullets("Not said, so assumed", assumed, console)
     bullets("Cautions", result.cautions, console)
 
 
-def _heading(result: Result, console: Console) -> None:
+def _heading(result: Result, console: Console, system: str) -> None:
     if result.title:
         console.print(Text(printable(result.title), style="bold"))
-    console.print(Text(printable(f"{result.bearing}")))
-    console.print(Text(printable(f"{result.lubricant}")))
+    # A designation or a name may end in what reads like a unit ("22218 K"): only what follows it holds figures.
+    for line, mark in ((result.bearing, ", "), (result.lubricant, "(")):
+        name, middle, figures = line.rpartition(mark)
+        console.print(Text(printable(name + middle + in_system(figures, system))))
     governing = result.limit(result.governing)
     verdict = Text("\nVerdict: ")
     style = STYLES[result.verdict]
@@ -102,7 +105,7 @@ def _limits(result: Result, console: Console, system: str) -> None:
     why.add_column(no_wrap=True)
     why.add_column()
     for limit, note in notes:
-        why.add_row(Text(_words(limit.name), style=STYLES[limit.state]), Text(printable(note)))
+        why.add_row(Text(_words(limit.name), style=STYLES[limit.state]), Text(printable(in_system(note, system))))
     if notes:
         console.print(Text("\nWhy", style="bold"))
         console.print(why)
@@ -159,7 +162,7 @@ def _operating(result: Result, console: Console, system: str) -> None:
     console.print(table)
 
 
-def _interval_lines(result: Result, console: Console) -> None:
+def _interval_lines(result: Result, console: Console, system: str) -> None:
     """Print the lines of lubricant life side by side, whether or not they govern."""
     if not result.interval_lines:
         return
@@ -172,7 +175,7 @@ def _interval_lines(result: Result, console: Console) -> None:
         hours = "not read" if line.hours is None else f"{amount(line.hours, 'h', 'si')} h"
         factors = " x ".join(f"{name} {number(factor)}" for name, factor in line.factors)
         told = "; ".join(part for part in (factors if line.applies else "", line.note) if part)
-        table.add_row(Text(line.name), Text(hours), Text(use), Text(told))
+        table.add_row(Text(line.name), Text(hours), Text(use), Text(in_system(told, system)))
     console.print(table)
     console.print(Padding(Text(result.interval_spread), (0, 0, 0, 2)))
 
@@ -205,7 +208,7 @@ def _plan(result: Result, console: Console, system: str) -> None:
         )
     )
     for i, step in enumerate(plan.steps, start=1):
-        console.print(Padding(Text(f"{i}. {step}"), (0, 0, 0, 2)))
+        console.print(Padding(Text(f"{i}. {in_system(step, system)}"), (0, 0, 0, 2)))
 
 
 def plan_parts(plan: PlanLine, system: str) -> list[str]:

@@ -179,10 +179,22 @@ def _limit(variants: Variants, name: str) -> Limit:
         allowed=_finite(judged.allowed[0]),
         unit=unit,
         basis=wording.basis(name, variants.case, variants.outcome) or basis,
-        note=wording.join(doubt, wording.limit_note(name, variants.case, variants.outcome), wording.band(low, high)),
+        note=wording.join(
+            doubt,
+            wording.limit_note(name, variants.case, variants.outcome),
+            wording.band(low, high, _lost_ends(variants, uses)),
+        ),
         use_low=_finite(low),
         use_high=_finite(high),
     )
+
+
+def _lost_ends(variants: Variants, uses: Array) -> list[str]:
+    """Return the ends of the uncertain inputs at which a limit has no use though it has one between them."""
+    if not np.isfinite(uses[0]):
+        return []
+    ends = np.isfinite(uses[list(variants.inputs)]).reshape(-1, 2).all(axis=0)
+    return [name for name, is_there in zip(("low", "high"), ends, strict=True) if not is_there]
 
 
 def _governing(judged: Sequence[Limit], verdict: str) -> str:

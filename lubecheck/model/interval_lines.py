@@ -183,16 +183,21 @@ def interval_note(case: Case, outcome: Outcome) -> str:
     raw = float(grease_life.classical_interval.plain(p.speed[row], p.bore[row], p.interval_family[row]))
     named = dict(classical_factors(case, outcome))
     surroundings = float(p.interval_factor[row])
-    said = [f"classical {raw:.0f} h x temperature {named['temperature']:.2f} x load {named['load']:.2f} "
+    states = len(case.duty) * len(seasons(case))
+    many = states > 1
+    running, allowed = float(outcome.lines.classical[0]), float(outcome.allowed_interval[0])
+    place = "at the hottest state " if many else ""
+    said = [f"{place}classical {raw:.0f} h x temperature {named['temperature']:.2f} x load {named['load']:.2f} "
             f"x surroundings {surroundings:.2f}"]  # fmt: skip
     percent = float(p.grease_failed[0])
     to_wanted = _percentile_factor(grease_life.L01, percent)
     if to_wanted:
         said[0] += f" x {to_wanted[0][0]} {to_wanted[0][1]:.2f}"
-    states = len(case.duty) * len(seasons(case))
-    if states > 1:
-        said.append(f"that at the hottest of {states} states: damage is added up over all")
-    running, allowed = float(outcome.lines.classical[0]), float(outcome.allowed_interval[0])
+    chain = raw * surroundings * named["temperature"] * named["load"]
+    chain *= to_wanted[0][1] if to_wanted else 1.0
+    said[0] += f" = {chain:.0f} h"
+    if many:
+        said.append(f"{running:.0f} h over all {states} states: the shares of time over their intervals, added up")
     hours_per_day = float(p.hours_per_day[0])
     if allowed >= p.ceiling[0]:
         said.append("held to the calendar ceiling of 48 months")

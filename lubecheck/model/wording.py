@@ -64,8 +64,10 @@ def doubt(facts: Sequence[Fact], use: float, *, is_open: bool) -> str:
     return f"near at the worst reading of what was not said: {names}"
 
 
-def band(low: float, high: float) -> str:
-    """Say that the band of uncertain inputs crosses the limit, where it does."""
+def band(low: float, high: float, lost: Sequence[str] = ()) -> str:
+    """Say that the band of uncertain inputs crosses the limit, where it does, or has an end that is no number."""
+    if lost:
+        return f"not judged at the {' and the '.join(lost)} end of the band"
     return f"the band {low:.2f} to {high:.2f} crosses the limit" if low <= 1.0 < high else ""
 
 
@@ -391,7 +393,8 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
         if dwell < oil_life.LEAST_DWELL:
             said.append(f"the oil rests {dwell * 60:.1f} min in the circuit: under 5 min air and water stay in it")
     points = outcome.points
-    churned = float(outcome.state.churning_power[0])
+    hottest = int(outcome.hottest[0])
+    churned = float(outcome.state.churning_power[hottest])
     if points.is_bath[0] and points.level[0] > 0:
         factor = float(churning.bath_factor.plain(level=points.level[0], outside=points.outside[0]))
         said.append(
@@ -402,7 +405,7 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
     if case.housing.shaft_fit is None and case.bearing.family in clearance.KINDS:
         said.append("internal clearance was not judged: state [housing] shaft_fit")
     if churned > 0:
-        power = float(outcome.state.friction_power[0])
+        power = float(outcome.state.friction_power[hottest])
         said.append(f"churning makes {churned:.1f} of {power:.1f} W: the surplus cannot leave and will not run in")
     said += oil_words.notes(case)
     return tuple(said)

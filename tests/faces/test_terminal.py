@@ -10,6 +10,7 @@ from conftest import BASE, EXAMPLES, ROOT, with_key
 from rich.console import Console
 
 import lubecheck
+from lubecheck.faces.display import in_system
 from lubecheck.faces.terminal import STYLES, print_result
 from lubecheck.model.reader import read_case
 from lubecheck.sources import cite
@@ -89,3 +90,34 @@ def test_the_picture_of_the_readme_is_what_the_command_prints():
 
     made = runpy.run_path(str(ROOT / "examples" / "make_picture.py"), run_name="picture")
     assert (ROOT / "examples" / "new_motor.svg").read_text(encoding="utf-8") == made["picture"]()
+
+
+@pytest.mark.parametrize(
+    ("text", "shown"),
+    [
+        ("P is 1868 N, at least 100 N", "P is 420 lbf, at least 22.5 lbf"),
+        ("45 x 100 x 25 mm", "1.77 x 3.94 x 0.984 in"),
+        ("warmer by 10 K; -10 to 40 degC", "warmer by 18.0 delta_degF; 14.0 to 104 degF"),
+        ("110 mm^2/s at 40 degC, 5 W/K, 3 g/h, 20 W", "110 mm^2/s at 104 degF, 5 W/K, 3 g/h, 20 W"),
+        ("6309 N/C3 and NU 210 mmx, 1,5 mm, v2 mm", "6309 N/C3 and NU 210 mmx, 1,5 mm, v2 mm"),
+        ("50 cm^3.", "3.05 in^3."),
+        ("100-120 mm and 1/2 mm", "100-120 mm and 1/2 mm"),
+    ],
+)
+def test_figures_in_texts_are_shown_in_inch_units_and_nothing_else_is_touched(text, shown):
+    assert in_system(text, "inch") == shown
+    assert in_system(text, "si") == text
+
+
+def test_inch_output_has_no_house_unit_left_in_its_texts():
+    for path in EXAMPLES.glob("*.toml"):
+        text = " ".join(printed(path, width=300, system="inch").split())
+        head = text.split("What would bring it back")[0]
+        assert not re.search(r"[0-9] (mm|N|g|cm\^3|m/s|mm\^2)(?![\w/^*])", head), path
+        assert " in " in head
+        assert "delta_degF" in head
+    assert "22218 K spherical roller" in printed(
+        BASE.replace('"6309"', '"22218 K"').replace('dynamic_rating = "53 kN"\n', "").replace(
+            'static_rating = "31.5 kN"\n', "").replace('mass = "0.83 kg"\n', "").replace('cage = "steel"\n', ""),
+        system="inch",
+    )  # fmt: skip

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import dataclasses
 import math
+import re
 
 import numpy as np
 import pint
@@ -401,3 +402,41 @@ def test_a_bearing_closed_on_both_sides_gets_no_first_fill_and_nothing_beside_it
     shown = " ".join(plan_parts(result.plan, "si"))
     assert "as supplied" in shown
     assert "first fill" not in shown
+
+
+TWO_STATES = BASE.replace(
+    "[surroundings]",
+    'share = 0.5\n\n[[duty]]\nspeed = "2900 rpm"\nradial_load = "1.9 kN"\naxial_load = "250 N"\nshare = 0.5\n\n'
+    "[surroundings]",
+)
+
+
+def test_churning_is_told_at_the_hottest_duty_point():
+    text = with_key(with_key(TWO_STATES, "grease", "fill", '"40 g"'), "grease", "housing_fill", '"100 %"')
+    result = lubecheck.check(read_case(text))
+    (note,) = [note for note in result.notes if note.startswith("churning makes")]
+    operating = result.operating
+    assert f"{operating.churning_power.m:.1f} of {operating.friction_power.m:.1f} W" in note
+    assert operating.churning_power.m != pytest.approx(result.duty[0].churning_power.m, rel=0.01)
+
+
+@pytest.mark.parametrize("text", [BASE, TWO_STATES])
+def test_the_interval_chain_multiplies_to_the_hours_beside_it(text):
+    note = lubecheck.check(read_case(text)).limit("interval").note
+    chain, _, hours = re.search(r"classical (.*?)( = )([0-9]+) h", note).groups()
+    factors = [float(number) for number in re.findall(r"(?:^| )([0-9.]+)(?= |$)", chain)]
+    assert math.prod(factors) == pytest.approx(float(hours), rel=0.02)
+    assert ("at the hottest state" in note) == ("over all 2 states" in note) == (text is TWO_STATES)
+
+
+def test_an_end_of_the_band_that_cannot_be_judged_is_told():
+    text = with_key(with_key(BASE, "housing", "kind", None), "surroundings", "draught", None)
+    text = with_key(with_key(text, "housing", "shaft_temperature", None), "housing", "machine_heat", '"0 W"')
+    told = set()
+    for watts in np.geomspace(0.02, 0.3, 12):
+        result = lubecheck.check(read_case(with_key(text, "housing", "conductance", f'"{watts:.4g} W/K"')))
+        limit = result.limit("temperature")
+        if limit.use is not None and "not judged at the" in limit.note:
+            told.add(limit.note.rpartition("; ")[2])
+    assert told
+    assert all(re.fullmatch("not judged at the (low|high|low and the high) end of the band", note) for note in told)
