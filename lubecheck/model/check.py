@@ -193,8 +193,8 @@ def _lost_ends(variants: Variants, uses: Array) -> list[str]:
     """Return the ends of the uncertain inputs at which a limit has no use though it has one between them."""
     if not np.isfinite(uses[0]):
         return []
-    ends = np.isfinite(uses[list(variants.inputs)]).reshape(-1, 2).all(axis=0)
-    return [name for name, is_there in zip(("low", "high"), ends, strict=True) if not is_there]
+    ends = np.isfinite(uses[list(variants.inputs)]).reshape(-1, 2)
+    return [name for i, name in enumerate(("low", "high")) if not ends[:, i].all()]
 
 
 def _governing(judged: Sequence[Limit], verdict: str) -> str:
