@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import re
+import tomllib
 from pathlib import Path
 
 import pytest
@@ -69,6 +70,43 @@ def with_key(text: str, table: str, key: str, value: str | None) -> str:
     if head not in text:
         return f"{text}\n{head}\n{line}"
     return text.replace(f"{head}\n", f"{head}\n{line}")
+
+
+def toml(document: dict) -> str:
+    """Return a case as TOML text: the tables of a case hold texts, numbers and flags only."""
+
+    def value(one):
+        return str(one).lower() if isinstance(one, bool) else repr(one) if isinstance(one, int | float) else f'"{one}"'
+
+    lines = [f"{key} = {value(one)}" for key, one in document.items() if not isinstance(one, dict | list)]
+    for key, table in document.items():
+        for part in table if isinstance(table, list) else [table] if isinstance(table, dict) else []:
+            lines.append(f"[[{key}]]" if isinstance(table, list) else f"[{key}]")
+            lines += [f"{name} = {value(one)}" for name, one in part.items()]
+    return "\n".join(lines) + "\n"
+
+
+def edited(text: str, edits) -> str:
+    """Return the text of a case file with edits made, by nothing of the program's."""
+    document = tomllib.loads(text)
+    for key, value in edits:
+        if isinstance(value, dict):
+            document[key] = value
+            continue
+        table, _, name = key.partition(".")
+        number = re.fullmatch(r"duty\[(\d+)\]", table)
+        part = (
+            document["duty"][int(number[1]) - 1]
+            if number
+            else document.setdefault(table, {})
+            if value
+            else document.get(table, {})
+        )
+        if value is None:
+            part.pop(name, None)
+        else:
+            part[name] = value
+    return toml(document)
 
 
 REPORT = pytest.StashKey[list[str]]()

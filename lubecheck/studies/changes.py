@@ -19,9 +19,10 @@ from lubecheck.data.bearing_series import of_family
 from lubecheck.errors import InputError
 from lubecheck.model.entries import TABLES, Amount, Case, entries
 from lubecheck.model.glance import Glances
+from lubecheck.model.limits import BEYOND, NEAR_CODE
 from lubecheck.model.reader import read_value
 from lubecheck.model.rows import running_hours
-from lubecheck.physics import fatigue, grease_life
+from lubecheck.physics import clearance, fatigue, grease_life, oil_life
 from lubecheck.units import KINDS, UnreadableText
 
 # A key of the case ("grease.fill", "duty[2].draught") with its new text, or None to take it out; a whole table
@@ -35,6 +36,13 @@ SHIELDS = (10.0, 20.0, 30.0)  # K off the shaft's temperature: flinger disc, hea
 FLOWS = (1.5, 2.0, 3.0)  # times the oil flow
 COOLED = (5.0, 10.0, 20.0)  # K off the oil inlet
 MORE_COOLING = (1.25, 1.5, 2.0)  # times a stated conductance
+STREAMS = (10.0, 30.0, 100.0)  # times the flow that wets a bearing, so that the oil carries heat: estimate
+LEAST_STREAM = 0.05  # l/min that a valve can still be set to: estimate
+WARM_INLET = 40.0  # degC, of oil that comes from a cooler: common practice, 40 to 50
+COOLER_MARGIN = 10.0  # K that a cooler leaves between oil and air: common practice, 8 to 15
+TANK_MINUTES = 10.0  # of the flow that the tank holds: common practice, 5 to 10
+# Limits that a bath fails when it is too hot.
+BATH_HEAT = ("temperature", "rings", "flash_point", "film", "interval")
 
 
 @dataclass(frozen=True, slots=True)
@@ -63,6 +71,8 @@ def _edited(case: Case, key: str, value: str | Mapping[str, str] | None) -> Case
             return dataclasses.replace(case, lubricant=_lubricant(*words), analysis=None)  # it was of the old one
         return dataclasses.replace(case, bearing=_bearing(*words))
     table, _, name = key.partition(".")
+    if table == "bearing" and value is not None:
+        return dataclasses.replace(case, bearing=_of_class(case.bearing, name, value))
     number = _DUTY.fullmatch(table)
     read: Any = None if value is None else _read("duty" if number else table, name, value)
     if number:
@@ -89,11 +99,19 @@ def _bearing(*words: tuple[str, str]) -> bearings.Bearing:
     return bearings.with_given(bearings.find(dict(words)["designation"]), **given)
 
 
+def _of_class(bearing: bearings.Bearing, name: str, text: str) -> bearings.Bearing:
+    """Return the same bearing with another clearance class, said by its designation or by its own key."""
+    if name == "designation":
+        named = bearings.find(text)
+        return dataclasses.replace(bearing, designation=named.designation, clearance=named.clearance)
+    return bearings.with_given(bearing, **{name: _read("bearing", name, text)})
+
+
 def possible(case: Case, before: Glances) -> list[Change]:
     """Return the single changes that make sense at a position; `before` is its outcome as it stands."""
-    found = [*_surroundings(case), *_heat(case), *_lubricants(case), *_bearings(case)]
+    found = [*_surroundings(case), *_heat(case), *_lubricants(case), *_classes(case, before), *_bearings(case)]
     found += [*_grease(case, before), *_intervals(case, before)] if case.is_grease else [
-        *_oil(case), *_intervals(case, before)]  # fmt: skip
+        *_oil(case), *_streams(case, before), *_intervals(case, before)]  # fmt: skip
     return [change for change in found if _is_sound(case, change)]
 
 
@@ -104,6 +122,12 @@ def _is_sound(case: Case, change: Change) -> bool:
     except (UnreadableText, InputError):
         return False
     return True
+
+
+def _fails(before: Glances, *names: str) -> bool:
+    """Tell whether one of some limits is near or beyond as the position stands."""
+    rows = [before.outcome.names.index(name) for name in names]
+    return any(before.states[i, 0] in (NEAR_CODE, BEYOND) for i in rows)
 
 
 def _lubricants(case: Case) -> Iterator[Change]:
@@ -193,7 +217,7 @@ def _amount(table: str, text: str) -> Amount:
 def _oil(case: Case) -> Iterator[Change]:
     oil = case.oil
     if oil.level is not None and oil.level != 0 and oil.supply in (None, "bath"):
-        yield Change("set the oil level to the middle of the lowest element at rest", "level", SETTING,
+        yield Change("set the oil level to the middle of the lowest element at rest", "supply", SETTING,
                      (("oil.level", "0 mm"),))  # fmt: skip
     if oil.flow is not None and oil.supply == "circulating":
         for times in FLOWS:
@@ -204,6 +228,27 @@ def _oil(case: Case) -> Iterator[Change]:
             if oil.inlet - less > case.surroundings.ambient:
                 inlet = f"{oil.inlet - less:g} degC"
                 yield Change(f"cool the oil to {inlet} at the inlet", "inlet", REBUILD, (("oil.inlet", inlet),))
+
+
+def _streams(case: Case, before: Glances) -> Iterator[Change]:
+    """Oil that circulates through a cooler in place of a bath that is too hot."""
+    oil, bearing, around = case.oil, case.bearing, case.surroundings
+    if oil.supply not in (None, "bath") or bearing.sealed_sides == 2 or not _fails(before, *BATH_HEAT):
+        return
+    air = max(one for one in (around.ambient, around.ambient_highest, *(around.months or ()),
+                              *(duty.ambient for duty in case.duty)) if one is not None)  # fmt: skip
+    inlet = f"{max(WARM_INLET, math.ceil(air + COOLER_MARGIN)):g} degC"
+    wetting = float(oil_life.guide_flow.plain(outside=bearing.outside, width=bearing.width))
+    for flow in dict.fromkeys(float(f"{max(times * wetting, LEAST_STREAM):.2g}") for times in STREAMS):
+        edits: list[Edit] = [("oil.supply", "circulating"), ("oil.flow", f"{flow:g} {_unit('oil', 'flow')}"),
+                             ("oil.inlet", inlet)]  # fmt: skip
+        edits += [("oil.level", None)] if oil.level is not None else []
+        tank = f"{TANK_MINUTES * flow:.2g} l"
+        edits += [("oil.volume", tank)] if oil.volume is not None else []  # no longer that of the bath
+        yield Change(
+            f"circulate the oil in place of the bath: {flow:g} l/min, {inlet} at the inlet", "supply", REPLACE,
+            tuple(edits), f"takes a pump, a cooler, a tank of about {tank} and a wide, free drain",
+        )  # fmt: skip
 
 
 def _unit(table: str, key: str) -> str:
@@ -267,6 +312,46 @@ def _heat(case: Case) -> Iterator[Change]:
 
 def _shielded(table: str, now: float, less: float, ambient: float) -> Edit | None:
     return (f"{table}.shaft_temperature", f"{max(now - less, ambient):g} degC") if now > ambient else None
+
+
+def _classes(case: Case, before: Glances) -> Iterator[Change]:
+    """The same bearing with the next two larger clearance classes, where fits and warmth take too much of its own."""
+    bearing = case.bearing
+    if not _fails(before, "clearance"):
+        return
+    place = clearance.CLASSES.index(bearing.clearance) + 1
+    for larger in clearance.CLASSES[place : place + 2]:
+        edits = _class_edits(case, larger)
+        is_rare = larger in ("C4", "C5")
+        stock = ", seldom in stock" if is_rare else ""
+        if edits:
+            yield Change(
+                f"same bearing with clearance class {larger} for {bearing.clearance}", "bearing",
+                REPLACE if is_rare else REBUILD, edits,
+                f"order it anew in this class{stock}: it has more play when cold, so mind noise and position",
+            )  # fmt: skip
+
+
+# What names the clearance class in a designation: "C3", or the 3 of "P63", the tolerance class P6 and C3 in one.
+_CLASS = re.compile(r"(?<=P[654])[2-5]|C[2-5N0M]", re.IGNORECASE)
+
+
+def _class_edits(case: Case, larger: str) -> tuple[Edit, ...]:
+    """Return what the case file has to say, none where a designation that names a class cannot name this one."""
+    key: Edit = ("bearing.clearance", larger)
+    stated = next((text for name, text in case.given if name == "bearing.designation"), case.bearing.designation or "")
+    old = bearing_designation.read(stated)
+    if old is None or "clearance" not in old.says:
+        return (key,)
+    wanted = (old.base, {**old.says, "clearance": larger}, old.unread)
+    for found in _CLASS.finditer(stated):
+        word = larger.removeprefix("C") if found[0].isdigit() else larger
+        text = stated[: found.start()] + word + stated[found.end() :]
+        new = bearing_designation.read(text)
+        if new is not None and (new.base, new.says, new.unread) == wanted:
+            is_stated = case.bearing.basis.get("clearance") == "user"
+            return (("bearing.designation", text), *((key,) if is_stated else ()))
+    return ()
 
 
 def _bearings(case: Case) -> Iterator[Change]:

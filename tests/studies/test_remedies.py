@@ -4,11 +4,9 @@ from __future__ import annotations
 
 import itertools
 import random
-import re
-import tomllib
 
 import pytest
-from conftest import BASE, EXAMPLES, with_key
+from conftest import BASE, EXAMPLES, edited, with_key
 
 import lubecheck
 from lubecheck.data import compatibility, lubricants
@@ -19,43 +17,6 @@ from lubecheck.model.reader import load_case, read_case
 from lubecheck.studies import changes
 
 FAILING = ("near", "beyond")
-
-
-def toml(document: dict) -> str:
-    """Return a case as TOML text: the tables of a case hold texts, numbers and flags only."""
-
-    def value(one):
-        return str(one).lower() if isinstance(one, bool) else repr(one) if isinstance(one, int | float) else f'"{one}"'
-
-    lines = [f"{key} = {value(one)}" for key, one in document.items() if not isinstance(one, dict | list)]
-    for key, table in document.items():
-        for part in table if isinstance(table, list) else [table] if isinstance(table, dict) else []:
-            lines.append(f"[[{key}]]" if isinstance(table, list) else f"[{key}]")
-            lines += [f"{name} = {value(one)}" for name, one in part.items()]
-    return "\n".join(lines) + "\n"
-
-
-def edited(text: str, edits) -> str:
-    """Return the text of a case file with edits made, by nothing of the program's."""
-    document = tomllib.loads(text)
-    for key, value in edits:
-        if isinstance(value, dict):
-            document[key] = value
-            continue
-        table, _, name = key.partition(".")
-        number = re.fullmatch(r"duty\[(\d+)\]", table)
-        part = (
-            document["duty"][int(number[1]) - 1]
-            if number
-            else document.setdefault(table, {})
-            if value
-            else document.get(table, {})
-        )
-        if value is None:
-            part.pop(name, None)
-        else:
-            part[name] = value
-    return toml(document)
 
 
 def random_case(chance: random.Random) -> str:
