@@ -23,7 +23,7 @@ def random_case(chance: random.Random) -> str:
     """Return a case in which something may well be wrong."""
     pick = chance.choice
     text = BASE
-    for key in ("dynamic_rating", "static_rating", "mass", "cage"):
+    for key in ("dynamic_rating", "static_rating", "mass"):  # the cage stays: unsaid, it is judged as polyamide too
         text = with_key(text, "bearing", key, None)
     text = with_key(
         text, "bearing", "designation", f'"{pick(["6309", "6205", "NU 310", "22218", "6312-2Z", "30210"])}"'
