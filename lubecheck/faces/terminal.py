@@ -32,20 +32,21 @@ _WIDE = 100  # columns from which sources stand beside the limits
 
 
 def print_result(result: Result, console: Console, system: str = "si", *, losses: bool = False) -> None:
-    """Print a result; its loss account where that is asked for."""
+    """Print a result, what has to be acted on first; its loss account where that is asked for."""
     _heading(result, console, system)
     _limits(result, console, system)
+    _plan(result, console, system)
+    _remedies(result, console)
+    bullets("Notes", (in_system(note, system) for note in result.notes), console)
     _operating(result, console, system)
     _heat(result, console)
     _interval_lines(result, console, system)
     print_damage(result.damage, console, system)
     if losses:
         print_losses(result.losses, console)
-    _plan(result, console, system)
-    _remedies(result, console)
-    bullets("Notes", (in_system(note, system) for note in result.notes), console)
     assumed = (f"{a.name}: {in_system(a.value, system)} ({a.basis})" for a in result.assumed)
     bullets("Not said, so assumed", assumed, console)
+    _sources(result, console)
     bullets("Cautions", result.cautions, console)
 
 
@@ -109,7 +110,11 @@ def _limits(result: Result, console: Console, system: str) -> None:
     if notes:
         console.print(Text("\nWhy", style="bold"))
         console.print(why)
-    if is_wide:
+
+
+def _sources(result: Result, console: Console) -> None:
+    """Print the sources: by their keys where the table shows these, else by the limits."""
+    if console.width >= _WIDE:
         keys = dict.fromkeys(limit.basis for limit in result.limits)
         bullets("Sources", (f"{key}: {cite(key)}" for key in keys), console)
     else:
@@ -225,9 +230,10 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
     if plan.regrease_g is not None:
         strokes = _strokes(plan.regrease_strokes, plan.stroke_g, system)
         parts.append(f"regrease with {figure(plan.regrease_g, 'g', system)}{strokes}{proposed['regrease_amount']}")
-    if plan.interval_h is not None and plan.interval_weeks is not None:
+    is_oil = plan.first_fill_g is None and not plan.is_as_supplied
+    if plan.interval_h is not None and plan.interval_weeks is not None and (is_oil or plan.regrease_g is not None):
         weeks = f"{plan.interval_weeks:.1f}".removesuffix(".0")
-        verb = "every" if plan.regrease_g is not None else "change the oil every"
+        verb = "change the oil every" if is_oil else "every"
         parts.append(
             f"{verb} {weeks} weeks ({number(plan.interval_h)} running hours at {plan.hours_per_day:g} h a day)"
             f"{proposed['interval']}"
