@@ -320,14 +320,13 @@ def _classes(case: Case, before: Glances) -> Iterator[Change]:
     if not _fails(before, "clearance"):
         return
     place = clearance.CLASSES.index(bearing.clearance) + 1
-    for larger in clearance.CLASSES[place : place + 2]:
+    for larger, effort in zip(clearance.CLASSES[place:], (REBUILD, REPLACE), strict=False):
         edits = _class_edits(case, larger)
-        is_rare = larger in ("C4", "C5")
-        stock = ", seldom in stock" if is_rare else ""
+        stock = ", seldom in stock" if larger in ("C4", "C5") else ""
         if edits:
             yield Change(
                 f"same bearing with clearance class {larger} for {bearing.clearance}", "bearing",
-                REPLACE if is_rare else REBUILD, edits,
+                effort, edits,
                 f"order it anew in this class{stock}: it has more play when cold, so mind noise and position",
             )  # fmt: skip
 

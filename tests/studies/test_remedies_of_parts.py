@@ -85,6 +85,8 @@ def test_a_tight_bearing_is_offered_the_next_class_before_the_one_after_it():
     remedies = lubecheck.check(read_case(fitted("m6"))).remedies
     assert [dict(one.edits) for one in remedies[:2]] == [{"bearing.clearance": "C3"}, {"bearing.clearance": "C4"}]
     assert {one.verdict_after for one in remedies} == {"within"}
+    tight = lubecheck.check(read_case(fitted("n6", BARE, designation="6309/C3"))).remedies
+    assert [dict(one.edits)["bearing.designation"] for one in tight[:2]] == ["6309/C4", "6309/C5"]
     assert assert_kept(fitted("m6"), CLASS) >= 2
 
 
