@@ -32,11 +32,6 @@ class Wanted:
     up_to: float | None = None  # degC that it has to bear hot
     down_to: float | None = None  # degC that it has to bear cold
 
-    @property
-    def is_anything(self) -> bool:
-        """Nothing is asked for."""
-        return not self.tests()
-
     def tests(self) -> Mapping[str, Callable[[Lubricant], bool]]:
         """Return a test for each thing asked for, by its name; a limit that nobody stated bears nothing."""
         found: dict[str, Callable[[Lubricant], bool]] = {

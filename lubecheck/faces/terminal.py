@@ -6,6 +6,7 @@ Only prints a finished result. A user's text goes through rich's Text and never 
 from __future__ import annotations
 
 from collections.abc import Iterable
+from typing import Literal
 
 from rich.console import Console
 from rich.padding import Padding
@@ -81,9 +82,9 @@ def _meaning(result: Result) -> str:
 
 def _limits(result: Result, console: Console, system: str) -> None:
     table = Table(box=None, pad_edge=False, padding=(0, 2, 0, 0), title=None)
-    for heading, justify in (("Limit", "left"), ("State", "left"), ("Use", "right"), ("", "left"),
-                             ("Demand", "right"), ("Allowed", "right"), ("", "left")):  # fmt: skip
-        table.add_column(heading, justify=justify, no_wrap=True)  # type: ignore[arg-type]  # rich wants a Literal
+    for heading in ("Limit", "State", "Use", "", "Demand", "Allowed", ""):
+        justify: Literal["left", "right"] = "right" if heading in ("Use", "Demand", "Allowed") else "left"
+        table.add_column(heading, justify=justify, no_wrap=True)
     is_wide = console.width >= _WIDE
     if is_wide:
         table.add_column("Source", no_wrap=True)

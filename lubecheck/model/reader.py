@@ -633,10 +633,3 @@ def read_value(table: str, key: str, text: str) -> Any:
     2.0
     """
     return _value(text, dict(entries(TABLES[table]))[key])
-
-
-def keys() -> Iterator[tuple[str, str, Entry]]:
-    """Return every key that a case may have: table, key, entry."""
-    for table, form in TABLES.items():
-        for key, entry in entries(form):
-            yield table, key, entry

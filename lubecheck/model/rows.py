@@ -301,9 +301,7 @@ def _housing_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, f
         "shaft_conductance": shaft,
         "fin_conductance": fin,
         "oil_conductance": (case.oil.contact or STREAM_CONTACT) * float(stream),
-        "machine_heat": reading.get("[housing] machine_heat", 0.0)
-        if housing.machine_heat is None
-        else housing.machine_heat,
+        "machine_heat": _stated(housing.machine_heat, reading.get("[housing] machine_heat", 0.0)),
         "held_temperature": math.nan,
     }
 

@@ -153,8 +153,8 @@ def _effects(limits: Sequence[LimitAfter]) -> str:
     parts = []
     for limit in limits:
         before, after = limit.use_before, limit.use_after
-        is_moved = limit.state_before != limit.state_after or before is None or after is None
-        if is_moved or abs(after - before) >= 0.005:  # type: ignore[operator]  # both are numbers here
+        is_still = before is not None and after is not None and abs(after - before) < 0.005
+        if limit.state_before != limit.state_after or not is_still:
             shown = ["no end" if use is None else f"{use:.2f}" for use in (before, after)]
             parts.append(f"{limit.name.replace('_', ' ')} {shown[0]} to {shown[1]}")
     return "uses: " + (", ".join(parts) or "no other limit moves")
