@@ -10,7 +10,8 @@ from typing import Any
 from lubecheck.data.cleanliness import CODE_EXPECTED
 from lubecheck.errors import CaseError, Fault, nearest, shown
 from lubecheck.model.cleanliness import numbers_of
-from lubecheck.model.entries import FILTERS, Case, entry_of
+from lubecheck.model.entries import FILTERS, Case
+from lubecheck.model.entry import entry_of
 from lubecheck.model.reader import STANDARD_INPUT, file_text, load_case, parsed, read_table
 
 MOST_POSITIONS = 200  # of one circuit: an engine or a large gearbox has tens; more is a slip

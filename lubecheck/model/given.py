@@ -6,7 +6,8 @@ The found fill is judged like any other, by the same points and limits; here are
 from __future__ import annotations
 
 from lubecheck.model import limits
-from lubecheck.model.entries import Amount, Case
+from lubecheck.model.entries import Case
+from lubecheck.model.entry import Amount
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.rows import fill_found, given_volume, volume_of
 

@@ -8,7 +8,6 @@ the nearest valid name; nothing is guessed and nothing is passed over.
 from __future__ import annotations
 
 import dataclasses
-import datetime
 import math
 import re
 import sys
@@ -23,29 +22,19 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis, analyse
 from lubecheck.errors import CaseError, Fault, InputError, nearest, shown
+from lubecheck.model import conflicts
 from lubecheck.model.cleanliness import contradictions
-from lubecheck.model.entries import (
-    STREAMS,
-    TABLES,
-    Amount,
-    BearingTable,
-    Case,
-    Cleanliness,
-    Duty,
-    Entry,
-    GreasePlan,
-    Housing,
-    LubricantTable,
-    OilPlan,
-    Requirements,
-    Shaft,
-    Surroundings,
-    entries,
-)
+from lubecheck.model.duty_entries import Duty, Shaft
+from lubecheck.model.entries import TABLES, Case, Cleanliness, Requirements
+from lubecheck.model.entry import entries
+from lubecheck.model.part_entries import BearingTable, LubricantTable
+from lubecheck.model.place_entries import Housing, Surroundings
+from lubecheck.model.plan_entries import GreasePlan, OilPlan
 from lubecheck.model.shaft import Problem, duty_faults, faults, opposed_faults
 from lubecheck.model.toml_lines import key_lines
+from lubecheck.model.values import value_of
 from lubecheck.physics import friction
-from lubecheck.units import KINDS, UnreadableText, split_text, to_house
+from lubecheck.units import UnreadableText
 
 STANDARD_INPUT = "-"
 _ANALYSED = ("measured_viscosity", "water", "iso_code")  # keys of [lubricant] that are of the oil in use
@@ -120,7 +109,7 @@ def read_life(text: str) -> float:
     """Return a wanted life in hours from its text. Raises CaseError where it is none."""
     entry = dict(entries(Requirements))["life"]
     try:
-        return float(_value(text, entry))
+        return float(value_of(text, entry))
     except UnreadableText as refused:
         raise CaseError([Fault("life", shown(text), refused.expected, nearest=refused.near)]) from None
 
@@ -187,20 +176,18 @@ class _Reading:
         shaft = self._table(document, "shaft", Shaft) or Shaft()
         opposed = self._opposed(shaft, bearing)
         before = len(self.faults)
-        self._shaft(faults(shaft, duty, surroundings))
+        self._problems(faults(shaft, duty, surroundings))
         if bearing is not None and (opposed is not None or shaft.opposed is None):
-            self._shaft(opposed_faults(shaft, duty, bearing, opposed))
+            self._problems(opposed_faults(shaft, duty, bearing, opposed))
         is_whole = len(self.faults) == before and (opposed is not None or shaft.opposed is None)
         housing = self._table(document, "housing", Housing) or Housing()
         grease = self._table(document, "grease", GreasePlan) or GreasePlan()
         oil = self._table(document, "oil", OilPlan) or OilPlan()
         cleanliness = self._table(document, "cleanliness", Cleanliness) or Cleanliness()
         limits = self._table(document, "limits", Requirements) or Requirements()
-        self._housing_conflicts(housing)
-        self._stream_needs(oil)
-        self._beside_conductance(housing, duty, surroundings)
-        self._shaft_heat(housing, duty)
-        self._season_conflicts(surroundings)
+        self._problems(conflicts.of_place(housing, duty, surroundings))
+        self._problems(conflicts.of_stream(oil))
+        self._coolant(housing)
         if grease.given is not None and grease.given.kind == "strokes" and grease.stroke is None:
             self.fault(("grease", "stroke"), "nothing", 'a weighed stroke such as "1.2 g", as strokes were given',
                        plain=True)  # fmt: skip
@@ -211,9 +198,9 @@ class _Reading:
                     (unused,), f"[{unused}]", f"no [{unused}] table: the lubricant is {lubricant.kind}", plain=True
                 )
             if surroundings is not None and isinstance(cleanliness.setting, str):
-                self._setting_fits(cleanliness.setting, lubricant, oil)
+                self._problems(conflicts.of_setting(cleanliness.setting, lubricant, oil))
             if lubricant.kind == "oil":
-                self._stream(oil)
+                self._problems(conflicts.of_still_oil(oil))
             if analysis is not None and analysis.code is not None and oil.supply == "mist":
                 self.fault(
                     ("lubricant", "iso_code"), str(analysis.code), "no such key for mist: ISO 281 has no setting"
@@ -227,11 +214,11 @@ class _Reading:
             surroundings=surroundings, shaft=shaft, opposed=opposed, housing=housing, grease=grease, oil=oil,
             cleanliness=cleanliness, limits=limits, analysis=analysis, given=tuple(self.given),
         )  # fmt: skip
-        self._shaft(duty_faults(case))
+        self._problems(duty_faults(case))
         return case
 
-    def _shaft(self, problems: Iterator[Problem]) -> None:
-        """Note what is wrong with the loads, once each: keys of [shaft] hold for all duty points."""
+    def _problems(self, problems: Iterator[Problem]) -> None:
+        """Note what is wrong between keys, once each: keys of [shaft] hold for all duty points."""
         for path, given, expected in dict.fromkeys(problems):
             self.fault(path, given, expected, plain=True)
 
@@ -301,7 +288,7 @@ class _Reading:
             return
         for point in points:
             try:
-                total += float(_value(point["share"], entry))
+                total += float(value_of(point["share"], entry))
             except UnreadableText:
                 return  # told already, where the key was read
         if not math.isclose(total, 1.0, abs_tol=1e-3):
@@ -320,7 +307,7 @@ class _Reading:
                 continue
             self.given.append((_dotted(here), str(value)))
             try:
-                read[key] = _value(value, known[key])
+                read[key] = value_of(value, known[key])
             except UnreadableText as refused:
                 self.fault(here, value, refused.expected, refused.near)
                 is_whole = is_whole and not known[key].is_need
@@ -436,111 +423,13 @@ class _Reading:
                 )
             )
 
-    def _stream_needs(self, oil: OilPlan) -> None:
-        """Circulating oil cools by its flow and its inlet temperature: neither can be guessed."""
-        if oil.supply == "circulating":
-            for key, entry in entries(OilPlan):
-                if key in ("flow", "inlet") and getattr(oil, key) is None:
-                    self.fault(("oil", key), "nothing", f"{entry.expected}, since the oil circulates", plain=True)
-
-    def _housing_conflicts(self, housing: Housing) -> None:
-        if housing.conductance is not None:
-            for key in ("kind", "area"):
-                if getattr(housing, key) is not None:
-                    self.fault(
-                        ("housing", key),
-                        getattr(housing, key),
-                        "no such key beside conductance, which is all heat paths together",
-                    )
-        if housing.kind is not None and housing.area is not None:
-            self.fault(("housing", "kind"), housing.kind, "either kind or area: both say how large the housing is")
-        if housing.machine_heat is not None and housing.shaft_temperature is not None:
-            self.fault(
-                ("housing", "machine_heat"),
-                f"{housing.machine_heat:g} W",
-                "either machine_heat or shaft_temperature: both say what the machine sends",
-                plain=True,
-            )
-
-        self._coolant(housing)
-        if housing.frame_conductance is not None and housing.frame_temperature is None:
-            self.fault(("housing", "frame_temperature"), "nothing", "the frame's temperature", plain=True)
-
-    def _beside_conductance(self, housing: Housing, duty: Sequence[Duty], around: Surroundings | None) -> None:
-        """Refuse a draught beside a conductance, in which the air is already."""
-        if housing.conductance is None:
-            return
-        places: list[tuple[tuple[str | int, ...], float | None]] = [
-            (("duty", i, "draught"), point.draught) for i, point in enumerate(duty)
-        ]
-        if around is not None:
-            places.append((("surroundings", "draught"), around.draught))
-        for path, draught in places:
-            if draught is not None:
-                self.fault(path, f"{draught:g} m/s",
-                           "no such key beside [housing] conductance, which is all heat paths together",
-                           plain=True)  # fmt: skip
-
-    def _shaft_heat(self, housing: Housing, duty: Sequence[Duty]) -> None:
-        """Refuse the temperature of the shaft in a state beside the heat that the machine sends."""
-        for i, point in enumerate(duty):
-            if housing.machine_heat is not None and point.shaft_temperature is not None:
-                self.fault(("duty", i, "shaft_temperature"), f"{point.shaft_temperature:g} degC",
-                           "either this or [housing] machine_heat: both say what the machine sends",
-                           plain=True)  # fmt: skip
-
-    def _stream(self, oil: OilPlan) -> None:
-        """Refuse the facts of a stream of oil where no oil circulates."""
-        for key, unit in (("flow", "l/min"), ("inlet", "degC"), ("contact", "of its warming")):
-            value = getattr(oil, key)
-            if value is not None and oil.supply not in STREAMS:
-                supply = "no supply" if oil.supply is None else f'supply "{oil.supply}"'
-                expected = "no such key, or a [oil] supply whose oil flows through the bearing: circulating or jet"
-                self.fault(("oil", key), f"{value:g} {unit} beside {supply}", expected, plain=True)
-
     def _coolant(self, housing: Housing) -> None:
-        """Refuse a cooling jacket that is not whole, or whose fluid is none."""
-        keys = ("coolant", "coolant_flow", "coolant_inlet")
-        stated = [key for key in keys if getattr(housing, key) is not None]
-        for key in keys:
-            if key not in stated and (stated or housing.jacket_area is not None):
-                self.fault(
-                    ("housing", key), "nothing", "a jacket's coolant, coolant_flow and coolant_inlet", plain=True
-                )
-        if len(stated) == len(keys):
+        """Refuse a cooling jacket whose fluid is none."""
+        if all(getattr(housing, key) is not None for key in conflicts.JACKET):
             try:
                 coolants.at(str(housing.coolant), float(housing.coolant_inlet or 0.0))
             except InputError as refused:
                 self._carry(("housing",), refused)
-
-    def _season_conflicts(self, around: Surroundings | None) -> None:
-        if around is None:
-            return
-        ends = (around.ambient_lowest, around.ambient_highest)
-        if around.months is not None and ends != (None, None):
-            self.fault(("surroundings", "months"), "months and ambient ends", "one of the two", plain=True)
-        low, high = ends
-        if (low is None) != (high is None):
-            missing = "ambient_lowest" if low is None else "ambient_highest"
-            self.fault(("surroundings", missing), "nothing", "both ambient_lowest and ambient_highest, or neither",
-                       plain=True)  # fmt: skip
-        elif low is not None and high is not None and not low <= around.ambient <= high:
-            self.fault(("surroundings", "ambient"), f"{around.ambient:g} degC",
-                       f"the mean of the year, between {low:g} and {high:g} degC", plain=True)  # fmt: skip
-
-    def _setting_fits(self, setting: str, lubricant: Lubricant, oil: OilPlan) -> None:
-        supply = "grease" if lubricant.kind == "grease" else (oil.supply or "bath")
-        circuit, _, _code = setting.partition(" -/")
-        is_oil_setting = " -/" in setting
-        # The codes of a bath hold for circulating oil that is filtered off-line as well (ISO 281, Annex A).
-        if is_oil_setting and circuit != supply and (circuit, supply) != ("bath", "circulating"):
-            self.fault(
-                ("cleanliness", "setting"),
-                setting,
-                f"a setting without an oil code, or one for {supply}"
-                if supply != "grease"
-                else "a setting for grease, without an oil code",
-            )
 
 
 def _dotted(path: tuple[str | int, ...]) -> str:
@@ -551,79 +440,6 @@ def _dotted(path: tuple[str | int, ...]) -> str:
     return text
 
 
-_STROKES = re.compile(r"([0-9]{1,4})\s*strokes?")
-
-
-def _value(value: Any, entry: Entry) -> Any:
-    """Read one value by its entry; raises UnreadableText where it is not what the entry takes."""
-    if entry.form == "date":
-        return _date(value, entry)
-    if entry.form == "months":
-        if not isinstance(value, list) or len(value) != 12:
-            raise UnreadableText(entry.expected)
-        one = dataclasses.replace(entry, form="")
-        return tuple(_value(item, one) for item in value)
-    if entry.form == "strokes" and isinstance(value, str) and (count := _STROKES.fullmatch(value.strip())):
-        return Amount(float(count[1]), "strokes", "strokes")
-    if not entry.kinds:
-        return _word(value, entry)
-    if isinstance(value, str) and value in entry.words:
-        return value
-    amount = _amount(value, entry)
-    highest = 1.0 if amount.kind == "share" and len(entry.kinds) > 1 else entry.high
-    if not entry.low <= amount.value <= highest or (entry.low == 0 and len(entry.kinds) > 1 and amount.value == 0):
-        raise UnreadableText(entry.expected)
-    return amount if len(entry.kinds) > 1 or (entry.kinds == ("time",) and entry.role == "decision") else amount.value
-
-
-def _date(value: Any, entry: Entry) -> str:
-    """Read a date, as a text or as TOML's own."""
-    try:
-        day = datetime.date.fromisoformat(value) if isinstance(value, str) and len(value) == 10 else value
-    except ValueError:
-        raise UnreadableText(entry.expected) from None
-    if not isinstance(day, datetime.date) or isinstance(day, datetime.datetime) or not 1990 <= day.year <= 2200:
-        raise UnreadableText(entry.expected)
-    return day.isoformat()
-
-
-def _word(value: Any, entry: Entry) -> Any:
-    if entry.words:
-        folded = str(value) if isinstance(value, int) and not isinstance(value, bool) else value
-        if isinstance(folded, str):
-            for word in entry.words:
-                if folded.casefold() == word.casefold():
-                    return word
-        raise UnreadableText(entry.expected, nearest(folded, entry.words) if isinstance(folded, str) else None)
-    if entry.meaning.endswith("true or false"):
-        if isinstance(value, bool):
-            return value
-        raise UnreadableText("true or false")
-    if isinstance(value, str) and value.strip() and len(value) <= 100:
-        return value
-    raise UnreadableText(f"a text such as {entry.example}" if entry.example else "a text")
-
-
-def _amount(value: Any, entry: Entry) -> Amount:
-    """Read a quantity of the first kind that fits."""
-    if isinstance(value, bool) or not isinstance(value, (str, int, float)):
-        raise UnreadableText(entry.expected)
-    if not isinstance(value, str):
-        bare = next((name for name in entry.kinds if KINDS[name].is_bare), None)
-        if bare is None or not math.isfinite(value):
-            raise UnreadableText(entry.expected)
-        return Amount(float(value), bare, "1")
-    refusals: list[UnreadableText] = []
-    for name in entry.kinds:
-        try:
-            number, word = split_text(value, KINDS[name])
-            return Amount(to_house(number, word, KINDS[name]), name, word)
-        except UnreadableText as refused:
-            refusals.append(refused)
-    near = next((refused.near for refused in refusals if refused.near), None)
-    raise UnreadableText(entry.expected, near, refusals[0].hint)
-
-
 def read_value(table: str, key: str, text: str) -> Any:
     """Read one value of a case from its text.
 
@@ -632,4 +448,4 @@ def read_value(table: str, key: str, text: str) -> Any:
     >>> read_value("surroundings", "draught", "2 m/s")
     2.0
     """
-    return _value(text, dict(entries(TABLES[table]))[key])
+    return value_of(text, dict(entries(TABLES[table]))[key])

@@ -10,7 +10,11 @@ from lubecheck.data import coolants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
 from lubecheck.model.assumptions import HOUSING_AREA, PROPOSED_HOUSING_FILL, SMALLEST_AREA
-from lubecheck.model.entries import Amount, Case, Duty, GreasePlan, Housing
+from lubecheck.model.duty_entries import Duty
+from lubecheck.model.entries import Case
+from lubecheck.model.entry import Amount
+from lubecheck.model.place_entries import Housing
+from lubecheck.model.plan_entries import GreasePlan
 from lubecheck.model.points import BEYOND_SETTINGS, FACTORS
 from lubecheck.model.shaft import acceleration_of, loads_of
 from lubecheck.physics import (

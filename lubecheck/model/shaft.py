@@ -15,7 +15,10 @@ import numpy as np
 
 from lubecheck.data.bearings import Bearing
 from lubecheck.model.assumptions import ORDINARY_RUN_UP, SHORTEST_RUN_UP
-from lubecheck.model.entries import Amount, Case, Duty, Shaft, ShaftForces, Surroundings, entries
+from lubecheck.model.duty_entries import Duty, Shaft, ShaftForces
+from lubecheck.model.entries import Case
+from lubecheck.model.entry import Amount, entries
+from lubecheck.model.place_entries import Surroundings
 from lubecheck.physics import loads, statics
 from lubecheck.units import GRAVITY, HOUR_S
 

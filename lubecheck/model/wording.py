@@ -17,11 +17,13 @@ from lubecheck.model import given as after
 from lubecheck.model import limits, oil_words
 from lubecheck.model.amounts import CARTRIDGE_G
 from lubecheck.model.assumptions import FACTS, PROPOSED_HOUSING_FILL, Fact
-from lubecheck.model.entries import BearingTable, Case, entries
+from lubecheck.model.entries import Case
+from lubecheck.model.entry import entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
 from lubecheck.model.interval_lines import interval_note, percentile
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import FLASH_MARGIN, parts_rows, takes_loads
+from lubecheck.model.part_entries import BearingTable
 from lubecheck.model.points import BEYOND_SETTINGS
 from lubecheck.model.result import Assumed
 from lubecheck.model.rows import DEFAULT_KAPPA, DEFAULT_LIFE, DEFAULT_RELIABILITY, LIMIT_ORIGINS, RULE_DAYS, seasons

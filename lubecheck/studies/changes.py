@@ -17,7 +17,8 @@ from typing import Any
 from lubecheck.data import bearing_designation, bearings, compatibility, lubricants
 from lubecheck.data.bearing_series import of_family
 from lubecheck.errors import InputError
-from lubecheck.model.entries import TABLES, Amount, Case, entries
+from lubecheck.model.entries import TABLES, Case
+from lubecheck.model.entry import Amount, entries
 from lubecheck.model.glance import Glances
 from lubecheck.model.limits import BEYOND, NEAR_CODE
 from lubecheck.model.reader import read_value

@@ -13,7 +13,8 @@ from conftest import BASE, EXAMPLES, with_key
 
 import lubecheck
 from lubecheck.faces.terminal import plan_parts
-from lubecheck.model.entries import TABLES, entries
+from lubecheck.model.entries import TABLES
+from lubecheck.model.entry import entries
 from lubecheck.model.reader import read_case
 from lubecheck.model.result import Figures, Grease, Life, Operating
 from lubecheck.sources import SOURCES, cite

@@ -13,7 +13,8 @@ from hypothesis import strategies as st
 
 import lubecheck
 from lubecheck.faces.record import to_json
-from lubecheck.model.entries import TABLES, entries
+from lubecheck.model.entries import TABLES
+from lubecheck.model.entry import entries
 from lubecheck.model.reader import read_case
 from lubecheck.units import KINDS
 

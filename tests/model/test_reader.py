@@ -9,7 +9,8 @@ import pytest
 from conftest import BASE, EXAMPLES, with_key
 
 from lubecheck.errors import CaseError
-from lubecheck.model.entries import TABLES, entries
+from lubecheck.model.entries import TABLES
+from lubecheck.model.entry import entries
 from lubecheck.model.reader import load_case, read_case
 
 
