@@ -110,6 +110,7 @@ KINDS: Mapping[str, Kind] = {
         _kind("heat transfer coefficient", "W/(m^2*K)", {"W/m^2/K": 1}),
         _kind("conductivity", "W/(m*K)", {"W/m/K": 1}),
         _kind("irradiance", "W/m^2", {"kW/m^2": 1000}),
+        _kind("thermal capacity", "J/K", {"J/delta_degC": 1, "kJ/K": 1000}),
         _kind("heat capacity", "J/(kg*K)", {"J/kg/K": 1, "kJ/(kg*K)": 1000, "kJ/kg/K": 1000}),
         _kind(
             "time",
@@ -317,6 +318,7 @@ WPerM2K = Annotated[Array, Unit("heat transfer coefficient")]
 WPerM2 = Annotated[Array, Unit("irradiance")]
 WPerMK = Annotated[Array, Unit("conductivity")]
 JPerKgK = Annotated[Array, Unit("heat capacity")]
+JPerK = Annotated[Array, Unit("thermal capacity")]
 Hour = Annotated[Array, Unit("time")]
 KgPerM3 = Annotated[Array, Unit("density")]
 PerKelvin = Annotated[Array, Unit("thermal expansion")]

@@ -84,15 +84,22 @@ def check(
     losses: Annotated[
         bool, typer.Option("--losses", help="Print the loss account of the fatigue life too (JSON always has it).")
     ] = False,
+    warmup: Annotated[
+        bool, typer.Option("--warmup", help="Follow starts, regreasing and a cold start too, and judge their peaks.")
+    ] = False,
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
     from lubecheck.model.reader import load_case
     from lubecheck.studies.remedies import check as judge
 
-    result = judge(
-        load_case(case, own=own_lubricants(lubricants)), air_properties=air.exact if exact_fluids else air.properties
-    )
+    read = load_case(case, own=own_lubricants(lubricants))
+    air_properties = air.exact if exact_fluids else air.properties
+    result = judge(read, air_properties=air_properties)
+    if warmup:
+        from lubecheck.studies.warmup import judged
+
+        result = judged(read, result, air_properties=air_properties)
     if json:
         from lubecheck.faces.record import to_json
 

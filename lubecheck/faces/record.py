@@ -11,7 +11,7 @@ import json
 import math
 from typing import Any
 
-from lubecheck.model.result import Figures, Result
+from lubecheck.model.result import Figures, Result, WarmUp
 
 SCHEMA = "lubecheck/check/1"
 
@@ -58,6 +58,7 @@ def of_result(result: Result) -> dict[str, Any]:
         "losses": dataclasses.asdict(result.losses),
         "plan": dataclasses.asdict(result.plan),
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
+        "warm_up": warm_up(result.warm_up),
         "notes": list(result.notes),
         "cautions": list(result.cautions),
         "inputs": {
@@ -66,6 +67,30 @@ def of_result(result: Result) -> dict[str, Any]:
             "given": dict(result.given),
             "assumed": [dataclasses.asdict(item) for item in result.assumed],
         },
+    }
+
+
+def warm_up(found: WarmUp | None) -> dict[str, Any] | None:
+    """Return a warm-up as it stands in the record; None where it was not asked for."""
+    if found is None:
+        return None
+    return {
+        "courses": [
+            {
+                "name": course.name,
+                "meaning": course.meaning,
+                "figures": figures(course.figures),
+                "curve": {
+                    "time": {"values": list(course.time_h), "unit": "h"},
+                    "sensor": {"values": list(course.sensor), "unit": "degC"},
+                    "bearing": {"values": list(course.bearing), "unit": "degC"},
+                },
+                "crossings": [dataclasses.asdict(crossing) for crossing in course.crossings],
+            }
+            for course in found.courses
+        ],
+        "cold_start": figures(found.cold),
+        "notes": list(found.notes),
     }
 
 

@@ -42,6 +42,10 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     _operating(result, console, system)
     _heat(result, console)
     _interval_lines(result, console, system)
+    if result.warm_up is not None:
+        from lubecheck.faces.warmup import print_warm_up  # only where it is asked for
+
+        print_warm_up(result.warm_up, console, system)
     print_damage(result.damage, console, system)
     if losses:
         print_losses(result.losses, console)

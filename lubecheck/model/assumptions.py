@@ -58,7 +58,7 @@ class Fact:
         return f"[[duty]] {self.key}" if self.table == "duty" else f"[{self.table}] {self.key}"
 
 
-THERMAL = ("film", "temperature", "interval", "fatigue_life")
+THERMAL = ("film", "temperature", "set_point", "interval", "fatigue_life")
 
 
 def _missing(table: str, key: str, *, grease: bool | None = None) -> Callable[[Case], bool]:

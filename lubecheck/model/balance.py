@@ -80,6 +80,17 @@ class Heat:
 
 
 @dataclass(frozen=True, slots=True)
+class Flows:
+    """What each node of a position that is not in balance takes up, W."""
+
+    inner: Array
+    lubricant: Array
+    outer: Array
+    torque: Array  # N mm, of all friction
+    housing: Array  # W/K, of the housing to the ambient
+
+
+@dataclass(frozen=True, slots=True)
 class Balance:
     """What does not depend on temperature, worked out once for every row."""
 
@@ -160,6 +171,37 @@ class Balance:
             heat_out=heat_out,
             housing=housing,
             radiation=radiation,
+        )
+
+    def flows(self, inner: Array, lubricant: Array, outer: Array, warmth: Array, fresh: Array) -> Flows:
+        """Evaluate what each node takes up where it is not in balance: the same network and torques as `at`.
+
+        inner, lubricant, outer: rises above the floor
+        warmth: how far the machine has come from the ambient to the temperatures and watts stated of it, 0 to 1
+        fresh: torque of grease that has not found its place yet, were it at 25 degC; it softens as grease does, since
+            the whole of it is sheared and not its base oil alone
+        """
+        housing, _ = self._housing(self.floor + outer)
+        temperature = self.floor + lubricant
+        _, viscous, mixed, churned = self._torques(temperature)
+        torque = viscous + self.load_torque + mixed + self.seal_torque + churned
+        torque += fresh * churning.softening.plain(temperature)
+
+        def over(stated: Array) -> Array:
+            """What a machine's own temperature is over the floor on its way."""
+            return self.ambient_over + warmth * (stated - self.ambient_over)
+
+        to_inner, to_outer = self.ring * (lubricant - inner), self.ring * (lubricant - outer)
+        shaft = self.machine_shaft * (inner - over(self.shaft_over)) + self.free_shaft * (inner - self.ambient_over)
+        house = housing * (outer - self.ambient_over) + self.frame * (outer - over(self.frame_over))
+        house += self.coolant * (outer - self.coolant_over) - self.solar_heat
+        oil = self.oil * (lubricant - over(self.oil_over))
+        return Flows(
+            inner=to_inner - shaft + warmth * self.machine_heat,
+            lubricant=self.watt_a_torque * torque - to_inner - to_outer - oil,
+            outer=to_outer - house,
+            torque=torque,
+            housing=housing,
         )
 
     def guess(self) -> Array:

@@ -34,6 +34,7 @@ LIMITS: Mapping[str, tuple[str, str]] = {
     "film": ("1", "iso-281:9.3.3.1"),
     "temperature": ("degC", "common-practice"),
     "rings": ("degC", "din-623"),
+    "set_point": ("degC", "user"),
     "flash_point": ("degC", "common-practice"),
     "clearance": ("mm", "iso-5753"),
     "cold_start": ("degC", "user"),
@@ -80,15 +81,8 @@ class Variants:
         return use
 
     def band(self, of_positions: Array) -> Triple:
-        """A figure's value and its band: the uncertain inputs' effects, added as the root of the sum of squares."""
-        value = of_positions[0]
-        change = of_positions[list(self.inputs)].reshape(-1, 2) - value
-        up = np.maximum(change.max(axis=1, initial=0.0), 0.0)
-        down = np.minimum(change.min(axis=1, initial=0.0), 0.0)
-        low = value - np.sqrt((down**2).sum())
-        if (of_positions >= 0).all():  # a figure that has no other side stays on its own
-            low = np.maximum(low, 0.0)
-        return float(value), float(low), float(value + np.sqrt((up**2).sum()))
+        """A figure's value and its band."""
+        return band(of_positions, self.inputs)
 
     def row_band(self, of_rows: Array, row: int) -> Triple:
         """The same for a figure of one row."""
@@ -101,7 +95,7 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
     Every limit comes with its use, the demand over what is allowed; the verdict is the worst state, and what could not
     be judged is never called good.
     """
-    variants = _variants(case, air_properties)
+    variants = variants_of(case, air_properties)
     outcome = variants.outcome
     judged = tuple(_limit(variants, name) for name, limit in outcome.judged.items() if limit.applies[0])
     verdict = max((limit.state for limit in judged), key=STATES.index)
@@ -113,7 +107,7 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
     return Result(
         title=case.title,
         verdict=verdict,
-        governing=_governing(judged, verdict),
+        governing=governing(judged, verdict),
         limits=judged,
         operating=operating[hottest],
         duty=_hottest_seasons(operating, len(case.duty)),
@@ -141,6 +135,21 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
     )
 
 
+def band(figure: Array, ends: Sequence[int]) -> Triple:
+    """Return a figure's value, its first, and its band: the uncertain inputs' effects, as the root of their squares.
+
+    ends: where the figure stands with an input at its low and at its high end, in turn
+    """
+    value = figure[0]
+    change = figure[list(ends)].reshape(-1, 2) - value
+    up = np.maximum(change.max(axis=1, initial=0.0), 0.0)
+    down = np.minimum(change.min(axis=1, initial=0.0), 0.0)
+    low = value - np.sqrt((down**2).sum())
+    if (figure >= 0).all():  # a figure that has no other side stays on its own
+        low = np.maximum(low, 0.0)
+    return float(value), float(low), float(value + np.sqrt((up**2).sum()))
+
+
 def readings(case: Case) -> tuple[tuple[Fact, ...], list[dict[str, Any]]]:
     """Return the facts a case leaves out, and its readings: usual, worst, and each fact alone at its worst."""
     facts = tuple(fact for fact in missing(case))
@@ -150,7 +159,8 @@ def readings(case: Case) -> tuple[tuple[Fact, ...], list[dict[str, Any]]]:
     return moving, [usual, worst, *({**usual, fact.name: fact.worst} for fact in moving)]
 
 
-def _variants(case: Case, air_properties: Air) -> Variants:
+def variants_of(case: Case, air_properties: Air = air.properties) -> Variants:
+    """Judge a case at every reading of what it leaves out and at both ends of every uncertain input."""
     moving, said = readings(case)
     usual = from_rows(rows_of(case, said[0]))
     parts: list[Points] = [usual, *(from_rows(rows_of(case, reading)) for reading in said[1:])]
@@ -197,8 +207,8 @@ def _lost_ends(variants: Variants, uses: Array) -> list[str]:
     return [name for i, name in enumerate(("low", "high")) if not ends[:, i].all()]
 
 
-def _governing(judged: Sequence[Limit], verdict: str) -> str:
-    """Of the limits that are in the state of the verdict the one with the greatest use; the first of the unknown."""
+def governing(judged: Sequence[Limit], verdict: str) -> str:
+    """Return the limit with the greatest use of those in the state of the verdict; of the unknown the first."""
     inside = [limit for limit in judged if limit.state == verdict]
     if verdict == STATES[UNKNOWN]:
         return inside[0].name

@@ -68,6 +68,15 @@ class Requirements:
     highest_temperature: float | None = entry_of(
         "requirement", "temperature", 20, 350, example='"95 degC"', meaning="highest bearing temperature"
     )
+    alarm: float | None = entry_of(
+        "requirement", "temperature", 20, 350, example='"90 degC"', meaning="alarm set-point of the housing's sensor"
+    )
+    trip: float | None = entry_of(
+        "requirement", "temperature", 20, 350, example='"100 degC"', meaning="trip set-point of the housing's sensor"
+    )
+    start_torque: float | None = entry_of(
+        "requirement", "torque", 0.1, 1e9, example='"8 N*m"', meaning="torque that the drive has for this bearing"
+    )
     least_viscosity_ratio: float | None = entry_of(
         "requirement", "number", 0.1, 10, example="1.0", meaning="least viscosity ratio kappa"
     )

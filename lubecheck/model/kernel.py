@@ -81,6 +81,7 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
             "film": limits.reduce(p, limits.film(p, kappa)),
             "temperature": limits.reduce(p, limits.temperature(p, state)),
             "rings": limits.reduce(p, limits.ring_temperature(p, state)),
+            "set_point": limits.reduce(p, limits.set_point(p, state)),
             "flash_point": limits.reduce(p, limits.flash_point(p, state)),
             "clearance": limits.reduce(p, limits.internal_clearance(p, state)),
             "cold_start": limits.reduce(p, limits.cold_start(p)),

@@ -97,6 +97,12 @@ def temperature(points: Points, state: Equilibrium) -> Use:
     return Use(state.temperature, points.highest, use, np.ones(len(points), dtype=bool))
 
 
+def set_point(points: Points, state: Equilibrium) -> Use:
+    """Rise of the outer ring, where the sensor is, over the rise to the lower of the alarm and the trip set-point."""
+    use = _rise_over(points, state, state.outer, points.set_point)
+    return Use(state.outer, points.set_point, use, ~np.isnan(points.set_point))
+
+
 def cold_start(points: Points) -> Use:
     """Depth below 20 degC over the depth that the lubricant may be used at.
 

@@ -68,6 +68,9 @@ class Housing:
     area: float | None = entry_of(
         "fact", "area", 100, 1e8, meaning="outer area that gives off heat", example='"0.12 m^2"'
     )
+    mass: float | None = entry_of(
+        "fact", "mass", 10, 1e8, meaning="mass of the housing, which sets how fast it warms", example='"14 kg"'
+    )
     conductance: float | None = entry_of(
         "fact",
         "conductance",

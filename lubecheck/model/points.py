@@ -121,6 +121,7 @@ class Points:
     reliability: Array
     least_kappa: Array
     static_safety: Array
+    set_point: Array  # degC, of the housing's sensor; NaN where none is stated
     ceiling: Array  # running hours of the calendar ceiling
     # factors of uncertain inputs, 1 nominal
     cooling_factor: Array

@@ -323,6 +323,63 @@ class LossAccount:
 
 
 @dataclass(frozen=True)
+class CourseFigures(Figures):
+    """What is to be read off a course of temperatures; the sensor is one on the housing, at the outer ring."""
+
+    start = Declared("degC", "temperature that a sensor on the housing shows at the start")
+    peak = Declared("degC", "the most that it shows")
+    rise = Declared("delta_degC", "what that is over the start")
+    time_of_peak = Declared("h", "when that is")
+    end = Declared("degC", "what it shows once nothing moves any more")
+    time_to_steady = Declared("h", "from when on it stays within 1 K of that")
+    bearing_peak = Declared("degC", "the most that bearing and lubricant come to")
+    start_torque = Declared("N*mm", "friction torque at running speed at the start")
+
+
+@dataclass(frozen=True, slots=True)
+class Crossing:
+    """A set-point and whether a course passes it."""
+
+    name: str  # "alarm" or "trip"
+    set_point: float  # degC
+    state: str
+    at_h: float | None  # when it is passed at the usual reading of all inputs; None: not
+
+
+@dataclass(frozen=True)
+class Course:
+    """One course of temperatures, from a start or from a regreasing until nothing moves."""
+
+    name: str
+    meaning: str
+    figures: CourseFigures
+    time_h: tuple[float, ...]
+    sensor: tuple[float, ...]  # degC, at the times
+    bearing: tuple[float, ...]  # degC, of bearing and lubricant
+    crossings: tuple[Crossing, ...]
+
+
+@dataclass(frozen=True)
+class ColdTorque(Figures):
+    """Torque of the bearing at a start in the cold, against what the drive has for it."""
+
+    temperature = Declared("degC", "temperature of the start, the coldest that is stated")
+    viscosity = Declared("mm^2/s", "kinematic viscosity of the (base) oil there")
+    running = Declared("N*mm", "friction torque at running speed before anything has warmed")
+    breakaway = Declared("N*mm", "torque that makes grease at rest yield; none for oil")
+    drive = Declared("N*mm", "what the drive has for this bearing, as stated")
+
+
+@dataclass(frozen=True)
+class WarmUp:
+    """What happens before the position is in balance."""
+
+    courses: tuple[Course, ...]
+    cold: ColdTorque | None  # None where no coldest temperature is stated
+    notes: tuple[str, ...]
+
+
+@dataclass(frozen=True)
 class Result:
     """The verdict on one bearing position, with all that it rests on."""
 
@@ -353,6 +410,7 @@ class Result:
     amounts: Amounts | None = None
     interval_lines: tuple[IntervalLine, ...] = ()
     interval_spread: str = ""  # how far the lines lie apart, in words
+    warm_up: WarmUp | None = None  # where it was asked for
 
     def limit(self, name: str) -> Limit:
         """Return a limit by its name.

@@ -359,6 +359,7 @@ def _requirement_columns(case: Case, reading: Mapping[str, Any], family: Family)
         "life_target": limits.life or DEFAULT_LIFE,
         "reliability": limits.reliability or DEFAULT_RELIABILITY,
         "least_kappa": limits.least_viscosity_ratio or DEFAULT_KAPPA,
+        "set_point": min((point for point in (limits.alarm, limits.trip) if point is not None), default=math.nan),
         "static_safety": limits.static_safety or family.static_safety[service],
         "hours_per_day": hours,
         "grease_failed": _grease_failed(case),

@@ -215,6 +215,12 @@ def _rings(case: Case, outcome: Outcome, row: int) -> str:
     return join(limit, f"the {hotter} one is hotter by {abs(state.excess[row]):.1f} K", _duty(case, row))
 
 
+def _set_point(case: Case, outcome: Outcome, row: int) -> str:
+    if not outcome.state.is_found[row]:
+        return _not_found(outcome, row)
+    return join("steady reading of a sensor on the housing; check --warmup adds the peaks on the way", _duty(case, row))
+
+
 def _flash(case: Case, outcome: Outcome, row: int) -> str:
     return f"the oil's flash point of {outcome.points.flash_point[row]:.0f} degC less {FLASH_MARGIN:.0f} K"
 
@@ -359,6 +365,7 @@ _NOTES = {
     "temperature": _temperature,
     "cold_start": _cold,
     "rings": _rings,
+    "set_point": _set_point,
     "flash_point": _flash,
     "clearance": _clearance,
     "fill": _fill,

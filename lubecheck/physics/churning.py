@@ -24,7 +24,10 @@ PARAMETERS: Mapping[str, Factor] = {
     "exponent": Factor(0.5, 0.4, 0.6, "palacios", "of the power-law part"),
     "softening": Factor(0.01, 0.005, 0.015, "palacios", "1/K, by which yield stress and consistency fall"),
     "most churning": Factor(4.0, 1.0, 4.0, "eschmann", "times the run-in viscous torque on top of it: 2 to 5 in all"),
-    "fresh grease": Factor(2.2, 2.0, 4.0, "eschmann", "times the run-in viscous torque, of fresh grease"),
+    "fresh grease": Factor(4.25, 2.0, 5.0, "eschmann", "times the run-in viscous torque, where all grease is fresh"),
+    "channelling": Factor(
+        8e5, 2.5e5, 2.5e6, "own-estimate", "revolutions in which what is still to clear falls to 1/e"
+    ),
     "passage, shields": Factor(0.5, 0.2, 0.8, "own-estimate", "share of the surplus that leaves past two shields"),
 }
 

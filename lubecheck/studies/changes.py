@@ -43,7 +43,7 @@ WARM_INLET = 40.0  # degC, of oil that comes from a cooler: common practice, 40 
 COOLER_MARGIN = 10.0  # K that a cooler leaves between oil and air: common practice, 8 to 15
 TANK_MINUTES = 10.0  # of the flow that the tank holds: common practice, 5 to 10
 # Limits that a bath fails when it is too hot.
-BATH_HEAT = ("temperature", "rings", "flash_point", "film", "interval")
+BATH_HEAT = ("temperature", "set_point", "rings", "flash_point", "film", "interval")
 
 
 @dataclass(frozen=True, slots=True)

@@ -1,6 +1,6 @@
 """How fast the kernel is: positions a second, and the solve against general root finders on the same balance.
 
-Run from the root: PYTHONPATH=tests:tests/model python tests/benchmarks/kernel.py
+Run from the root: PYTHONPATH=tests python tests/benchmarks/kernel.py
 Times are of the process on one core, the best of several; the ratios come from one run. Goals: 250 000 positions a
 second for the full check, the solve 5 times as fast as find_root and 300 times as fast as a loop of brentq.
 """
@@ -33,8 +33,7 @@ def seconds(run: Callable[[], object], times: int = 5) -> float:
 
 def main() -> None:
     """Print the rates."""
-    from test_heat import random_rows  # the tests' own rows, on the path of this run only
-    from test_kernel import random_points
+    from positions import random_points, random_rows
 
     points = random_points(ROWS)
     solve = seconds(lambda: equilibrium.solve(points))

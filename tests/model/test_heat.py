@@ -7,61 +7,17 @@ import dataclasses
 import numpy as np
 import pytest
 from conftest import BASE, EXAMPLES, with_key
+from positions import points_of, random_rows
 from scipy.optimize import brentq
 
 import lubecheck
 from lubecheck.faces.record import of_result
 from lubecheck.model import equilibrium
 from lubecheck.model.balance import PATHS, balance_of
-from lubecheck.model.check import readings
-from lubecheck.model.points import Points, from_rows, join
+from lubecheck.model.points import Points
 from lubecheck.model.reader import load_case, read_case
-from lubecheck.model.rows import rows_of
 
 ROWS = 100_000
-
-
-def points_of(name: str) -> Points:
-    case = load_case(EXAMPLES / f"{name}.toml")
-    return from_rows(rows_of(case, readings(case)[1][0]))
-
-
-def random_rows(rows: int, seed: int = 5) -> Points:
-    """Return rows with every heat path at work, far wider than any machine."""
-    rng = np.random.default_rng(seed)
-    seeds = [points_of(name).take([0]) for name in ("new_motor", "overfilled_motor", "slow_roller", "oil_bath_pump")]
-    base = join(seeds).take(rng.integers(0, len(seeds), rows))
-
-    def spread(low: float, high: float) -> np.ndarray:
-        return np.exp(rng.uniform(np.log(low), np.log(high), rows))
-
-    def some(values: np.ndarray) -> np.ndarray:
-        return np.where(rng.random(rows) < 0.5, values, 0.0)
-
-    return dataclasses.replace(
-        base,
-        case=np.arange(rows),
-        speed=base.speed * spread(0.02, 5.0),
-        radial_load=base.dynamic_rating * spread(0.001, 0.5),
-        ambient=rng.uniform(-40, 80, rows),
-        draught=some(spread(0.05, 30.0)),
-        housing_area=base.housing_area * spread(0.1, 10.0),
-        conductance=np.where(rng.random(rows) < 0.2, spread(0.02, 100.0), np.nan),
-        shaft_temperature=rng.uniform(-40, 200, rows),
-        shaft_conductance=some(spread(0.01, 10.0)),
-        fin_conductance=some(spread(0.01, 10.0)),
-        frame_temperature=rng.uniform(-40, 150, rows),
-        frame_conductance=some(spread(0.01, 50.0)),
-        coolant_inlet=rng.uniform(-20, 60, rows),
-        coolant_conductance=some(spread(0.1, 200.0)),
-        oil_inlet=rng.uniform(0, 100, rows),
-        oil_conductance=some(spread(0.1, 500.0)),
-        machine_heat=some(spread(0.1, 300.0)),
-        solar_heat=some(spread(1.0, 100.0)),
-        fill=np.where(base.is_grease > 0, rng.uniform(0.05, 1.2, rows), np.nan),
-        passage=rng.choice([0.0, 0.5, 1.0], rows),
-        ring_factor=spread(0.1, 10.0),
-    )
 
 
 @pytest.fixture(scope="module")
