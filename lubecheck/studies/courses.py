@@ -8,7 +8,7 @@ revolutions, what the housing weighs, how fast the machine warms.
 from __future__ import annotations
 
 import dataclasses
-from collections.abc import Iterator, Mapping, Sequence
+from collections.abc import Collection, Mapping, Sequence
 from dataclasses import dataclass
 
 import numpy as np
@@ -27,6 +27,7 @@ from lubecheck.units import Array
 
 USUAL_STILL = 11.0  # W/(m^2*K): makes an area of a conductance where only that is known
 FIRST_START, START, AFTER_GREASING, COLD_START = "first start", "start", "after greasing", "cold start"
+COURSES = (FIRST_START, START, AFTER_GREASING, COLD_START)
 
 # What is uncertain about the way and not about its ends: a field of Course, its low and high end over the nominal.
 _OWN = (
@@ -77,13 +78,15 @@ class Run:
         return checking.band(of_rows, self.ends)
 
 
-def runs_of(case: Case, air_properties: Air = air.properties) -> Mapping[str, Run]:
-    """Follow every course of the case at every reading, all in one transient."""
+def runs_of(
+    case: Case, air_properties: Air = air.properties, *, wanted: Collection[str] = COURSES
+) -> Mapping[str, Run]:
+    """Follow the wanted courses of the case, where it has them, at every reading, all in one transient."""
     variants = checking.variants_of(case, air_properties)
-    ways: dict[str, Course] = dict(_from_here(case, variants, air_properties))
-    cold = _in_the_cold(case)
+    ways = _from_here(case, variants, air_properties, wanted)
+    cold = _in_the_cold(case) if COLD_START in wanted else None
     if cold is not None:
-        ways[COLD_START] = _start(checking.variants_of(cold, air_properties), cold, fresh=None)
+        ways[COLD_START] = _start(checking.variants_of(cold, air_properties), cold, is_fresh=False)
     spread = {name: _with_own_ends(case, way) for name, way in ways.items()}
     history = follow(_together(list(spread.values())), air_properties)
     runs, first = {}, 0
@@ -104,12 +107,16 @@ def _only_found(history: History, points: Points, air_properties: Air) -> Histor
     return History(history.time, *(getattr(history, name) * lost for name in ("inner", "lubricant", "outer", "torque")))
 
 
-def _from_here(case: Case, variants: Variants, air_properties: Air) -> Iterator[tuple[str, Course]]:
-    if case.is_grease:
-        yield FIRST_START, _start(variants, case, fresh=1.0)
-    yield START, _start(variants, case, fresh=None)
-    if case.is_grease and case.bearing.sealed_sides < 2:
-        yield AFTER_GREASING, _regreased(variants, case, air_properties)
+def _from_here(case: Case, variants: Variants, air_properties: Air, wanted: Collection[str]) -> dict[str, Course]:
+    """Return the courses of the case in its own air."""
+    ways: dict[str, Course] = {}
+    if FIRST_START in wanted and case.is_grease:
+        ways[FIRST_START] = _start(variants, case, is_fresh=True)
+    if START in wanted:
+        ways[START] = _start(variants, case, is_fresh=False)
+    if AFTER_GREASING in wanted and case.is_grease and case.bearing.sealed_sides < 2:
+        ways[AFTER_GREASING] = _regreased(variants, case, air_properties)
+    return ways
 
 
 def _rows(variants: Variants) -> tuple[Points, Equilibrium]:
@@ -134,12 +141,12 @@ def _housing(case: Case, points: Points) -> Array:
     return mass
 
 
-def _start(variants: Variants, case: Case, *, fresh: float | None) -> Course:
-    """A start at the ambient: with grease that has found its place already, or with a share that is fresh."""
+def _start(variants: Variants, case: Case, *, is_fresh: bool) -> Course:
+    """A start at the ambient, with grease that has found its place already or with a fresh fill."""
     points, steady = _rows(variants)
     none = np.zeros(len(points))
     clearing = none
-    if fresh is not None:
+    if is_fresh:
         excess = np.maximum(np.nan_to_num(points.fill) - churning.CLEAR_SHARE, 0.0) * points.free_volume
         clearing = np.maximum(excess - steady.held_volume, 0.0)
     return Course(
@@ -148,7 +155,7 @@ def _start(variants: Variants, case: Case, *, fresh: float | None) -> Course:
         lubricant=points.ambient,
         outer=points.ambient,
         housing_mass=_housing(case, points),
-        fresh=none if fresh is None else _fresh(points, steady, np.full(len(points), fresh), clearing),
+        fresh=_fresh(points, steady, np.ones(len(points)), clearing) if is_fresh else none,
         clearing=clearing,
         channelling=np.full(len(points), warm_up.CHANNELLING.nominal),
         machine_time=np.full(len(points), warm_up.MACHINE_TIME.nominal),

@@ -40,6 +40,11 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
     be judged is never called good.
     """
     result = judge_case(case, air_properties=air_properties)
+    if case.grease.given is not None:
+        from lubecheck.studies.warmup import waiting  # here, as only a position that was greased asks for it
+
+        said = waiting(case, result, air_properties=air_properties)
+        result = dataclasses.replace(result, notes=(*result.notes, said) if said else result.notes)
     if not any(limit.state in _FAILING for limit in result.limits):
         return result
     return dataclasses.replace(result, remedies=find(case, air_properties=air_properties))

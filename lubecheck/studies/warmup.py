@@ -16,7 +16,7 @@ from lubecheck.model.check import governing
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.glance import state_of_readings
-from lubecheck.model.limits import STATES, UNKNOWN
+from lubecheck.model.limits import BEYOND, STATES, UNKNOWN
 from lubecheck.model.result import ColdTorque, Course, CourseFigures, Crossing, Limit, Result, WarmUp
 from lubecheck.physics import churning, viscosity, warm_up
 from lubecheck.studies.courses import AFTER_GREASING, COLD_START, FIRST_START, START, Run, runs_of
@@ -25,6 +25,7 @@ from lubecheck.units import Array
 SETTLED = 1.0  # K: so close to the end counts as steady
 KEPT = 0.05  # K: a curve is kept up to where it stays so close to its end
 SAMPLES = 60  # points of a curve that are kept
+FIELD_HOURS = 24.0  # until a greased bearing is back: field notes of 2016
 CONCERN = 28.0  # K of rise after greasing: field notes of 2016
 MEANINGS = {
     FIRST_START: "the first fill is fresh and churns until it has found its place; the machine starts cold",
@@ -52,6 +53,25 @@ def judged(case: Case, result: Result, *, air_properties: Air = air.properties) 
     )
     return dataclasses.replace(
         result, limits=limits, verdict=verdict, governing=governing(limits, verdict), warm_up=found
+    )
+
+
+def waiting(case: Case, result: Result, *, air_properties: Air = air.properties) -> str:
+    """Say how long what was given takes to find its place, with the way out that the advice asks for."""
+    opens = case.housing.relief != "open" and result.limit("fill").state in (STATES[UNKNOWN], STATES[BEYOND])
+    if opens:
+        case = dataclasses.replace(case, housing=dataclasses.replace(case.housing, relief="open"))
+    run = runs_of(case, air_properties, wanted=(AFTER_GREASING,)).get(AFTER_GREASING)
+    if run is None or np.isnan(run.known[0]):
+        return ""
+    hours, shortest, longest = run.band(_settled(run.history.time, run.history.outer, SETTLED))
+    peak, low, high = run.band(run.peaks)
+    by_field = "" if shortest <= FIELD_HOURS <= longest else f"; field notes say about {FIELD_HOURS:.0f} h"
+    way = ", once the relief is open" if opens else ""
+    return (
+        f"after the fact{way}: by the warm-up the housing peaks at {peak:.0f} degC "
+        f"({low:.0f} to {high:.0f}) and is within 1 K of its steady {run.history.outer[-1, 0]:.0f} degC after "
+        f"{hours:.0f} running hours ({shortest:.0f} to {longest:.0f}){by_field}: wait so long, then judge it"
     )
 
 

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import json
+import re
 
 import numpy as np
 import pytest
@@ -193,3 +194,16 @@ def test_a_rise_that_is_a_concern_is_said():
     rise = courses(result)["after greasing"].figures.figures["rise"].value
     assert rise > CONCERN
     assert any("concern" in note for note in result.warm_up.notes)
+
+
+def test_what_was_given_after_the_fact_is_waited_for_by_the_warm_up():
+    case = load_case(EXAMPLES / "regreased_fan.toml")
+    result = check(case)
+    (said,) = (note for note in result.notes if "by the warm-up" in note)
+    assert "once the relief is open" in said  # it is closed, and too much was given
+    hours = float(re.search(r"after (\d+) running hours", said)[1])
+    opened = read_case(with_key((EXAMPLES / "regreased_fan.toml").read_text(encoding="utf-8"),
+                                "housing", "relief", '"open"'))  # fmt: skip
+    greased = courses(judged(opened, check(opened)))["after greasing"].figures.figures
+    assert hours == pytest.approx(greased["time_to_steady"].value, abs=0.6)
+    assert not any("by the warm-up" in note for note in check(load_case(EXAMPLES / "new_motor.toml")).notes)
