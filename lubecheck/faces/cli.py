@@ -93,13 +93,11 @@ def check(
     from lubecheck.model.reader import load_case
     from lubecheck.studies.remedies import check as judge
 
-    read = load_case(case, own=own_lubricants(lubricants))
-    air_properties = air.exact if exact_fluids else air.properties
-    result = judge(read, air_properties=air_properties)
-    if warmup:
-        from lubecheck.studies.warmup import judged
-
-        result = judged(read, result, air_properties=air_properties)
+    result = judge(
+        load_case(case, own=own_lubricants(lubricants)),
+        warm_up=warmup,
+        air_properties=air.exact if exact_fluids else air.properties,
+    )
     if json:
         from lubecheck.faces.record import to_json
 

@@ -11,7 +11,7 @@ import numpy as np
 from rich.text import Text
 
 from lubecheck.faces.charts import STYLES
-from lubecheck.faces.display import converted, number, shown_unit
+from lubecheck.faces.display import converted, shown_unit
 
 _MARGIN = 8  # cells for the temperatures at the left
 _LEAST_WIDTH, _MOST_WIDTH = 30, 90
@@ -59,7 +59,7 @@ def course_chart(
 
     grid = [[(" ", "")] * width for _ in range(_ROWS)]
     rule, bar, corner, dash, tick = ("=", "|", "+", "-", "+") if is_plain else ("═", "│", "└", "─", "┴")
-    labels = {row: number(converted(high - (high - low) * row / (_ROWS - 1), "degC", system))
+    labels = {row: f"{converted(high - (high - low) * row / (_ROWS - 1), 'degC', system):.0f}"
               for row in range(0, _ROWS, 3)}  # fmt: skip
     for name, level in ruled.items():
         row = row_of(level)

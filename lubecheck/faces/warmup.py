@@ -62,8 +62,11 @@ def _crossings(courses: list[Course], system: str) -> list[str]:
         passed = [f"{name} (after {number(c.at_h)} h)" for name, c in met.items() if c.at_h is not None]
         near = [name for name, c in met.items() if c.state == "near"]
         unknown = [name for name, c in met.items() if c.state == "unknown"]
+        reached = [name for name, c in met.items()
+                   if c.at_h is None and c.state != "unknown" and (c.use_high or 0.0) >= 1]  # fmt: skip
         parts = [f"passed by {', '.join(passed)}" if passed else "", f"near in {', '.join(near)}" if near else "",
-                 f"not known of {', '.join(unknown)}" if unknown else ""]  # fmt: skip
+                 f"not known of {', '.join(unknown)}" if unknown else "",
+                 f"within the band of {', '.join(reached)}" if reached else ""]  # fmt: skip
         lines.append(f"{one.name} at {figure(one.set_point, 'degC', system)}: "
                      + ("; ".join(part for part in parts if part) or "no course comes near it"))  # fmt: skip
     return lines

@@ -344,6 +344,9 @@ class Crossing:
     set_point: float  # degC
     state: str
     at_h: float | None  # when it is passed at the usual reading of all inputs; None: not
+    use: float | None  # rise of the peak over the ambient, as a share of what the set-point leaves
+    use_low: float | None
+    use_high: float | None
 
 
 @dataclass(frozen=True)

@@ -33,21 +33,24 @@ ONE_GROUP = {"cold_start": "lubricant", "speed": "bearing", "static_load": "bear
 _FAILING = ("near", "beyond")
 
 
-def check(case: Case, *, air_properties: Air = air.properties) -> Result:
+def check(case: Case, *, warm_up: bool = False, air_properties: Air = air.properties) -> Result:
     """Judge one bearing position, and where a limit is near or beyond look for what brings it back.
 
     Every limit comes with its use, the demand over what is allowed; the verdict is the worst state, and what could not
-    be judged is never called good.
+    be judged is never called good. With `warm_up` the way to the steady state is followed and judged as well.
     """
     result = judge_case(case, air_properties=air_properties)
-    if case.grease.given is not None:
-        from lubecheck.studies.warmup import waiting  # here, as only a position that was greased asks for it
+    if any(limit.state in _FAILING for limit in result.limits):
+        result = dataclasses.replace(result, remedies=find(case, air_properties=air_properties))
+    if warm_up or case.grease.given is not None:
+        from lubecheck.studies import warmup  # here, as few ask for it
 
-        said = waiting(case, result, air_properties=air_properties)
-        result = dataclasses.replace(result, notes=(*result.notes, said) if said else result.notes)
-    if not any(limit.state in _FAILING for limit in result.limits):
-        return result
-    return dataclasses.replace(result, remedies=find(case, air_properties=air_properties))
+        if case.grease.given is not None:
+            said = warmup.waiting(case, result, air_properties=air_properties)
+            result = dataclasses.replace(result, notes=(*result.notes, said) if said else result.notes)
+        if warm_up:
+            result = warmup.judged(case, result, air_properties=air_properties)
+    return result
 
 
 def find(case: Case, *, air_properties: Air = air.properties) -> tuple[Remedy, ...]:

@@ -12,6 +12,7 @@ from collections.abc import Callable, Iterator, Mapping
 import numpy as np
 
 from lubecheck.data import air
+from lubecheck.model import wording
 from lubecheck.model.check import governing
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
@@ -124,8 +125,10 @@ def _kept(run: Run) -> list[int]:
 
 def _crossing(name: str, set_point: float, run: Run) -> Crossing:
     over = np.flatnonzero(run.history.outer[:, 0] >= set_point)
-    state = STATES[_state(_use(run.peaks, run.ambient, set_point))]
-    return Crossing(name, set_point, state, float(run.history.time[over[0], 0]) if len(over) else None)
+    uses = _use(run.peaks, run.ambient, set_point)
+    use, low, high = (_finite(value) for value in run.band(uses))
+    at = float(run.history.time[over[0], 0]) if len(over) else None
+    return Crossing(name, set_point, STATES[_state(uses)], at, use, low, high)
 
 
 def _use(peak: Array, ambient: Array, top: Array | float) -> Array:
@@ -152,18 +155,22 @@ def _hottest(name: str, basis: str, runs: Mapping[str, Run], of: Callable[[Run],
     """Judge the peak of the course that comes nearest to what is allowed, or past it."""
     uses = {key: _use(of(run)[0], run.ambient, of(run)[1]) for key, run in runs.items()}
     worst = max(runs, key=lambda key: (_state(uses[key]), float(np.nan_to_num(uses[key][0], nan=-1.0))))
-    run, use = runs[worst], uses[worst]
+    run, use, state = runs[worst], uses[worst], _state(uses[worst])
     peak, top = of(run)
     _, low, high = run.band(use)
     return Limit(
         name=name,
-        state=STATES[_state(use)],
+        state=STATES[state],
         use=_finite(use[0]),
         demand=_finite(peak[0]),
         allowed=_finite(top[0]),
         unit="degC",
         basis=basis,
-        note=f"{worst}: {MEANINGS[worst]}",
+        note=wording.join(
+            "hangs on what was not said" if state == UNKNOWN and np.isfinite(use[0]) else "",
+            "could not be followed" if np.isnan(use[0]) else f"{worst}: {MEANINGS[worst]}",
+            wording.band(low, high, []),
+        ),
         use_low=_finite(low),
         use_high=_finite(high),
     )
