@@ -11,6 +11,7 @@ from collections.abc import Sequence
 import numpy as np
 
 from lubecheck.data.bearings import Bearing
+from lubecheck.data.families import FAMILIES
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis
 from lubecheck.model import given as after
@@ -412,12 +413,30 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
     if not outcome.state.is_only[: len(case.duty)].all():
         said.append("more than one temperature would balance the heat, since the film is thin: the hottest is shown")
     if case.housing.shaft_fit is None and case.bearing.family in clearance.KINDS:
-        said.append("internal clearance was not judged: state [housing] shaft_fit")
+        said.append(
+            join("internal clearance was not judged: state [housing] shaft_fit", _usual_clearance(case, outcome))
+        )
     if churned > 0:
         power = float(outcome.state.friction_power[hottest])
         said.append(f"churning makes {churned:.1f} of {power:.1f} W: the surplus cannot leave and will not run in")
     said += oil_words.notes(case)
     return tuple(said)
+
+
+def _usual_clearance(case: Case, outcome: Outcome) -> str:
+    """Say what a usual fit would leave of the clearance at the operating point; empty where there is no table."""
+    bearing, row = case.bearing, int(outcome.hottest[0])
+    whole = clearance.initial(bearing.family, bearing.bore, bearing.clearance)
+    excess = float(outcome.state.excess[row])
+    if whole is None or math.isnan(excess):
+        return ""
+    fit = clearance.usual_shaft_fit(bearing.bore, is_ball=FAMILIES[bearing.family].life_exponent == 3)
+    interference = clearance.shaft_interference.plain(bearing.bore, clearance.SHAFT_FITS.index(fit))
+    lost = float(clearance.fit_loss.plain(shaft=interference, housing=-1.0))  # loose in its housing, as is usual
+    lost += float(clearance.thermal_loss.plain(excess, bore=bearing.bore, outside=bearing.outside))
+    left, mean = (sum(whole) / 2 - lost) * 1000, sum(whole) / 2 * 1000
+    told = f"with a usual {fit} shaft about {left:.0f} um of {mean:.0f} would be left ({bearing.clearance})"
+    return told + (": nothing, so mind the fit, or take a class with more" if left < 0 else "")
 
 
 def _loads(case: Case) -> list[str]:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from collections.abc import Mapping
 from typing import Annotated
 
@@ -94,6 +95,22 @@ def initial(kind: str, bore: float, clearance: str) -> tuple[float, float] | Non
         if row[0] < bore <= row[1]:
             return row[place] / 1000, row[place + 1] / 1000
     return None
+
+
+# Shafts that turn against their load, by bore up to: common practice of handbooks for normal loads, from memory.
+_USUAL_SHAFTS = {
+    True: ((18.0, "j6"), (100.0, "k5"), (140.0, "m5"), (200.0, "m6"), (math.inf, "n6")),  # ball
+    False: ((40.0, "k5"), (100.0, "m5"), (140.0, "m6"), (200.0, "n6"), (math.inf, "p6")),  # roller
+}
+
+
+def usual_shaft_fit(bore: float, *, is_ball: bool) -> str:
+    """Return the tolerance class of a shaft that turns against its load, by common practice.
+
+    >>> usual_shaft_fit(45.0, is_ball=True), usual_shaft_fit(65.0, is_ball=False)
+    ('k5', 'm5')
+    """
+    return next(fit for largest, fit in _USUAL_SHAFTS[is_ball] if bore <= largest)
 
 
 def _tolerance_unit(bore: Array) -> Array:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import dataclasses
+import re
 
 import numpy as np
 import pytest
@@ -278,3 +279,13 @@ def test_an_oil_level_above_the_lowest_element_warms_and_says_so():
     assert high.operating.temperature > low.operating.temperature
     assert any("above the middle" in note for note in high.notes)
     assert not any("above the middle" in note for note in low.notes)
+
+
+def test_without_a_fit_the_clearance_that_a_usual_one_would_leave_is_told():
+    (said,) = (note for note in lubecheck.check(read_case(BASE)).notes if "internal clearance" in note)
+    assert "shaft_fit" in said
+    told = re.search(r"usual k5 shaft about (-?\d+) um of (\d+)", said)
+    stated = lubecheck.check(read_case(with_key(BASE, "housing", "shaft_fit", '"k5"')))
+    limit = stated.limit("clearance")
+    assert int(told[1]) == round((limit.allowed - limit.demand) * 1000)
+    assert int(told[2]) == round(limit.allowed * 1000)
