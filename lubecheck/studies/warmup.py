@@ -19,6 +19,7 @@ from lubecheck.model.equilibrium import Air
 from lubecheck.model.glance import state_of_readings
 from lubecheck.model.limits import BEYOND, STATES, UNKNOWN
 from lubecheck.model.result import ColdTorque, Course, CourseFigures, Crossing, Limit, Result, WarmUp
+from lubecheck.model.rows import seasons
 from lubecheck.physics import churning, viscosity, warm_up
 from lubecheck.studies.courses import AFTER_GREASING, COLD_START, FIRST_START, START, Run, runs_of
 from lubecheck.units import Array
@@ -50,7 +51,7 @@ def judged(case: Case, result: Result, *, air_properties: Air = air.properties) 
     found = WarmUp(
         courses=tuple(_course(case, run) for run in runs.values()),
         cold=None if cold is None else _cold_torque(case, cold),
-        notes=tuple(_notes(runs)),
+        notes=tuple(_notes(case, runs)),
     )
     return dataclasses.replace(
         result, limits=limits, verdict=verdict, governing=governing(limits, verdict), warm_up=found
@@ -229,7 +230,9 @@ def _torque(drive: float, run: Run | None) -> Limit:
     )
 
 
-def _notes(runs: Mapping[str, Run]) -> Iterator[str]:
+def _notes(case: Case, runs: Mapping[str, Run]) -> Iterator[str]:
+    if len(case.duty) > 1 or len(seasons(case)) > 1:
+        yield "the courses are of the duty point and the season that run hottest"
     for run in runs.values():
         if np.isnan(run.known[0]):
             yield f"{run.name}: not followed, as there is no state that it would end in"
@@ -242,11 +245,14 @@ def _notes(runs: Mapping[str, Run]) -> Iterator[str]:
                 "in portions, a day apart"
             )
     fresh, turns, wall, machine = warm_up.FRESH, warm_up.CHANNELLING, warm_up.WALL, warm_up.MACHINE_TIME
+    grease = (
+        f"fresh grease {fresh.nominal:g} times the run-in viscous torque ({fresh.low:g} to {fresh.high:g}); channels in "
+        f"{turns.nominal:.0f} revolutions ({turns.low:.0f} to {turns.high:.0f}); "
+    )
     yield (
-        f"estimates of the way: fresh grease {fresh.nominal:g} times the run-in viscous torque ({fresh.low:g} to "
-        f"{fresh.high:g}); channels in {turns.nominal:.0f} revolutions ({turns.low:.0f} to {turns.high:.0f}); a wall "
-        f"of {wall.nominal:g} mm ({wall.low:g} to {wall.high:g}) where the housing's mass is not stated; a machine "
-        f"that warms in {machine.nominal:g} h ({machine.low:g} to {machine.high:g}), e-folding"
+        f"estimates of the way: {grease if case.is_grease else ''}a wall of {wall.nominal:g} mm ({wall.low:g} to "
+        f"{wall.high:g}) where the housing's mass is not stated; a machine that warms in {machine.nominal:g} h "
+        f"({machine.low:g} to {machine.high:g}), e-folding"
     )
 
 
