@@ -36,7 +36,8 @@ def test_the_worked_reading_quotes_todays_figures():
         lubecheck.check(lubecheck.load_case(EXAMPLES / f"{name}_motor.toml")) for name in ("new", "overfilled")
     )
     temperature = good.operating.temperature.m_as("degC")
-    assert f"found: {temperature:.1f} °C" in README
+    band = good.operating.figures["temperature"]
+    assert f"found: {temperature:.1f} °C, in a band of {band.low:.0f} to {band.high:.0f} °C" in README
     assert (
         f"uses {good.limit('interval').use:.2f} of the {good.limit('interval').allowed:,.0f}".replace(",", " ")
         in README

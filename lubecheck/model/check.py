@@ -1,8 +1,8 @@
 """check: one case, judged as it was described, at the worst that was left unsaid, and over its uncertain inputs.
 
 All of these readings are rows of one kernel call. The first position is the case at the usual reading of what it
-leaves out; then come the worst reading of everything left out, of each such fact alone, and each uncertain input at
-its low and its high end.
+leaves out; then come the worst reading of everything left out, of each such fact alone, and the draws of the uncertain
+inputs.
 """
 
 from __future__ import annotations
@@ -14,7 +14,7 @@ from typing import Any
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import interval_lines, limits, side_figures, wording
+from lubecheck.model import draws, interval_lines, limits, side_figures, wording
 from lubecheck.model.amounts import amounts
 from lubecheck.model.assumptions import Fact, missing, uncertain
 from lubecheck.model.entries import Case
@@ -54,7 +54,7 @@ Triple = tuple[float, float, float]
 
 @dataclass(frozen=True, slots=True)
 class Variants:
-    """The readings of one case as positions of one outcome: 0 usual, 1 worst, then each fact alone, then the inputs."""
+    """The readings of one case as positions of one outcome: 0 usual, 1 worst, then each fact alone, then the draws."""
 
     case: Case
     facts: tuple[Fact, ...]
@@ -67,9 +67,9 @@ class Variants:
         return {fact.name: 2 + i for i, fact in enumerate(self.facts)}
 
     @property
-    def inputs(self) -> range:
-        """The positions at which one uncertain input is at an end."""
-        return range(2 + len(self.facts), self.outcome.points.cases)
+    def drawn(self) -> slice:
+        """The positions at which the uncertain inputs are drawn."""
+        return slice(2 + len(self.facts), None)
 
     def uses(self, name: str) -> Array:
         """The use of a limit in every position, the interval judged as the usual reading plans it."""
@@ -81,8 +81,9 @@ class Variants:
         return use
 
     def band(self, of_positions: Array) -> Triple:
-        """A figure's value and its band."""
-        return band(of_positions, self.inputs)
+        """A figure's value, and the ends between which nearly all draws of the uncertain inputs lie."""
+        value = float(of_positions[0])
+        return value, *draws.band(value, of_positions[self.drawn])
 
     def row_band(self, of_rows: Array, row: int) -> Triple:
         """The same for a figure of one row."""
@@ -135,21 +136,6 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
     )
 
 
-def band(figure: Array, ends: Sequence[int]) -> Triple:
-    """Return a figure's value, its first, and its band: the uncertain inputs' effects, as the root of their squares.
-
-    ends: where the figure stands with an input at its low and at its high end, in turn
-    """
-    value = figure[0]
-    change = figure[list(ends)].reshape(-1, 2) - value
-    up = np.maximum(change.max(axis=1, initial=0.0), 0.0)
-    down = np.minimum(change.min(axis=1, initial=0.0), 0.0)
-    low = value - np.sqrt((down**2).sum())
-    if (figure >= 0).all():  # a figure that has no other side stays on its own
-        low = np.maximum(low, 0.0)
-    return float(value), float(low), float(value + np.sqrt((up**2).sum()))
-
-
 def readings(case: Case) -> tuple[tuple[Fact, ...], list[dict[str, Any]]]:
     """Return the facts a case leaves out, and its readings: usual, worst, and each fact alone at its worst."""
     facts = tuple(fact for fact in missing(case))
@@ -159,13 +145,21 @@ def readings(case: Case) -> tuple[tuple[Fact, ...], list[dict[str, Any]]]:
     return moving, [usual, worst, *({**usual, fact.name: fact.worst} for fact in moving)]
 
 
-def variants_of(case: Case, air_properties: Air = air.properties) -> Variants:
-    """Judge a case at every reading of what it leaves out and at both ends of every uncertain input."""
+def variants_of(case: Case, air_properties: Air = air.properties, *, at_ends: bool = False) -> Variants:
+    """Judge all readings of a case in one kernel call.
+
+    With `at_ends` each uncertain input stands alone at its low and its high end instead of the draws: few rows, for
+    what costs too much to follow in a thousand.
+    """
     moving, said = readings(case)
     usual = from_rows(rows_of(case, said[0]))
     parts: list[Points] = [usual, *(from_rows(rows_of(case, reading)) for reading in said[1:])]
-    for name, low, high in uncertain(case):
-        parts += [usual.changed(**{name: getattr(usual, name) * factor}) for factor in (low, high)]
+    inputs = tuple(uncertain(case))
+    if at_ends:
+        for name, *ends in inputs:
+            parts += [usual.changed(**{name: getattr(usual, name) * factor}) for factor in ends]
+    else:
+        parts.append(draws.drawn(usual, inputs))
     return Variants(case, moving, judge(join(parts), air_properties), len(usual))
 
 
@@ -180,7 +174,7 @@ def _limit(variants: Variants, name: str) -> Limit:
         hinges = hinges or [fact for fact in variants.facts if name in fact.limits]
         state = NEAR_CODE if states[1] == NEAR_CODE else max(state, UNKNOWN)
         doubt = wording.doubt(hinges, float(uses[1]), is_open=state != NEAR_CODE)
-    _, low, high = variants.band(np.where(np.isfinite(uses), uses, np.nan))
+    _, low, high = variants.band(uses)
     return Limit(
         name=name,
         state=STATES[state],
@@ -192,19 +186,16 @@ def _limit(variants: Variants, name: str) -> Limit:
         note=wording.join(
             doubt,
             wording.limit_note(name, variants.case, variants.outcome),
-            wording.band(low, high, _lost_ends(variants, uses)),
+            wording.band(low, high, _lost(variants, uses)),
         ),
         use_low=_finite(low),
         use_high=_finite(high),
     )
 
 
-def _lost_ends(variants: Variants, uses: Array) -> list[str]:
-    """Return the ends of the uncertain inputs at which a limit has no use though it has one between them."""
-    if not np.isfinite(uses[0]):
-        return []
-    ends = np.isfinite(uses[list(variants.inputs)]).reshape(-1, 2)
-    return [name for i, name in enumerate(("low", "high")) if not ends[:, i].all()]
+def _lost(variants: Variants, uses: Array) -> float:
+    """Return the share of the draws at which a limit has no use though it has one at the usual reading."""
+    return float((~np.isfinite(uses[variants.drawn])).mean()) if np.isfinite(uses[0]) else 0.0
 
 
 def governing(judged: Sequence[Limit], verdict: str) -> str:

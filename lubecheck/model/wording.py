@@ -67,10 +67,10 @@ def doubt(facts: Sequence[Fact], use: float, *, is_open: bool) -> str:
     return f"near at the worst reading of what was not said: {names}"
 
 
-def band(low: float, high: float, lost: Sequence[str] = ()) -> str:
-    """Say that the band of uncertain inputs crosses the limit, where it does, or has an end that is no number."""
-    if lost:
-        return f"not judged at the {' and the '.join(lost)} end of the band"
+def band(low: float, high: float, lost: float = 0.0) -> str:
+    """Say that the band of uncertain inputs crosses the limit, where it does, or which share of it has no number."""
+    if lost >= 0.005:
+        return f"without a use in {100 * lost:.0f} % of the band"
     return f"the band {low:.2f} to {high:.2f} crosses the limit" if low <= 1.0 < high else ""
 
 

@@ -74,19 +74,19 @@ class Run:
         return peaks
 
     def band(self, of_rows: Array) -> Triple:
-        """A figure at the usual reading and its band, as the check combines them."""
-        return checking.band(of_rows, self.ends)
+        """A figure at the usual reading and its band."""
+        return _band(of_rows, self.ends)
 
 
 def runs_of(
     case: Case, air_properties: Air = air.properties, *, wanted: Collection[str] = COURSES
 ) -> Mapping[str, Run]:
     """Follow the wanted courses of the case, where it has them, at every reading, all in one transient."""
-    variants = checking.variants_of(case, air_properties)
+    variants = checking.variants_of(case, air_properties, at_ends=True)
     ways = _from_here(case, variants, air_properties, wanted)
     cold = _in_the_cold(case) if COLD_START in wanted else None
     if cold is not None:
-        ways[COLD_START] = _start(checking.variants_of(cold, air_properties), cold, is_fresh=False)
+        ways[COLD_START] = _start(checking.variants_of(cold, air_properties, at_ends=True), cold, is_fresh=False)
     spread = {name: _with_own_ends(case, way) for name, way in ways.items()}
     history = follow(_together(list(spread.values())), air_properties)
     runs, first = {}, 0
@@ -235,3 +235,18 @@ def _in_the_cold(case: Case) -> Case | None:
     return dataclasses.replace(
         case, surroundings=cold, duty=tuple(dataclasses.replace(duty, ambient=None) for duty in case.duty)
     )
+
+
+def _band(figure: Array, ends: Sequence[int]) -> Triple:
+    """Return a figure's value, its first, and its band: the uncertain inputs' effects, as the root of their squares.
+
+    ends: where the figure stands with an input at its low and at its high end, in turn
+    """
+    value = figure[0]
+    change = figure[list(ends)].reshape(-1, 2) - value
+    up = np.maximum(change.max(axis=1, initial=0.0), 0.0)
+    down = np.minimum(change.min(axis=1, initial=0.0), 0.0)
+    low = value - np.sqrt((down**2).sum())
+    if (figure >= 0).all():  # a figure that has no other side stays on its own
+        low = np.maximum(low, 0.0)
+    return float(value), float(low), float(value + np.sqrt((up**2).sum()))

@@ -170,7 +170,7 @@ def _hottest(name: str, basis: str, runs: Mapping[str, Run], of: Callable[[Run],
         note=wording.join(
             "hangs on what was not said" if state == UNKNOWN and np.isfinite(use[0]) else "",
             "could not be followed" if np.isnan(use[0]) else f"{worst}: {MEANINGS[worst]}",
-            wording.band(low, high, []),
+            wording.band(low, high),
         ),
         use_low=_finite(low),
         use_high=_finite(high),
