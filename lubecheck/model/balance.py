@@ -111,6 +111,7 @@ class Balance:
     reference_viscosity: Array
     seal_torque: Array
     held_volume: Array
+    free_volume: Array
     shear_rate: Array
     yield_stress: Array
     churning_factor: Array
@@ -250,6 +251,7 @@ class Balance:
             churned[rows] = churning.held_to_range.plain(
                 churning_torque=self.churning_factor[rows] * sheared / self.watt_a_torque[rows],
                 run_in_torque=viscous[rows],
+                packed=churning.packed_share.plain(held=self.held_volume[rows], free_volume=self.free_volume[rows]),
             )
         return churned
 
@@ -352,6 +354,7 @@ def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
             is_open=p.is_open,
             passage=p.passage,
         ),
+        free_volume=p.free_volume,
         shear_rate=churning.shear_rate.plain(p.speed, bore=p.bore, outside=p.outside),
         yield_stress=p.yield_stress,
         churning_factor=p.churning_factor,

@@ -24,6 +24,7 @@ PARAMETERS: Mapping[str, Factor] = {
     "exponent": Factor(0.5, 0.4, 0.6, "palacios", "of the power-law part"),
     "softening": Factor(0.01, 0.005, 0.015, "palacios", "1/K, by which yield stress and consistency fall"),
     "most churning": Factor(4.0, 1.0, 4.0, "eschmann", "times the run-in viscous torque on top of it: 2 to 5 in all"),
+    "least churning": Factor(1.0, 1.0, 1.0, "eschmann", "the same of a bearing packed full: 2 in all, the low end"),
     "fresh grease": Factor(4.25, 2.0, 5.0, "eschmann", "times the run-in viscous torque, where all grease is fresh"),
     "channelling": Factor(
         8e5, 2.5e5, 2.5e6, "own-estimate", "revolutions in which what is still to clear falls to 1/e"
@@ -52,9 +53,10 @@ GAP_SHARE = PARAMETERS["gap share"].nominal
 # Exponent of the power-law part of the shear stress of a soap grease (Palacios). From memory, range 0.4 to 0.6.
 POWER_EXPONENT = PARAMETERS["exponent"].nominal
 
-# Churning adds at most this many times the run-in viscous torque: published range "2 to 5 times", of which 1 is the
-# run-in torque itself (Eschmann; Harris).
+# Churning adds at most this many times the run-in viscous torque, and at least so many where a bearing is packed full:
+# published range "2 to 5 times", of which 1 is the run-in torque itself (Eschmann; Harris).
 MOST_CHURNING = PARAMETERS["most churning"].nominal
+LEAST_CHURNING = PARAMETERS["least churning"].nominal
 
 
 @method(source="own-estimate", valid={"fill": (0.0, 1.0), "housing_fill": (0.0, 1.0)})
@@ -166,15 +168,33 @@ def shear_power(volume: Cm3, rate: PerSecond, stress: Pa) -> Watt:
     return volume * 1e-6 * stress * rate
 
 
-@method(source="eschmann")
-def held_to_range(*, churning_torque: NMm, run_in_torque: NMm) -> NMm:
-    """Churning torque, held to the published range of 4 times the run-in viscous torque on top of it.
+@method(source="own-estimate", valid={"held": (0.0, 1e9), "free_volume": (1e-9, 1e9)})
+def packed_share(*, held: Cm3, free_volume: Cm3) -> Share:
+    """Held grease as a share of what a bearing packed full with no way out holds: V_held / (0.67 V_free).
+
+    held [cm^3]: volume that cannot clear
+    free_volume [cm^3]: free volume of the bearing
+    returns [1]
+
+    >>> packed_share(held="33.5 cm^3", free_volume="50 cm^3").round(6)
+    <Quantity(1.0, 'dimensionless')>
+    """
+    return held / ((1.0 - CLEAR_SHARE) * free_volume)
+
+
+@method(source="eschmann", valid={"packed": (0.0, 1.0)})
+def held_to_range(*, churning_torque: NMm, run_in_torque: NMm, packed: Share) -> NMm:
+    """Churning torque, held to the published range of 1 to 4 times the run-in viscous torque on top of it.
+
+    The low end is that of a bearing packed full; of one that holds less it is as much less.
 
     churning_torque [N*mm]: churning torque by the physical line
     run_in_torque [N*mm]: viscous torque of the run-in bearing at the same temperature
+    packed [1]: held grease as a share of what a bearing packed full holds
     returns [N*mm]
 
-    >>> held_to_range(churning_torque="900 N*mm", run_in_torque="100 N*mm").round(6)
+    >>> held_to_range(churning_torque="900 N*mm", run_in_torque="100 N*mm", packed=1).round(6)
     <Quantity(400.0, 'newton * millimeter')>
     """
-    return np.minimum(churning_torque, MOST_CHURNING * run_in_torque)
+    least = (LEAST_CHURNING * packed) * run_in_torque
+    return np.minimum(np.maximum(churning_torque, least), MOST_CHURNING * run_in_torque)

@@ -74,5 +74,12 @@ def test_a_full_flood_falls_into_the_published_range(bore, outside, width, f0, s
 
 
 def test_churning_is_held_to_four_times_the_run_in_torque():
-    assert churning.held_to_range.plain(churning_torque=900.0, run_in_torque=100.0) == 400.0
-    assert churning.held_to_range.plain(churning_torque=90.0, run_in_torque=100.0) == 90.0
+    assert churning.held_to_range.plain(churning_torque=900.0, run_in_torque=100.0, packed=0.5) == 400.0
+    assert churning.held_to_range.plain(churning_torque=90.0, run_in_torque=100.0, packed=0.5) == 90.0
+
+
+def test_a_bearing_packed_full_churns_no_less_than_its_run_in_torque_and_one_that_holds_less_by_as_much_less():
+    assert churning.held_to_range.plain(churning_torque=30.0, run_in_torque=100.0, packed=1.0) == 100.0
+    assert churning.held_to_range.plain(churning_torque=30.0, run_in_torque=100.0, packed=0.4) == 40.0
+    assert churning.held_to_range.plain(churning_torque=0.0, run_in_torque=100.0, packed=0.0) == 0.0
+    assert churning.packed_share.plain(held=held(1.0), free_volume=50.0) == pytest.approx(1.0)
