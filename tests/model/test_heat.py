@@ -32,6 +32,7 @@ def solved(wide):
 
 
 def test_a_hundred_thousand_rows_are_solved_or_proven_to_have_no_state_below_the_top(wide, solved):
+    assert (solved.is_found ^ solved.is_too_hot).all()  # no solve that did not end
     lost = np.flatnonzero(~solved.is_found)
     assert 0 < len(lost) < 0.2 * ROWS  # both kinds have to be there
     # What was not found boils over even at the top: with the lubricant there, more heat comes in than leaves.
@@ -68,6 +69,45 @@ def test_the_paths_that_are_not_there_carry_nothing(wide, solved):
         assert (solved.paths[name][found & (conductance == 0)] == 0).all()
         assert (solved.paths[name][found & (conductance > 0)] != 0).mean() > 0.99
     assert set(solved.paths) == set(PATHS)
+
+
+# One path open at a time: its conductance, the node it leaves from and the sink it goes to.
+ALONE = {
+    "stated": ("conductance", "outer", "ambient"),
+    "free_shaft": ("fin_conductance", "inner", "ambient"),
+    "machine_shaft": ("shaft_conductance", "inner", "shaft_temperature"),
+    "frame": ("frame_conductance", "outer", "frame_temperature"),
+    "coolant": ("coolant_conductance", "outer", "coolant_inlet"),
+    "oil": ("oil_conductance", "temperature", "oil_inlet"),
+}
+
+
+@pytest.mark.parametrize("path", PATHS)
+def test_one_path_alone_carries_all_heat_to_a_thousand_millionth(wide, path):
+    rows = 2000
+    none = np.zeros(rows)
+    closed = {field: none for field, _, _ in ALONE.values()} | {"housing_area": np.full(rows, 1e-24)}
+    closed["conductance"] = np.full(rows, np.nan)
+    first = wide.take(np.arange(rows))
+    if path in ALONE:
+        closed[ALONE[path][0]] = np.exp(np.random.default_rng(3).uniform(np.log(0.5), np.log(50.0), rows))
+    else:
+        closed["housing_area"] = first.housing_area
+    one = dataclasses.replace(first, **closed)
+    state = equilibrium.solve(one)
+    found = state.is_found
+    assert found.mean() > 0.5
+    heat = state.friction_power + one.machine_heat + one.solar_heat
+    carried = state.paths[path] if path in ALONE else state.paths["air"] + state.paths["radiation"]
+    # What passes is the difference of two temperatures: their own last digits count beside the heat.
+    digits = 0.0
+    if path in ALONE:
+        field, node, sink = ALONE[path]
+        conductance = getattr(one, field) * (one.cooling_factor if path in ("stated", "free_shaft") else 1.0)
+        by_hand = conductance * (getattr(state, node) - getattr(one, sink))
+        digits = 1e-13 * conductance * (np.abs(getattr(one, sink)) + 273)
+        assert (np.abs(by_hand - carried) <= 1e-9 * heat + digits)[found].all()
+    assert (np.abs(carried - heat) <= 1e-9 * heat + digits)[found].all()
 
 
 def test_two_nodes_by_hand():
