@@ -13,7 +13,7 @@ from dataclasses import dataclass
 from typing import Any
 
 from lubecheck.model.entries import Case
-from lubecheck.physics import cleanliness, friction, grease_life, heat_paths
+from lubecheck.physics import cleanliness, friction, grease_life, heat_paths, seal_friction
 
 # Multiples of D^2 that the outer area of a housing comes to. Estimates of this program from ordinary proportions of
 # such housings, (low, nominal, high); a flange is the smallest.
@@ -186,8 +186,7 @@ def uncertain(case: Case) -> Iterator[tuple[str, float, float]]:
     yield "mixed_factor", friction.MIXED_FILM.low, friction.MIXED_FILM.high
     yield "ring_factor", heat_paths.RING.low, heat_paths.RING.high
     if case.bearing.seal == "contact seals":
-        seal = friction.SEAL_LINE_FRICTION
-        yield "seal_factor", seal.low / seal.nominal, seal.high / seal.nominal
+        yield "seal_factor", seal_friction.SEAL_RANGE.low, seal_friction.SEAL_RANGE.high
     if case.housing.frame_temperature is not None and case.housing.frame_conductance is None:
         joint = heat_paths.JOINT
         yield "frame_conductance", joint.low / joint.nominal, joint.high / joint.nominal

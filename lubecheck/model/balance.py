@@ -24,7 +24,6 @@ import numpy as np
 
 from lubecheck.data import air
 from lubecheck.model.points import Points
-from lubecheck.model.rows import seal_diameter
 from lubecheck.physics import churning, cooling, film, friction, heat_paths, loads, viscosity
 from lubecheck.units import Array
 
@@ -342,10 +341,7 @@ def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
         load_torque=load_torque,
         most_mixed=p.mixed_factor * load_torque,
         reference_viscosity=film.reference_viscosity.plain(p.speed, p.pitch_diameter),
-        seal_torque=p.seal_factor
-        * friction.seal_torque.plain(
-            seal_diameter(p.bore, p.outside), p.rubbing_seals, friction.SEAL_LINE_FRICTION.nominal
-        ),
+        seal_torque=p.seal_factor * p.seal_torque,
         held_volume=churning.held_volume.plain(
             fill=fill,
             free_volume=p.free_volume,

@@ -58,7 +58,7 @@ class Points:
     k_f: Array  # bearing type factor of GfT worksheet 3
     free_volume: Array
     is_sealed: Array  # shielded or sealed on both sides
-    rubbing_seals: Array
+    seal_torque: Array  # N mm, of rubbing seals
     # lubricant
     is_grease: Array
     walther_a: Array

@@ -1,7 +1,7 @@
 """Friction: the torque of a running bearing, without churning of surplus grease.
 
-Palmgren's two parts, one from the lubricant and one from the load, with the factors f0 and f1 of the bearing's series;
-what the kind of supply does to f0; and the rub of contact seals.
+Palmgren's two parts, one from the lubricant and one from the load, with the factors f0 and f1 of the bearing's series,
+and what the kind of supply does to f0. The rub of contact seals is in `seal_friction`.
 """
 
 from __future__ import annotations
@@ -55,10 +55,6 @@ Supply = Annotated[NDArray[np.intp], Choice(SUPPLIES)]
 Shaft = Annotated[NDArray[np.intp], Choice(SHAFTS)]
 
 _LUBRICATION = np.array([[LUBRICATION[supply, shaft].nominal for shaft in SHAFTS] for supply in SUPPLIES])
-
-# Line load of the lip times friction coefficient, N/mm. Estimate: nitrile lip 0.05 N/mm (0.03 to 0.1), coefficient 0.3
-# (0.2 to 0.5). It lands within 30 % of the two-seal torques of bearing handbooks for shoulders of 30 to 100 mm.
-SEAL_LINE_FRICTION = Factor(0.015, 0.0075, 0.03, "own-estimate", "new lips rub at the high end, run in at the low")
 
 # Boundary friction of steel in oil (0.08 to 0.12) is about twice the traction of a full film (0.03 to 0.06): the load
 # torque at most about doubles. Estimate.
@@ -152,27 +148,6 @@ def lubrication_factor(supply: Supply, shaft: Shaft) -> Number:
     """
     factor: Array = _LUBRICATION[supply, shaft]
     return factor
-
-
-@method(
-    source="own-estimate",
-    valid={"seal_diameter": (1.0, 1000.0), "seals": (0.0, 4.0), "line_friction": (0.001, 0.2)},
-)
-def seal_torque(seal_diameter: Mm, seals: Number, line_friction: Number) -> NMm:
-    """Friction torque of rubbing seals: the line friction of the lip over its circumference, at its radius.
-
-    seals x line friction x pi ds x ds/2. An estimate: nominal, low and high line friction stand in
-    `SEAL_LINE_FRICTION` (half to double). Shields and gap seals do not rub: seals = 0.
-
-    seal_diameter [mm]: diameter ds of the surface that the lip rubs on, any shape
-    seals [1]: number of rubbing lips, broadcasts
-    line_friction [1]: lip load times friction coefficient, in N a mm of circumference, broadcasts
-    returns [N*mm]
-
-    >>> seal_torque("60 mm", 2, 0.015).round(1)
-    <Quantity(169.6, 'newton * millimeter')>
-    """
-    return seals * line_friction * (math.pi / 2) * seal_diameter**2
 
 
 @method(source="own-estimate", valid={"viscosity_ratio": (0.0, 1e9)})

@@ -85,21 +85,6 @@ def test_an_unknown_supply_is_refused():
         friction.lubrication_factor("circulated", "vertical")
 
 
-# Bearing handbooks print the torque of the two seals of a deep groove bearing as k ds^2.25 + c N mm (memory: k 0.023
-# and c 2 for outside diameters up to 62 mm, 0.018 and 20 to 80 mm, 0.018 and 0 above 100 mm)
-@pytest.mark.parametrize(("shoulder", "k", "c"), [(30, 0.023, 2), (45, 0.018, 20), (60, 0.018, 0), (100, 0.018, 0)])
-def test_two_seals_rub_as_much_as_handbooks_say_within_the_stated_range(shoulder, k, c):
-    published = k * shoulder**2.25 + c
-    band = friction.SEAL_LINE_FRICTION
-    low, nominal, high = (friction.seal_torque.plain(shoulder, 2, q) for q in (band.low, band.nominal, band.high))
-    assert low < published < high
-    assert nominal == pytest.approx(published, rel=0.3)
-
-
-def test_shields_do_not_rub():
-    assert friction.seal_torque("60 mm", 0, 0.015).magnitude == 0
-
-
 def test_a_negative_speed_is_outside_the_range():
     with pytest.raises(OutOfRange):
         friction.no_load_torque(2.0, "20 mm^2/s", "-10 rpm", "60 mm")
