@@ -7,11 +7,14 @@ from __future__ import annotations
 
 import csv
 import functools
+from collections.abc import Iterable
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 
 from lubecheck.errors import TableError
+from lubecheck.physics import cooling
 from lubecheck.tables import path
 from lubecheck.units import Array
 
@@ -52,6 +55,16 @@ class AirProperties:
         return self.dynamic_viscosity * 1e6 / self.density
 
 
+@dataclass(frozen=True, slots=True)
+class AirFilm:
+    """What the convection laws take of air, with all that depends on its Prandtl number in two groups."""
+
+    kinematic_viscosity: Array  # mm^2/s
+    conductivity: Array  # W/(m*K)
+    rising: Array  # cooling.rising_group
+    blown: Array  # cooling.blown_group
+
+
 def properties(temperature: Array, pressure: Array) -> AirProperties:
     """Return the properties of air by linear interpolation in the table.
 
@@ -61,16 +74,45 @@ def properties(temperature: Array, pressure: Array) -> AirProperties:
     Density scales with pressure as an ideal gas; the other properties hardly depend on it. All are within 0.5 % of
     CoolProp from -40 to 200 degC and from sea level to 5000 m.
     """
-    first, steps_a_kelvin, last, columns = _table()
-    # One place in the evenly stepped table serves all columns: half the time of np.interp for each. The place is
-    # found with fmin and fmax so that a NaN cannot become an index; the fraction keeps it.
-    place = (np.asarray(temperature, dtype=np.float64) - first) * steps_a_kelvin
-    row = np.fmax(np.fmin(place, last - 1.0), 0.0).astype(np.intp)
-    fraction = np.clip(place, 0.0, last) - row
+    first, steps_a_kelvin, last, columns, _ = _table()
+    row, fraction = _place(temperature, first, steps_a_kelvin, last)
     density, viscosity, conductivity, prandtl, expansion = (
         column[row] + slope[row] * fraction for column, slope in columns
     )
     return AirProperties(density * (pressure / TABLE_PRESSURE), viscosity, conductivity, prandtl, expansion)
+
+
+def film(temperature: Array, pressure: Array) -> AirFilm:
+    """Return what the convection laws take of air, interpolated like `properties`: a step of the solve needs no more.
+
+    temperature [degC]: film temperature, any shape
+    pressure [MPa]: absolute pressure, broadcasts with temperature
+    """
+    first, steps_a_kelvin, last, _, columns = _table()
+    row, fraction = _place(temperature, first, steps_a_kelvin, last)
+    viscosity, conductivity, rising, blown = (column[row] + slope[row] * fraction for column, slope in columns)
+    return AirFilm(viscosity * (TABLE_PRESSURE / pressure), conductivity, rising, blown)
+
+
+def film_of(air: AirProperties) -> AirFilm:
+    """Return what the convection laws take of air whose properties are known."""
+    return AirFilm(
+        air.kinematic_viscosity_mm2,
+        air.conductivity,
+        cooling.rising_group(air.prandtl, air.expansion),
+        cooling.blown_group(air.prandtl),
+    )
+
+
+def _place(temperature: Array, first: float, steps_a_kelvin: float, last: float) -> tuple[NDArray[np.intp], Array]:
+    """Return the row of the table below a temperature and how far it is to the next.
+
+    One place in the evenly stepped table serves all columns: half the time of np.interp for each. It is found with
+    fmin and fmax so that a NaN cannot become an index; the fraction keeps it.
+    """
+    place = (np.asarray(temperature, dtype=np.float64) - first) * steps_a_kelvin
+    row = np.fmax(np.fmin(place, last - 1.0), 0.0).astype(np.intp)
+    return row, np.minimum(np.maximum(place, 0.0), last) - row
 
 
 def exact(temperature: Array, pressure: Array) -> AirProperties:
@@ -86,9 +128,15 @@ def exact(temperature: Array, pressure: Array) -> AirProperties:
     return AirProperties(ask("D"), ask("V"), ask("L"), ask("Prandtl"), ask("ISOBARIC_EXPANSION_COEFFICIENT"))
 
 
+Columns = tuple[tuple[Array, Array], ...]
+
+
 @functools.cache
-def _table() -> tuple[float, float, float, tuple[tuple[Array, Array], ...]]:
-    """Read the table: its first temperature, its rows a kelvin, its last row, and each column with its slope a row."""
+def _table() -> tuple[float, float, float, Columns, Columns]:
+    """Read the table: its first temperature, its rows a kelvin, its last row, and columns with their slopes a row.
+
+    The columns are first those of `AirProperties`, then those of `AirFilm`.
+    """
     with path(TABLE).open(encoding="utf-8", newline="") as lines:
         rows = list(csv.reader(line for line in lines if not line.startswith("#")))
     if tuple(rows[0]) != _HEADER:
@@ -98,6 +146,11 @@ def _table() -> tuple[float, float, float, tuple[tuple[Array, Array], ...]]:
     steps = np.diff(temperature)
     if not np.all(np.isfinite(values)) or np.any(steps <= 0) or np.any(steps != steps[0]):
         raise TableError(f"{TABLE}: the temperatures must rise in even steps, and every value be finite")
-    slopes = np.diff(values[1:])
-    columns = tuple((column[:-1], slope) for column, slope in zip(values[1:], slopes, strict=True))
-    return float(temperature[0]), float(1 / steps[0]), float(len(steps)), columns
+    whole = AirProperties(*values[1:])
+    made = film_of(whole)
+    laws = (made.kinematic_viscosity, made.conductivity, made.rising, made.blown)
+    return float(temperature[0]), float(1 / steps[0]), float(len(steps)), _sloped(values[1:]), _sloped(laws)
+
+
+def _sloped(columns: Iterable[Array]) -> Columns:
+    return tuple((column[:-1], np.diff(column)) for column in columns)

@@ -16,7 +16,7 @@ Everything is counted from the coldest sink, the floor: no node can be colder, s
 from __future__ import annotations
 
 import dataclasses
-from collections.abc import Callable, Mapping
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
 from typing import Any
 
@@ -28,6 +28,7 @@ from lubecheck.physics import churning, cooling, film, friction, heat_paths, loa
 from lubecheck.units import Array
 
 Air = Callable[[Array, Array], air.AirProperties]
+Film = Callable[[Array, Array], air.AirFilm]
 
 EMISSIVITY = 0.9  # painted, oily or rusted housing: handbooks, 0.85 to 0.95
 GREASE_CONSISTENCY = 1 / 15  # Pa s^0.5 a Pa of yield stress: 20 at 300 Pa (NLGI 2, representative)
@@ -36,6 +37,8 @@ HELD_TOGETHER = 1e12  # W/K: a stated temperature is that of the whole bearing
 USUAL_STILL = 11.0  # W/(m^2*K), of still air with radiation: for a first guess, as the next three
 USUAL_BLOWN = 4.0  # W/(m^2*K) for each m/s
 USUAL_RISE = 25.0  # K
+STILL_GROWTH = 0.22  # exponent of still air's conductance over its rise, as the next for a search's first step
+RADIATION_GROWTH = 0.0045  # 1/K, of radiation's conductance
 THINNING = 0.65  # exponent by which the rise follows the heat
 PATHS = ("air", "radiation", "stated", "free_shaft", "machine_shaft", "frame", "coolant", "oil")
 
@@ -93,7 +96,7 @@ class Flows:
 class Balance:
     """What does not depend on temperature, worked out once for every row."""
 
-    air: Air
+    film: Film
     floor: Array  # degC, the coldest sink
     ambient: Array
     pressure: Array
@@ -140,8 +143,8 @@ class Balance:
 
     def take(self, rows: Any) -> Balance:
         """Return the balance of some of the rows."""
-        taken = {f.name: getattr(self, f.name)[rows] for f in dataclasses.fields(self) if f.name != "air"}
-        return Balance(air=self.air, **taken)
+        taken = {f.name: getattr(self, f.name)[rows] for f in dataclasses.fields(self) if f.name != "film"}
+        return Balance(film=self.film, **taken)
 
     def at(self, rise: Array) -> Heat:
         """Evaluate the balance with the outer ring at a rise above the floor."""
@@ -204,6 +207,28 @@ class Balance:
             housing=housing,
         )
 
+    def slope(self, heat: Heat) -> Array:
+        """Return d ln(heat in / heat out) / d ln(rise), near enough for a step of a search to start with."""
+        # How the housing's conductance grows with its temperature, W/K^2: still air by the fourth root of its rise
+        # (`STILL_GROWTH`; a draught hardly), radiation by the cube of the temperature.
+        radiated = heat.radiation * self.cooling_factor * self.area
+        rising = np.where(self.forced > 0, 0.0, STILL_GROWTH) * (heat.housing - radiated)
+        over_air = heat.outer_rise - self.ambient_over
+        growth = rising / np.maximum(np.abs(over_air), 1.0) + RADIATION_GROWTH * radiated
+        growth = np.where(np.isnan(self.stated), growth, 0.0)
+        outside = heat.housing + growth * over_air
+        lubricant = 1.0 + (outside + self.steady_out) / self.ring
+        inside = self.machine_shaft + self.free_shaft
+        inner = lubricant * self.ring / (self.ring + inside)
+        # d ln(nu) / dT by ASTM D341
+        z = heat.viscosity + 0.7
+        thinning = -self.walther_b * np.log(z) * z / (heat.viscosity * (heat.lubricant + 273.15))
+        mixed = heat.mixed_torque * heat.viscosity / (self.reference_viscosity * -friction.MIXED_KAPPA)
+        torque = (heat.viscous_torque * (2 / 3) + mixed) * thinning - heat.churning_torque * churning.SOFTENING
+        heat_in = self.watt_a_torque * torque * lubricant + growth * self.ambient_over
+        heat_out = heat.housing + growth * heat.outer_rise + self.steady_out + inside * inner + self.oil * lubricant
+        return heat.outer_rise * (heat_in / heat.heat_in - heat_out / heat.heat_out)
+
     def guess(self) -> Array:
         """Return a first guess of the rise: the network with fixed conductances, and friction at a guessed warmth."""
         usual = self.cooling_factor * self.area * (USUAL_STILL + USUAL_BLOWN * self.forced)
@@ -256,23 +281,21 @@ class Balance:
 
     def _housing(self, outer: Array) -> tuple[Array, Array]:
         """Conductance of the housing to the ambient, W/K, and the coefficient of radiation, W/(m^2*K)."""
-        air_film = self.air((outer + self.ambient) / 2, self.pressure)
-        nu = air_film.kinematic_viscosity_mm2
-        still = cooling.natural_convection.plain(
+        found = self.film((outer + self.ambient) / 2, self.pressure)
+        still = cooling.rising_air(
             surface=outer,
             ambient=self.ambient,
             diameter=self.diameter,
-            kinematic_viscosity=nu,
-            conductivity=air_film.conductivity,
-            prandtl=air_film.prandtl,
-            expansion=air_film.expansion,
+            kinematic_viscosity=found.kinematic_viscosity,
+            conductivity=found.conductivity,
+            rising=found.rising,
         )
-        blown = cooling.forced_convection.plain(
+        blown = cooling.blown_air(
             velocity=self.forced,
             diameter=self.diameter,
-            kinematic_viscosity=nu,
-            conductivity=air_film.conductivity,
-            prandtl=air_film.prandtl,
+            kinematic_viscosity=found.kinematic_viscosity,
+            conductivity=found.conductivity,
+            blown=found.blown,
         )
         convection = cooling.mixed_convection.plain(natural=still, forced=blown)
         radiation = cooling.radiation.plain(surface=outer, surroundings=self.ambient, emissivity=EMISSIVITY)
@@ -295,6 +318,13 @@ class Balance:
             self.oil * (heat.lubricant_rise - self.oil_over),
         )
         return dict(zip(PATHS, paths, strict=True))
+
+
+def join(parts: Sequence[Balance]) -> Balance:
+    """Return the balances of several sets of rows in the same air as one."""
+    names = [f.name for f in dataclasses.fields(Balance) if f.name != "film"]
+    joined = {name: np.concatenate([getattr(part, name) for part in parts]) for name in names}
+    return Balance(film=parts[0].film, **joined)
 
 
 def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
@@ -326,7 +356,8 @@ def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
         floor = np.where(conductance > 0, np.minimum(floor, temperature), floor)
     warm = sum((conductance * (temperature - floor) for conductance, temperature in sinks), np.zeros(len(p)))
     return Balance(
-        air=air_properties,
+        # The laws of convection read their own columns of the table of air; any other air is asked for its properties.
+        film=air.film if air_properties is air.properties else lambda at, under: air.film_of(air_properties(at, under)),
         floor=floor,
         ambient=p.ambient,
         pressure=p.pressure,

@@ -15,13 +15,14 @@ other rows, few of them, are looked over from the root up to the top, and the ho
 from __future__ import annotations
 
 import dataclasses
-from collections.abc import Mapping
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from typing import Any
 
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model.balance import Air, Balance, Heat, balance_of
+from lubecheck.model.balance import Air, Balance, Heat, balance_of, join
 from lubecheck.model.points import Codes, Flags, Points
 from lubecheck.units import Array
 
@@ -36,7 +37,8 @@ NARROWEST = 4 * np.finfo(np.float64).eps  # of a bracket of ln(rise), relative: 
 LEAST_RISE = 1e-9  # K above the coldest sink: the lower end of the bracket
 FIRST_SLOPE = -1.5  # of ln(in/out) over ln(rise): 1.2 from heat out, the rest from viscosity
 CHUNK = 8_192  # rows that stay in the cache together
-COMPACT = 0.7  # share of open rows below which the others are set aside
+FIRST_STEPS = 4  # steps that all rows take, open or not: picking rows costs as much as an evaluation
+MORE_STEPS = 2  # steps between two pickings of what is open, from the sixth on
 LOOK_DOWN = 4.0  # of ln(rise), below a root: to a fiftieth of the rise
 LOOKS = 48  # places between root and top where a row with a mixed film is looked at
 
@@ -120,25 +122,17 @@ def solve(points: Points, air_properties: Air = air.properties) -> Equilibrium:
 
 def _roots(balance: Balance) -> tuple[Heat, Flags, Flags, Flags, int]:
     """Return the balance of every row at its root; if that was found, is too hot, is the only one; and the steps."""
-    parts = []
-    for start in range(0, len(balance), CHUNK):
-        few = balance.take(slice(start, start + CHUNK)) if len(balance) > CHUNK else balance
-        low, high = np.full(len(few), np.log(LEAST_RISE)), np.log(TOP_TEMPERATURE - few.floor)
-        heat, is_found, is_lost, steps = _root(few, low, high)
-        is_only = np.ones(len(few), dtype=bool)
-        doubtful = np.flatnonzero(is_found & ~_is_certain(few, heat))
-        if len(doubtful):
-            lowest = np.log(heat.outer_rise[doubtful])
-            others, hotter, is_other = _others(few.take(doubtful), lowest, high[doubtful])
-            is_only[doubtful] = ~is_other
-            if hotter is not None:
-                _put(heat, doubtful[others], hotter)
-        parts.append((heat, is_found, is_lost, is_only, steps))
-    heats, founds, lost, onlys, steps_taken = zip(*parts, strict=True)
-    whole = heats[0] if len(heats) == 1 else Heat(
-        **{f.name: np.concatenate([getattr(heat, f.name) for heat in heats]) for f in dataclasses.fields(Heat)}
-    )  # fmt: skip
-    return whole, np.concatenate(founds), np.concatenate(lost), np.concatenate(onlys), max(steps_taken)
+    low, high = np.full(len(balance), np.log(LEAST_RISE)), np.log(TOP_TEMPERATURE - balance.floor)
+    heat, is_found, is_lost, steps = _root(balance, low, high)
+    is_only = np.ones(len(balance), dtype=bool)
+    doubtful = np.flatnonzero(is_found & ~_is_certain(balance, heat))
+    for start in range(0, len(doubtful), CHUNK // LOOKS):
+        few = doubtful[start : start + CHUNK // LOOKS]
+        others, hotter, is_other = _others(balance.take(few), np.log(heat.outer_rise[few]), high[few])
+        is_only[few] = ~is_other
+        if hotter is not None:
+            _put(heat, few[others], hotter)
+    return heat, is_found, is_lost, is_only, steps
 
 
 def _surplus(heat: Heat) -> Array:
@@ -153,69 +147,133 @@ def _put(whole: Heat, rows: Codes, part: Heat) -> None:
         getattr(whole, item.name)[rows] = getattr(part, item.name)
 
 
+@dataclass(slots=True)
+class _Search:
+    """Rows on the way to their roots, in ln(rise): the bracket, where to look next, and what was seen last."""
+
+    balance: Balance
+    rows: Codes  # of the whole
+    low: Array
+    high: Array
+    top: Array  # the untried upper end
+    x: Array
+    x_old: Array
+    y_old: Array
+    slope_old: Array  # dx/dy between the last two points
+    y_older: Array
+
+    def part(self, rows: Any) -> _Search:
+        """Return some of the rows."""
+        taken = {f.name: getattr(self, f.name)[rows] for f in dataclasses.fields(self) if f.name != "balance"}
+        return _Search(self.balance.take(rows), **taken)
+
+
+def _together(parts: Sequence[_Search]) -> _Search:
+    """Return the rows of several searches as one."""
+    if len(parts) == 1:
+        return parts[0]
+    columns = {f.name: np.concatenate([getattr(part, f.name) for part in parts])
+               for f in dataclasses.fields(_Search) if f.name != "balance"}  # fmt: skip
+    return _Search(join([part.balance for part in parts]), **columns)
+
+
 def _root(balance: Balance, low: Array, high: Array) -> tuple[Heat, Flags, Flags, int]:
     """Return the balance where heat in equals heat out, between two bounds of ln(rise); if it was found; and steps.
 
-    The third is true where more heat comes in than leaves even at the upper bound, so that there is none below.
+    The third is true where more heat comes in than leaves even at the upper bound, so that there is none below. The
+    rows go through the first steps chunk by chunk, all of them; what is still open then is set together and goes on.
     """
-    rows = np.arange(len(balance))
+    whole = Heat(**{f.name: np.empty(len(balance)) for f in dataclasses.fields(Heat)})
     found, lost = np.zeros(len(balance), dtype=bool), np.zeros(len(balance), dtype=bool)
-    whole: Heat | None = None
-    top = high
-    guess = np.log(np.maximum(balance.guess(), LEAST_RISE))
-    x = np.where((guess > low) & (guess < high), guess, (low + 3 * high) / 4)
-    x_old = y_old = x_older = y_older = np.full(len(x), np.nan)
-    steps = 0
-    for steps in range(1, MOST_STEPS + 1):
-        rise = np.exp(x)
-        heat = balance.at(rise)
-        whole = heat if whole is None else whole
+    none = np.full(len(balance), np.nan)
+    search = _Search(balance, np.arange(len(balance)), low, high, high, none, none, none, none, none)
+    steps = last = 0
+    while len(search.x) and steps < MOST_STEPS:
+        more = FIRST_STEPS if steps == 0 else 1 if steps == FIRST_STEPS else MORE_STEPS
+        open_parts = []
+        for start in range(0, len(search.x), CHUNK):
+            part = search.part(slice(start, start + CHUNK)) if len(search.x) > CHUNK else search
+            is_open, taken = _advance(part, steps, more, whole, found, lost)
+            last = max(last, taken)
+            if is_open.any():
+                open_parts.append(part.part(np.flatnonzero(is_open)))
+        steps += more
+        if not open_parts:
+            break
+        search = _together(open_parts)
+    return whole, found, lost, last
+
+
+def _advance(search: _Search, before: int, more: int, whole: Heat, found: Flags, lost: Flags) -> tuple[Flags, int]:
+    """Take some steps with every row of a search, note what was found or lost; return which are open, and the steps."""
+    s, balance = search, search.balance
+    is_open = np.ones(len(s.x), dtype=bool)
+    if before == 0:
+        guess = np.log(np.maximum(balance.guess(), LEAST_RISE))
+        s.x = np.where((guess > s.low) & (guess < s.high), guess, (s.low + 3 * s.high) / 4)
+    for step in range(before + 1, before + more + 1):
+        heat = balance.at(np.exp(s.x))
         y = _surplus(heat)
         surplus = np.abs(heat.heat_in - heat.heat_out)
         is_done = surplus <= TOLERANCE * heat.friction_power + ROUNDING * heat.heat_in
-        # Where great flows pass by a little friction, the balance is closed when no number lies between.
-        is_done |= (high - low <= NARROWEST * np.maximum(np.abs(low), np.abs(high))) & (
-            surplus <= TOLERANCE * heat.heat_in
-        )
-        is_lost = (x == top) & (y > 0)  # too cool even at the top: there is no root below
-        if (is_done | is_lost).any():
-            ended = is_done | is_lost
-            found[rows[is_done]] = True
-            lost[rows[is_lost & ~is_done]] = True
-            if heat is not whole:
-                _put(whole, rows[ended], heat.take(ended))
-            if ended.all():
-                break
-        low, high = np.where(y > 0, x, low), np.where(y > 0, high, x)
-        step = _step(x, y, x_old, y_old, x_older, y_older)
-        # A step over the untried top goes to the top itself; any other that leaves the bracket halves it.
-        middle = np.where((step >= high) & (high == top), top, (low + high) / 2)
-        new = np.where((step > low) & (step < high) & (steps < SEARCH_STEPS), step, middle)
-        is_open = ~(is_done | is_lost)
-        x_older, y_older, x_old, y_old = x_old, y_old, x, y
-        x = np.where(is_open, new, x)
-        if is_open.mean() < COMPACT:
-            keep = np.flatnonzero(is_open)
-            balance, rows = balance.take(keep), rows[keep]
-            low, high, top, x, x_old, y_old, x_older, y_older = (
-                array[keep] for array in (low, high, top, x, x_old, y_old, x_older, y_older)
+        if step > FIRST_STEPS:
+            # Where great flows pass by a little friction, the balance is closed when no number lies between.
+            is_done |= (s.high - s.low <= NARROWEST * np.maximum(np.abs(s.low), np.abs(s.high))) & (
+                surplus <= TOLERANCE * heat.heat_in
             )
-    assert whole is not None  # there is a first step
-    return whole, found, lost, steps
+        is_lost = (s.x == s.top) & (y > 0) & ~is_done  # too cool even at the top: there is no root below
+        ended = (is_done | is_lost) & is_open
+        if step == 1:
+            _keep(whole, s.rows, heat, None)
+        elif ended.any():
+            _keep(whole, s.rows, heat, ended)
+        found[s.rows[ended & is_done]] = True
+        lost[s.rows[ended & is_lost]] = True
+        is_open &= ~ended
+        if not is_open.any():
+            return is_open, step
+        s.low, s.high = np.where(y > 0, s.x, s.low), np.where(y > 0, s.high, s.x)
+        if step == 1:
+            slope = 1 / balance.slope(heat)
+            target = s.x - y * np.where(slope < 0, slope, 1 / FIRST_SLOPE)  # false for NaN too
+            s.y_old = y  # the slope at one point is that between two which coincide
+        else:
+            target, slope = _step(s.x, y, s.x_old, s.y_old, s.slope_old, s.y_older)
+        # A step over the untried top goes to the top itself; any other that leaves the bracket halves it.
+        middle = np.where((target >= s.high) & (s.high == s.top), s.top, (s.low + s.high) / 2)
+        new = np.where((target > s.low) & (target < s.high) & (step < SEARCH_STEPS), target, middle)
+        s.x_old, s.y_older, s.y_old, s.slope_old = s.x, s.y_old, y, slope
+        s.x = np.where(is_open, new, s.x)
+    return is_open, before + more
 
 
-def _step(x: Array, y: Array, x_old: Array, y_old: Array, x_older: Array, y_older: Array) -> Array:
+def _keep(whole: Heat, rows: Codes, heat: Heat, ended: Flags | None) -> None:
+    """Set the rows that have ended, or all, from an evaluation."""
+    if len(rows) and rows[-1] - rows[0] == len(rows) - 1:  # rows are in rising order: they lie side by side
+        side_by_side = slice(rows[0], rows[-1] + 1)
+        for item in dataclasses.fields(Heat):
+            np.copyto(
+                getattr(whole, item.name)[side_by_side],
+                getattr(heat, item.name),
+                where=True if ended is None else ended,
+            )
+    else:
+        _put(whole, rows if ended is None else rows[ended], heat if ended is None else heat.take(ended))
+
+
+def _step(x: Array, y: Array, x_old: Array, y_old: Array, slope_old: Array, y_older: Array) -> tuple[Array, Array]:
     """Return where the curve through the last three points meets zero, or through two, or through one with a slope.
 
-    x as a parabola over y, since y over x is nearly straight.
+    x as a parabola over y, since y over x is nearly straight; and the slope dx/dy between the last two points, of
+    which the next step makes its parabola.
     """
     slope = (x - x_old) / (y - y_old)
-    slope = np.where(slope < 0, slope, 1 / FIRST_SLOPE)  # false for NaN too
-    secant = x - y * slope
-    bend = (slope - (x_old - x_older) / (y_old - y_older)) / (y - y_older)
+    usable = np.where(slope < 0, slope, 1 / FIRST_SLOPE)  # false for NaN too
+    secant = x - y * usable
+    bend = (usable - slope_old) / (y - y_older)
     bent = secant + bend * y * y_old
     # A bend that moves the step by more than half of its length is none of this curve's.
-    return np.where(np.abs(bent - secant) <= 0.5 * np.abs(secant - x), bent, secant)
+    return np.where(np.abs(bent - secant) <= 0.5 * np.abs(secant - x), bent, secant), slope
 
 
 def _is_certain(balance: Balance, heat: Heat) -> Flags:

@@ -178,10 +178,15 @@ def _verdict(judged: Mapping[str, Judged]) -> tuple[Codes, Codes]:
     The governing limit is the one with the greatest use; where the verdict is `unknown`, the first that could not be
     judged.
     """
-    states = np.stack([np.where(limit.applies, limit.state, limits.WITHIN) for limit in judged.values()])
-    uses = np.stack([np.where(limit.applies, limit.use, -1.0) for limit in judged.values()])
-    verdict = states.max(axis=0)
-    known = np.where(np.isnan(uses), -1.0, uses)
-    greatest = known.argmax(axis=0)
-    first_unknown = (states == limits.UNKNOWN).argmax(axis=0)
+    some = next(iter(judged.values())).use
+    verdict = np.full(some.shape, limits.WITHIN, dtype=np.intp)
+    greatest, first_unknown = np.zeros_like(verdict), np.full_like(verdict, -1)
+    most = np.full(some.shape, -1.0)
+    for place, limit in enumerate(judged.values()):
+        state = np.where(limit.applies, limit.state, limits.WITHIN)
+        verdict = np.maximum(verdict, state)
+        is_greater = limit.applies & (limit.use > most)  # false for NaN
+        most = np.where(is_greater, limit.use, most)
+        greatest = np.where(is_greater, place, greatest)
+        first_unknown = np.where((state == limits.UNKNOWN) & (first_unknown < 0), place, first_unknown)
     return verdict, np.where(verdict == limits.UNKNOWN, first_unknown, greatest)

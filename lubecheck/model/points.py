@@ -143,6 +143,8 @@ class Points:
     @property
     def starts(self) -> Codes:
         """The first row of each position."""
+        if self.cases == len(self):
+            return np.arange(len(self))
         return np.flatnonzero(np.r_[True, np.diff(self.case) > 0])
 
     def changed(self, **values: Any) -> Points:
