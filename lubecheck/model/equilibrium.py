@@ -8,8 +8,9 @@ the rows beside it.
 
 How many roots: heat out rises at least in proportion to the rise; viscous torque and churning fall with temperature.
 Only the mixed film makes heat rise with temperature, by at most 1/e of `most_mixed` times the steepness of viscosity
-over ln(rise). Where that bound is below the heat that flows, the root is the only one that is as hot or hotter. The
-other rows, few of them, are looked over from the root up to the top, and the hottest root is taken: the cautious one.
+over ln(rise), and by less where the film is thin already. Where that bound is below the heat that flows, the root is
+the only one that is as hot or hotter. The other rows, few of them, are looked over from the root up to the top, and the
+hottest root is taken: the cautious one.
 """
 
 from __future__ import annotations
@@ -24,6 +25,7 @@ import numpy as np
 from lubecheck.data import air
 from lubecheck.model.balance import Air, Balance, Heat, balance_of, join
 from lubecheck.model.points import Codes, Flags, Points
+from lubecheck.physics import friction
 from lubecheck.units import Array
 
 __all__ = ["Air", "Equilibrium", "solve"]
@@ -279,14 +281,17 @@ def _step(x: Array, y: Array, x_old: Array, y_old: Array, slope_old: Array, y_ol
 def _is_certain(balance: Balance, heat: Heat) -> Flags:
     """Return where no hotter root can be: the mixed film's heat cannot grow as fast as what leaves.
 
-    Over ln(rise) its torque grows by at most most_mixed / e times -d ln(nu) / d ln(rise), which is
+    Over ln(rise) its torque grows by most_mixed s exp(-s), s = kappa / MIXED_KAPPA, times -d ln(nu) / d ln(rise). The
+    first is at most 1/e, and where s is below 1 already it only falls on the way up. The second is
     B ln(Z) Z / (Z - 0.7) rise / T with the constants of ASTM D341: ln(Z) is greatest at the root itself, rise / T at
     the top.
     """
+    s = np.minimum(heat.viscosity / (balance.reference_viscosity * friction.MIXED_KAPPA), 1.0)
+    growth = balance.most_mixed * s * np.exp(-s)
     z = heat.viscosity + 0.7
     top = (TOP_TEMPERATURE - balance.floor) / (TOP_TEMPERATURE + 273.15)
     steepness = balance.walther_b * np.log(z) * z / heat.viscosity * top
-    certain: Flags = balance.watt_a_torque * balance.most_mixed / np.e * steepness < heat.heat_out
+    certain: Flags = balance.watt_a_torque * growth * steepness < heat.heat_out
     return certain
 
 
