@@ -104,7 +104,6 @@ class Balance:
     watt_a_torque: Array
     walther_a: Array
     walther_b: Array
-    millipascal: Array  # mPa s a mm^2/s
     viscous_factor: Array  # on Palmgren's viscous torque at f0 1
     pitch_diameter: Array
     equivalent_load: Array
@@ -114,9 +113,8 @@ class Balance:
     seal_torque: Array
     held_volume: Array
     free_volume: Array
-    shear_rate: Array
-    yield_stress: Array
-    churning_factor: Array
+    soap_churning: Array  # N mm a cm^3 of it, of yield stress and power law at 25 degC
+    oil_churning: Array  # N mm a cm^3 of it and a mm^2/s of its base oil
     ring: Array  # W/K, between a ring and the lubricant
     area: Array  # m^2
     diameter: Array  # mm, of a cylinder as long as it is wide with that area
@@ -261,23 +259,14 @@ class Balance:
         return nu, viscous, mixed, self._churned(temperature, nu, viscous)
 
     def _churned(self, temperature: Array, nu: Array, viscous: Array) -> Array:
-        churned = np.zeros_like(nu)
-        rows = np.flatnonzero(self.held_volume > 0)  # most positions hold none
-        if len(rows):
-            soft = self.yield_stress[rows] * churning.softening.plain(temperature[rows])
-            stress = churning.shear_stress.plain(
-                self.shear_rate[rows],
-                yield_stress=soft,
-                consistency=soft * GREASE_CONSISTENCY,
-                base_viscosity=nu[rows] * self.millipascal[rows],
-            )
-            sheared = churning.shear_power.plain(self.held_volume[rows], self.shear_rate[rows], stress)
-            churned[rows] = churning.held_to_range.plain(
-                churning_torque=self.churning_factor[rows] * sheared / self.watt_a_torque[rows],
-                run_in_torque=viscous[rows],
-                packed=churning.packed_share.plain(held=self.held_volume[rows], free_volume=self.free_volume[rows]),
-            )
-        return churned
+        if not (self.held_volume > 0).any():  # most positions hold none
+            return np.zeros_like(nu)
+        a_volume = churning.softening.plain(temperature) * self.soap_churning + nu * self.oil_churning
+        return churning.held_to_range.plain(
+            churning_torque=self.held_volume * a_volume,
+            run_in_torque=viscous,
+            packed=churning.packed_share.plain(held=self.held_volume, free_volume=self.free_volume),
+        )
 
     def _housing(self, outer: Array) -> tuple[Array, Array]:
         """Conductance of the housing to the ambient, W/K, and the coefficient of radiation, W/(m^2*K)."""
@@ -365,7 +354,6 @@ def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
         watt_a_torque=friction.power.plain(1.0, p.speed),
         walther_a=p.walther_a,
         walther_b=p.walther_b,
-        millipascal=p.density * 1e-3,  # mm^2/s times kg/m^3 is 1e-3 mPa s
         viscous_factor=p.f0_factor * p.f0,
         pitch_diameter=p.pitch_diameter,
         equivalent_load=equivalent,
@@ -382,9 +370,8 @@ def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
             passage=p.passage,
         ),
         free_volume=p.free_volume,
-        shear_rate=churning.shear_rate.plain(p.speed, bore=p.bore, outside=p.outside),
-        yield_stress=p.yield_stress,
-        churning_factor=p.churning_factor,
+        soap_churning=_churning_a_volume(p, p.yield_stress, 0.0),
+        oil_churning=_churning_a_volume(p, 0.0, p.density * 1e-3),  # mm^2/s times kg/m^3 is 1e-3 mPa s
         ring=np.where(
             np.isnan(p.held_temperature),
             p.ring_factor * heat_paths.ring_conductance.plain(p.speed, pitch_diameter=p.pitch_diameter, width=p.width),
@@ -410,6 +397,20 @@ def balance_of(points: Points, air_properties: Air = air.properties) -> Balance:
         steady_out=p.frame_conductance + p.coolant_conductance,
         steady_in=warm + p.machine_heat + p.solar_heat,
     )
+
+
+def _churning_a_volume(points: Points, yield_stress: Any, base_viscosity: Any) -> Array:
+    """Torque that shears a cm^3 of held grease, N mm: linear in its yield stress and its base oil's viscosity."""
+    p = points
+    rate = churning.shear_rate.plain(p.speed, bore=p.bore, outside=p.outside)
+    stress = churning.shear_stress.plain(
+        rate,
+        yield_stress=yield_stress,
+        consistency=yield_stress * GREASE_CONSISTENCY,
+        base_viscosity=base_viscosity,
+    )
+    power: Array = churning.shear_power.plain(1.0, rate, stress)
+    return p.churning_factor * power / friction.power.plain(1.0, p.speed)
 
 
 def _load_factor(points: Points) -> Array:

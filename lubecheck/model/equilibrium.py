@@ -143,7 +143,7 @@ def _surplus(heat: Heat) -> Array:
     return np.where(heat.heat_out <= 0, np.inf, np.log(heat.heat_in / heat.heat_out))
 
 
-def _put(whole: Heat, rows: Codes, part: Heat) -> None:
+def _put(whole: Heat, rows: Any, part: Heat) -> None:
     """Set some rows of an evaluation from another one."""
     for item in dataclasses.fields(Heat):
         getattr(whole, item.name)[rows] = getattr(part, item.name)
@@ -225,13 +225,12 @@ def _advance(search: _Search, before: int, more: int, whole: Heat, found: Flags,
             )
         is_lost = (s.x == s.top) & (y > 0) & ~is_done  # too cool even at the top: there is no root below
         ended = (is_done | is_lost) & is_open
-        if step == 1:
-            _keep(whole, s.rows, heat, None)
-        elif ended.any():
-            _keep(whole, s.rows, heat, ended)
         found[s.rows[ended & is_done]] = True
         lost[s.rows[ended & is_lost]] = True
         is_open &= ~ended
+        if step == before + more or not is_open.any():
+            # What ended before stays where it is, so that this evaluation is its own too.
+            _put(whole, _side_by_side(s.rows), heat)
         if not is_open.any():
             return is_open, step
         s.low, s.high = np.where(y > 0, s.x, s.low), np.where(y > 0, s.high, s.x)
@@ -249,18 +248,9 @@ def _advance(search: _Search, before: int, more: int, whole: Heat, found: Flags,
     return is_open, before + more
 
 
-def _keep(whole: Heat, rows: Codes, heat: Heat, ended: Flags | None) -> None:
-    """Set the rows that have ended, or all, from an evaluation."""
-    if len(rows) and rows[-1] - rows[0] == len(rows) - 1:  # rows are in rising order: they lie side by side
-        side_by_side = slice(rows[0], rows[-1] + 1)
-        for item in dataclasses.fields(Heat):
-            np.copyto(
-                getattr(whole, item.name)[side_by_side],
-                getattr(heat, item.name),
-                where=True if ended is None else ended,
-            )
-    else:
-        _put(whole, rows if ended is None else rows[ended], heat if ended is None else heat.take(ended))
+def _side_by_side(rows: Codes) -> Any:
+    """Return rows in rising order as a slice where there is none between them: much faster to set."""
+    return slice(rows[0], rows[-1] + 1) if rows[-1] - rows[0] == len(rows) - 1 else rows
 
 
 def _step(x: Array, y: Array, x_old: Array, y_old: Array, slope_old: Array, y_older: Array) -> tuple[Array, Array]:

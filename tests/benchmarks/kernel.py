@@ -22,16 +22,16 @@ from scipy.optimize import brentq, elementwise
 
 from lubecheck.data import air
 from lubecheck.model import equilibrium
-from lubecheck.model.balance import EMISSIVITY, GREASE_CONSISTENCY, HOTTEST_LUBRICANT, Balance, balance_of
+from lubecheck.model.balance import EMISSIVITY, HOTTEST_LUBRICANT, Balance, balance_of
 from lubecheck.model.kernel import judge
 from lubecheck.physics import churning, cooling, friction, viscosity
 
 ROWS = 100_000
 FEW = 300  # rows of the loops, which are too slow for more
 SCALARS = [
-    "floor", "ambient", "speed", "watt_a_torque", "walther_a", "walther_b", "millipascal", "viscous_factor",
+    "floor", "ambient", "speed", "watt_a_torque", "walther_a", "walther_b", "viscous_factor",
     "pitch_diameter", "load_torque", "most_mixed", "reference_viscosity", "seal_torque", "held_volume", "free_volume",
-    "shear_rate", "yield_stress", "churning_factor", "ring", "area", "diameter", "forced", "stated", "cooling_factor",
+    "soap_churning", "oil_churning", "ring", "area", "diameter", "forced", "stated", "cooling_factor",
     "solar_heat", "machine_heat", "free_shaft", "machine_shaft", "frame", "coolant", "oil", "ambient_over",
     "shaft_over", "frame_over", "coolant_over", "steady_out", "steady_in", "pressure",
 ]  # fmt: skip
@@ -68,9 +68,10 @@ def scalar_viscosity(a: float, b: float, temperature: float) -> float:
 
 def scalar_balance(balance: Balance, i: int) -> Callable[[float], float]:
     """Return heat in less heat out of one row over its rise, written with `math` alone: what a plain program has."""
-    (floor, ambient, speed, watt, wa, wb, mpas, f0, dm, load, most_mixed, nu_1, seal, held, free_volume, rate,
-     yield_stress, churn_factor, ring, area, diameter, forced, stated, cooling_factor, solar, machine_heat, free, shaft, frame,
-     coolant, oil, ambient_over, shaft_over, frame_over, coolant_over, steady_out, steady_in, pressure) = (
+    (floor, ambient, speed, watt, wa, wb, f0, dm, load, most_mixed, nu_1, seal, held, free_volume,
+     soap_churning, oil_churning, ring, area, diameter, forced, stated, cooling_factor, solar, machine_heat, free,
+     shaft, frame, coolant, oil, ambient_over, shaft_over, frame_over, coolant_over, steady_out, steady_in,
+     pressure) = (
         float(getattr(balance, name)[i]) for name in SCALARS)  # fmt: skip
     size = diameter * 1e-3
     inside = shaft + free
@@ -105,9 +106,8 @@ def scalar_balance(balance: Balance, i: int) -> Callable[[float], float]:
         mixed = most_mixed * math.exp(-thick / nu_1 / friction.MIXED_KAPPA)
         churned = 0.0
         if held > 0:
-            soft = yield_stress * math.exp((temperature - churning.REFERENCE) * -churning.SOFTENING)
-            stress = soft + soft * GREASE_CONSISTENCY * math.sqrt(rate) + thick * mpas / 1000 * rate
-            churned = churn_factor * held * 1e-6 * stress * rate / watt
+            soft = math.exp((temperature - churning.REFERENCE) * -churning.SOFTENING)
+            churned = held * (soft * soap_churning + thick * oil_churning)
             churned = min(
                 max(churned, churning.LEAST_CHURNING * held / ((1 - churning.CLEAR_SHARE) * free_volume) * viscous),
                 churning.MOST_CHURNING * viscous,

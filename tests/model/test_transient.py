@@ -110,7 +110,7 @@ def test_the_lumped_position_cools_as_newton_says():
     points = points.changed(
         speed=0.1, radial_load=1.0, axial_load=0.0, f0=1e-6, fill=0.1, conductance=2.0, machine_heat=0.0,
         solar_heat=0.0, shaft_conductance=0.0, frame_conductance=0.0, coolant_conductance=0.0, oil_conductance=0.0,
-        rubbing_seals=0.0,
+        seal_torque=0.0,
     )  # fmt: skip
     hot = points.ambient + 40
     lump = Course(points=points, inner=hot, lubricant=hot, outer=hot, housing_mass=np.full(n, 3e6), fresh=gone,
