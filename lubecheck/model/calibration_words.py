@@ -131,6 +131,11 @@ def _notes(case: Case, found: Calibration) -> tuple[str, ...]:
             f"a reading {min(times):g} h after greasing is not steady: the rise after greasing is gone after about "
             f"{SETTLED_AFTER_GREASING:g} h; if that time counts from a start it has settled"
         )
+    if found.is_explained:
+        said.append(
+            "what [measured] leaves out is read from the rest of the case: after a change there, say in [measured] "
+            "how it was at the reading, or measure again"
+        )
     return tuple(said)
 
 

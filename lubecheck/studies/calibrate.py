@@ -158,7 +158,10 @@ class Fit:
         return x
 
     def ends(self, points: Points, x: float, rest: float, rise: float) -> tuple[float, float]:
-        """Return where the sum of squares, `rest` at its least, has risen by so much to each side."""
+        """Return where the sum of squares, `rest` at its least, has risen by so much to each side.
+
+        A reading that is coarser than the estimate takes nothing from it: no end lies beyond what could be believed.
+        """
         two = join([points] * 2)
 
         def surplus(at: Array) -> Array:
@@ -167,7 +170,8 @@ class Fit:
 
         least, most = self.unknown.range
         found, _ = roots(surplus, np.array([least, x]), np.array([x, most]))
-        return float(found[0]), float(found[1])
+        low, high = self.unknown.believed
+        return max(float(found[0]), min(low, x)), min(float(found[1]), max(high, x))
 
 
 def _calibration(case: Case, air_properties: Air) -> Calibration:
@@ -189,7 +193,9 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
     chi_square = None if count == 1 else float(squares * NORMAL_95**2)
     scale = 1.0 if chi_square is None else max(1.0, float(np.sqrt(chi_square / (count - 1))))
     is_reached = count > 1 or bool(np.abs(after[0] - sensors.temperature[0]) <= sensors.error[0])
-    is_explained = is_reached and bool(((after >= lowest) & (after <= highest)).all())
+    # Each reading has to lie where the estimate can be, and so has the curve that is fitted through them.
+    is_inside = [((at >= lowest) & (at <= highest)).all() for at in (sensors.temperature, after)]
+    is_explained = is_reached and all(is_inside)
     edges = fit.each(join([usual, usual]), np.stack([lowest, highest])).mean(axis=1)
     ends = fit.ends(usual, float(x[0]), squares if count > 1 else 0.0, scale**2) if is_explained else (x[0], x[0])
     values = unknown.value(x)

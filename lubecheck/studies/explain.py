@@ -27,10 +27,10 @@ from lubecheck.studies.calibrate import Sensors
 from lubecheck.studies.roots import roots
 from lubecheck.units import Array
 
-USUAL_FILLS = (0.2, 0.6)  # share of the free volume: handbooks ask for 0.25 to 0.5, and what was given on top
+USUAL_FILLS = (0.2, 0.8)  # share of the free volume, as found in service where grease is pumped until it shows
 SHAFT_RISE = 60.0  # K over the air of a shaft that nobody measured: a motor's rotor side at rated load
 SHAFT_KNOWN = 10.0  # K that a stated shaft temperature may be off
-HEAT_KNOWN = 0.2  # of stated watts
+HEAT_KNOWN = 0.2  # of stated watts; of the friction where they are stated to be none
 AIR_KNOWN = 5.0  # K that the air at the housing may differ from the stated ambient
 STRONG_DRAUGHT = 3.0  # m/s at a housing that nobody blows at
 PRELOAD = 0.02  # of the dynamic rating: springs and matched pairs of electric motors and spindles stay below
@@ -137,7 +137,8 @@ def _of_heat(state: Case, row: Points, is_hot: bool, air_properties: Air) -> Ite
         )
     )
     if is_hot or shaft is not None:
-        usual = (ambient, ambient + SHAFT_RISE) if shaft is None else (shaft - SHAFT_KNOWN, shaft + SHAFT_KNOWN)
+        rise = SHAFT_RISE if housing.machine_heat is None else SHAFT_KNOWN  # its heat was said in watts
+        usual = (ambient, ambient + rise) if shaft is None else (shaft - SHAFT_KNOWN, shaft + SHAFT_KNOWN)
         yield Try(
             "shaft temperature", "degC", ambient if shaft is None else shaft,
             HOTTEST_SHAFT if is_hot else COLDEST_AIR, usual,
@@ -147,11 +148,12 @@ def _of_heat(state: Case, row: Points, is_hot: bool, air_properties: Air) -> Ite
     watts = housing.machine_heat or 0.0
     if is_hot or watts > 0:
         friction = float(solve(row, air_properties).friction_power[0])
-        stated = ((1 - HEAT_KNOWN) * watts, (1 + HEAT_KNOWN) * watts)
+        friction = friction if math.isfinite(friction) else 1.0
+        spread = HEAT_KNOWN * (watts or friction)
+        usual = (0.0, friction) if housing.machine_heat is None else (watts - spread, watts + spread)
         beside = "" if shaft is None else " besides what the shaft brings"
         yield Try(
-            "machine heat", "W", watts, MOST_WATTS if is_hot else 0.0,
-            stated if watts > 0 else (0.0, friction if math.isfinite(friction) else 1.0),
+            "machine heat", "W", watts, MOST_WATTS if is_hot else 0.0, usual,
             lambda p, heat: p.changed(machine_heat=heat),
             lambda heat: f"{heat:.3g} W of heat from the machine{beside}",
         )  # fmt: skip
