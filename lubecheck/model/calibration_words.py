@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+import math
+
 from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
 from lubecheck.model.calibration import COOLING, Calibrated, Calibration, CalibrationFigures
 from lubecheck.model.entries import Case
@@ -66,7 +68,9 @@ def unexplained(found: Calibration) -> str:
     """Say that no admissible cooling, or fill, gives what was measured."""
     figures = max((point.figures.figures for point in found.points), key=lambda one: abs(one["residual"].value or 0.0))
     least, most = found.admissible
-    if found.column == COOLING:
+    if not math.isfinite(found.value):
+        needed = "a balance of heat, which was not found"
+    elif found.column == COOLING:
         needed = f"cooling {found.value:.2g} times the estimate, where {least:.2g} to {most:.2g} can be believed"
     else:
         needed = f"no fill from {least * 100:.0f} to {most * 100:.0f} %"

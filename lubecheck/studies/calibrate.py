@@ -257,6 +257,8 @@ def _conductance(points: Points, air_properties: Air) -> float | None:
 
 
 def _measured(sensors: Sensors, before: Array, after: Array) -> tuple[MeasuredPoint, ...]:
+    # A state without an equilibrium has no temperature to be shown.
+    before, after = (np.where(at >= TOP_TEMPERATURE, np.nan, at) for at in (before, after))
     return tuple(
         MeasuredPoint(
             place,
