@@ -156,4 +156,6 @@ def _many(count: int) -> str:
 
 def _span(band: Band) -> str:
     value, low, high = band
-    return f"{low:.0f} to {high:.0f} degC" if value == value else "not found"
+    if not math.isfinite(value):
+        return "not found"
+    return f"{low:.0f} to {high:.0f} degC" if math.isfinite(high - low) else f"{value:.0f} degC, of no known band"

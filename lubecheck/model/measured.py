@@ -8,7 +8,7 @@ from collections.abc import Iterator
 from lubecheck.errors import shown
 from lubecheck.model.duty_entries import Duty, ShaftForces
 from lubecheck.model.entries import Case
-from lubecheck.model.entry import Amount, entries
+from lubecheck.model.entry import entries
 from lubecheck.model.measured_entries import Measured
 from lubecheck.model.plan_entries import STREAMS
 from lubecheck.model.shaft import Problem, loads_of
@@ -16,6 +16,7 @@ from lubecheck.model.shaft import Problem, loads_of
 SETTLED_AFTER_START = 4.0  # h: common practice, the temperature is level 3 to 4 h after a start
 SETTLED_AFTER_GREASING = 24.0  # h: common practice, the rise after greasing is gone after about a day
 READING_ERROR = 2.0  # K: common practice, 1 to 3 K of a contact thermometer or a resistance sensor at the outer ring
+_UNITS = {"mass": "g", "volume": "cm^3", "share": ""}
 _STATE = ("speed", "radial_load", "axial_load")
 _FORCES = tuple(key for key, _ in entries(ShaftForces))
 
@@ -119,7 +120,7 @@ def _state_and_duty(case: Case, one: Measured) -> tuple[Case, Duty]:
 def _fill_faults(case: Case, one: Measured) -> Iterator[tuple[str, str, str]]:
     if one.fill is None:
         return
-    text = f"{one.fill.value:g}" if isinstance(one.fill, Amount) else shown(one.fill)
+    text = f"{one.fill.value:g} {_UNITS[one.fill.kind]}".rstrip()
     if not case.is_grease:
         yield "fill", text, "no such key: the lubricant is oil"
     elif finds_fill(case):

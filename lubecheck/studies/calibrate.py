@@ -195,7 +195,7 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
     is_reached = count > 1 or bool(np.abs(after[0] - sensors.temperature[0]) <= sensors.error[0])
     # Each reading has to lie where the estimate can be, and so has the curve that is fitted through them.
     is_inside = [((at >= lowest) & (at <= highest)).all() for at in (sensors.temperature, after)]
-    is_explained = is_reached and all(is_inside)
+    is_explained = is_reached and all(is_inside) and bool((after < TOP_TEMPERATURE).all())
     edges = fit.each(join([usual, usual]), np.stack([lowest, highest])).mean(axis=1)
     ends = fit.ends(usual, float(x[0]), squares if count > 1 else 0.0, scale**2) if is_explained else (x[0], x[0])
     values = unknown.value(x)
