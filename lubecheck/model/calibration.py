@@ -14,6 +14,7 @@ from lubecheck.model.result import Declared, Figures
 
 USUAL, WORST = "usual", "worst"  # the readings of unsaid facts; one fact alone at its worst goes by its name
 COOLING, FILL = "cooling_factor", "fill"  # the columns of points that can be the unknown
+WIDEST_COOLING = 30.0  # times the estimate, or one over that: searched, so that what would be needed can be told
 
 
 class MeasuredFigures(Figures):

@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 
 from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
-from lubecheck.model.calibration import COOLING, Calibrated, Calibration, CalibrationFigures
+from lubecheck.model.calibration import COOLING, WIDEST_COOLING, Calibrated, Calibration, CalibrationFigures
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import MOVED_BY_HEAT
 from lubecheck.model.measured import (
@@ -71,7 +71,11 @@ def unexplained(found: Calibration) -> str:
     if not math.isfinite(found.value):
         needed = "a balance of heat, which was not found"
     elif found.column == COOLING:
-        needed = f"cooling {found.value:.2g} times the estimate, where {least:.2g} to {most:.2g} can be believed"
+        is_end = not 1.001 / WIDEST_COOLING < found.value < WIDEST_COOLING / 1.001
+        beyond = ("under " if found.value < 1 else "over ") if is_end else ""
+        needed = (
+            f"cooling {beyond}{found.value:.2g} times the estimate, where {least:.2g} to {most:.2g} can be believed"
+        )
     else:
         needed = f"no fill from {least * 100:.0f} to {most * 100:.0f} %"
     measured, computed = (figures[name].value for name in ("measured", "before"))

@@ -19,7 +19,16 @@ import numpy as np
 
 from lubecheck.data import air
 from lubecheck.model.assumptions import admissible_cooling, uncertain
-from lubecheck.model.calibration import COOLING, FILL, USUAL, WORST, Calibration, MeasuredFigures, MeasuredPoint
+from lubecheck.model.calibration import (
+    COOLING,
+    FILL,
+    USUAL,
+    WIDEST_COOLING,
+    WORST,
+    Calibration,
+    MeasuredFigures,
+    MeasuredPoint,
+)
 from lubecheck.model.check import readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import TOP_TEMPERATURE, Air, solve
@@ -31,7 +40,6 @@ from lubecheck.physics import cooling
 from lubecheck.studies.roots import roots
 from lubecheck.units import Array
 
-WIDEST_COOLING = 30.0  # times the estimate, or one over that: wide enough to tell what would be needed
 FILLS = (0.3, 1.0)  # an unknown fill, as it is judged without a measurement
 USUAL_FILL = 0.5
 NORMAL_95 = 1.959964  # standard deviations to each side that hold 95 % of a normal distribution

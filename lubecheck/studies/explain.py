@@ -212,7 +212,7 @@ def _misread(
     is_fahrenheit = text.strip().endswith(("F", "R"))
     tries = []
     if not is_fahrenheit:
-        words = f"a thermometer that shows degF: its {read:.0f} are {in_fahrenheit:.1f} degC"
+        words = f"a thermometer that shows degF, written down as degC: it showed {in_fahrenheit:.1f} degC"
         tries.append(("degF read as degC", in_fahrenheit, words))
     if is_fahrenheit or not text:
         words = f"a thermometer that shows degC, written down as degF: it showed {in_celsius:.1f} degC"

@@ -26,6 +26,7 @@ from lubecheck.studies.plant import plant
 from lubecheck.studies.swap import swap
 from lubecheck.studies.system import study as system_study
 from lubecheck.studies.wanted import study as wanted_study
+from lubecheck.studies.warmup import judged as warm_up_judged
 
 PUMP = (EXAMPLES / "oil_bath_pump.toml").read_text()
 MOTOR = (EXAMPLES / "new_motor.toml").read_text()
@@ -340,6 +341,18 @@ def test_every_study_sees_the_measurement():
     assert any("Calibrated" in note for note in (*system_study([hot]).notes, *wanted_study(hot).notes))
     uses = [plant({"a": case, "b": case}, [lubricant]).counts[0] for case in (plain, hot)]
     assert uses[0].judged == uses[1].judged == 2
+
+
+def test_a_warm_up_ends_at_what_was_calibrated_and_is_not_judged_beside_what_nothing_explains():
+    case = read_case(measured(MOTOR, HOT))
+    result = warm_up_judged(case, lubecheck.check(case))
+    (start,) = [course for course in result.warm_up.courses if course.name == "start"]
+    steady = result.operating.figures["outer_ring_temperature"].value
+    assert steady == pytest.approx(64.0, abs=1e-4)
+    assert start.figures.figures["end"].value == pytest.approx(steady, abs=0.1)
+    case = read_case(measured(MOTOR, {"temperature": 95.0}))
+    result = warm_up_judged(case, lubecheck.check(case))
+    assert result.limit("peak_temperature").state == "unknown"
 
 
 def test_a_circuit_sees_the_measurements_of_its_positions(tmp_path):
