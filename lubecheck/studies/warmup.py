@@ -252,8 +252,8 @@ def _notes(case: Case, runs: Mapping[str, Run]) -> Iterator[str]:
             )
     fresh, turns, wall, machine = warm_up.FRESH, warm_up.CHANNELLING, warm_up.WALL, warm_up.MACHINE_TIME
     grease = (
-        f"fresh grease {fresh.nominal:g} times the run-in viscous torque ({fresh.low:g} to {fresh.high:g}); channels in "
-        f"{turns.nominal:.0f} revolutions ({turns.low:.0f} to {turns.high:.0f}); "
+        f"fresh grease {fresh.nominal:g} times the run-in viscous torque ({fresh.low:g} to {fresh.high:g}); channels "
+        f"in {turns.nominal:.0f} revolutions ({turns.low:.0f} to {turns.high:.0f}); "
     )
     yield (
         f"estimates of the way: {grease if case.is_grease else ''}a wall of {wall.nominal:g} mm ({wall.low:g} to "
