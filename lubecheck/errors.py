@@ -6,6 +6,7 @@ LubecheckError                 anything this package raises on purpose
 │   └── ArgumentError          ... in a call of a unit-aware function
 ├── OutOfRange                 a method was asked outside its published range of validity
 ├── TableError                 a shipped or user table breaks its own schema
+├── NotCalibrated              measured temperatures came to the model before they were fitted (for developers)
 └── DeclarationError           a physics function is declared wrongly (raised at import, for developers)
 """
 
@@ -60,6 +61,10 @@ class OutOfRange(LubecheckError):
 
 class TableError(LubecheckError):
     """A table of data breaks its own schema; the message names the row and the column."""
+
+
+class NotCalibrated(LubecheckError):
+    """A case with measured temperatures was about to be judged without them."""
 
 
 class DeclarationError(LubecheckError, TypeError):

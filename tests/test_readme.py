@@ -45,6 +45,17 @@ def test_the_worked_reading_quotes_todays_figures():
     assert f"heats it by {bad.operating.temperature.m_as('degC') - temperature:.0f} K" in README
 
 
+def test_the_measured_example_is_quoted_with_todays_figures():
+    result = lubecheck.check(lubecheck.load_case(EXAMPLES / "measured_fan.toml"))
+    figures = result.calibration.figures.figures
+    text = " ".join(README.split())
+    assert f"cooling {figures['cooling_factor'].value:.2f} times the estimate" in text
+    before, after = figures["before"], figures["after"]
+    assert f"{before.low:.0f} to {before.high:.0f} °C before, is {after.low:.0f} to {after.high:.0f} °C" in text
+    (reading,) = result.calibration.measurements
+    assert f"{reading.figures.figures['measured'].value:.0f} °C at 18 °C of air" in text
+
+
 def test_the_table_of_swaps_tells_each_verdict():
     import runpy
 

@@ -138,6 +138,7 @@ def plan(
     from lubecheck.model.check import check as judge
     from lubecheck.model.reader import load_case
     from lubecheck.model.schedule import schedule
+    from lubecheck.studies.calibrate import calibrated
 
     if to is not None:
         face.maker(to)  # a bad name is refused before anything is worked out
@@ -151,7 +152,7 @@ def plan(
             faults += refused.faults
     if faults:
         raise CaseError(faults)
-    results = [judge(case) for case in read]
+    results = [judge(calibrated(case)) for case in read]
     first = date.today() if start is None else start.date()
     rows = schedule(results, first, None if route is None else route.value, is_staggered=stagger)
     if to is not None:

@@ -11,6 +11,7 @@ import json
 import math
 from typing import Any
 
+from lubecheck.model.calibration import Calibrated
 from lubecheck.model.result import Figures, Result, WarmUp
 
 SCHEMA = "lubecheck/check/1"
@@ -56,6 +57,7 @@ def of_result(result: Result) -> dict[str, Any]:
         "amounts": figures(result.amounts),
         "damage": [dataclasses.asdict(point) for point in result.damage],
         "losses": dataclasses.asdict(result.losses),
+        "calibration": _calibration(result.calibration),
         "plan": dataclasses.asdict(result.plan),
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
         "warm_up": warm_up(result.warm_up),
@@ -90,6 +92,19 @@ def warm_up(found: WarmUp | None) -> dict[str, Any] | None:
             for course in found.courses
         ],
         "cold_start": figures(found.cold),
+        "notes": list(found.notes),
+    }
+
+
+def _calibration(found: Calibrated | None) -> dict[str, Any] | None:
+    if found is None:
+        return None
+    return {
+        "text": found.text,
+        "is_explained": found.is_explained,
+        **(figures(found.figures) or {}),
+        "measurements": [{"place": point.place, **(figures(point.figures) or {})} for point in found.measurements],
+        "explanations": [dataclasses.asdict(item) for item in found.explanations],
         "notes": list(found.notes),
     }
 

@@ -15,6 +15,7 @@ from rich.text import Text
 
 from lubecheck.faces.display import amount, figure, in_system, is_plain, number, printable, shown_unit
 from lubecheck.faces.losses import print_damage, print_losses
+from lubecheck.model.calibration import Explanation
 from lubecheck.model.result import Figures, Limit, PlanLine, Result
 from lubecheck.sources import cite
 
@@ -36,6 +37,7 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     """Print a result, what has to be acted on first; its loss account where that is asked for."""
     _heading(result, console, system)
     _limits(result, console, system)
+    _calibration(result, console, system)
     _plan(result, console, system)
     _remedies(result, console)
     bullets("Notes", (in_system(note, system) for note in result.notes), console)
@@ -144,6 +146,26 @@ def _bar(limit: Limit, console: Console) -> Text:
     use = 2.0 if limit.use is None else limit.use
     cells = min(_BAR, round(use * _BAR))
     return Text(mark * cells + blank * (_BAR - cells) + ("+" if use > 1 else " "), style=STYLES[limit.state])
+
+
+def _calibration(result: Result, console: Console, system: str) -> None:
+    """Print what measured temperatures gave, or what would explain them."""
+    found = result.calibration
+    if found is None:
+        return
+    console.print(Text("\nMeasured temperatures", style="bold" if found.is_explained else "bold yellow"))
+    console.print(Padding(Text(in_system(found.text, system)), (0, 0, 0, 2)))
+    if found.explanations:
+        console.print(Padding(Text("Each of these alone would explain it, the least surprising first:"), (0, 0, 0, 2)))
+    bullets("", (in_system(f"{item.words}{_usual(item, system)}", system) for item in found.explanations), console)
+    bullets("", (in_system(note, system) for note in found.notes), console)
+
+
+def _usual(item: Explanation, system: str) -> str:
+    """Say what would be usual, where that has a unit to be said in."""
+    if item.surprise <= 0 or item.unit in ("1", "delta_degC"):
+        return ""
+    return f" (usual: {amount(item.usual_low, item.unit, system)} to {figure(item.usual_high, item.unit, system)})"
 
 
 def _operating(result: Result, console: Console, system: str) -> None:

@@ -8,7 +8,7 @@ nothing is assumed in silence. A decision left out (a fill, an interval) is no f
 from __future__ import annotations
 
 import math
-from collections.abc import Callable, Iterator
+from collections.abc import Callable, Iterator, Mapping
 from dataclasses import dataclass
 from typing import Any
 
@@ -160,6 +160,21 @@ FACTS: tuple[Fact, ...] = (
 )  # fmt: skip
 
 
+def at_worst(reading: Mapping[str, Any]) -> tuple[str, ...]:
+    """Return the facts that a reading reads at their worst, where that is not the usual."""
+    return tuple(
+        dict.fromkeys(
+            fact.name for fact in FACTS
+            if fact.name in reading and _is(reading[fact.name], fact.worst) and not _is(fact.usual, fact.worst)
+        )
+    )  # fmt: skip
+
+
+def _is(value: Any, other: Any) -> bool:
+    """Tell the same value; what is not a number is the same as another that is none."""
+    return bool(value == other or (value != value and other != other))
+
+
 def missing(case: Case) -> tuple[Fact, ...]:
     """Return the facts that a case leaves out."""
     return tuple(fact for fact in FACTS if fact.is_missing(case))
@@ -210,3 +225,18 @@ def _cooling_range(case: Case) -> tuple[float, float]:
         return AREA_RANGE
     low, nominal, high = HOUSING_AREA[case.housing.kind or "pedestal"]
     return low / nominal, high / nominal
+
+
+def admissible_cooling(case: Case) -> tuple[float, float]:
+    """Return the factors on the estimated cooling that a housing can have.
+
+    The range of its area, of any kind where none is stated, and of the coefficient of air; a stated conductance has its
+    own range, which holds both.
+    """
+    if case.housing.conductance is not None or case.housing.area is not None:
+        return _cooling_range(case)
+    low, high = _cooling_range(case)
+    if case.housing.kind is None:
+        nominal = HOUSING_AREA["pedestal"][1]
+        low, high = (end / nominal for end in (SMALLEST_AREA, max(high for _, _, high in HOUSING_AREA.values())))
+    return low * AREA_RANGE[0], high * AREA_RANGE[1]

@@ -7,6 +7,7 @@ inputs.
 
 from __future__ import annotations
 
+import dataclasses
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from typing import Any
@@ -14,9 +15,10 @@ from typing import Any
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import draws, interval_lines, limits, side_figures, wording
+from lubecheck.model import calibration_words, draws, interval_lines, limits, side_figures, wording
 from lubecheck.model.amounts import amounts
 from lubecheck.model.assumptions import Fact, missing, uncertain
+from lubecheck.model.calibration import FILL, Calibrated, Calibration
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import Outcome, judge
@@ -133,6 +135,7 @@ def check(case: Case, *, air_properties: Air = air.properties) -> Result:
         amounts=amounts(case, outcome, plan),
         interval_lines=lines,
         interval_spread=interval_lines.spread(lines),
+        calibration=_calibrated(variants, hottest, air_properties),
     )
 
 
@@ -155,12 +158,44 @@ def variants_of(case: Case, air_properties: Air = air.properties, *, at_ends: bo
     usual = from_rows(rows_of(case, said[0]))
     parts: list[Points] = [usual, *(from_rows(rows_of(case, reading)) for reading in said[1:])]
     inputs = tuple(uncertain(case))
+    found = _fitted(case)
     if at_ends:
-        for name, *ends in inputs:
-            parts += [usual.changed(**{name: getattr(usual, name) * factor}) for factor in ends]
+        for name, *factors in inputs:
+            parts += [_at_end(case, usual, name, end, factor) for end, factor in enumerate(factors)]
+        if found is not None and found.column == FILL:
+            parts += [usual.changed(fill=end) for end in found.ends[FILL]]
     else:
-        parts.append(draws.drawn(usual, inputs))
+        many = draws.drawn(usual, inputs)
+        fitted = {} if found is None else {found.column: np.repeat(np.array(found.draws), len(usual))}
+        parts.append(many.changed(**fitted))
     return Variants(case, moving, judge(join(parts), air_properties), len(usual))
+
+
+def _fitted(case: Case) -> Calibration | None:
+    """Return the calibration that a case stands on; none for a fill that has been made anew since."""
+    found = case.calibration
+    if found is None or not found.is_explained or (found.column == FILL and case.grease.fill != "unknown"):
+        return None
+    return found
+
+
+def _at_end(case: Case, usual: Points, name: str, end: int, factor: float) -> Points:
+    """Return the usual reading with one uncertain input at an end, and what was fitted as it was fitted under that."""
+    changed: dict[str, Array | float] = {name: getattr(usual, name) * factor}
+    found = _fitted(case)
+    if found is not None:
+        changed[found.column] = found.ends.get(name, (found.value, found.value))[end]
+    return usual.changed(**changed)
+
+
+def _calibrated(variants: Variants, row: int, air_properties: Air) -> Calibrated | None:
+    """Return what measured temperatures did to the operating point."""
+    case = variants.case
+    if case.calibration is None:
+        return None
+    plain = variants_of(dataclasses.replace(case, measured=(), calibration=None), air_properties)
+    before, after = (one.row_band(one.outcome.state.temperature, row) for one in (plain, variants))
+    return calibration_words.told(case, before, after)
 
 
 def _limit(variants: Variants, name: str) -> Limit:
@@ -174,6 +209,7 @@ def _limit(variants: Variants, name: str) -> Limit:
         hinges = hinges or [fact for fact in variants.facts if name in fact.limits]
         state = NEAR_CODE if states[1] == NEAR_CODE else max(state, UNKNOWN)
         doubt = wording.doubt(hinges, float(uses[1]), is_open=state != NEAR_CODE)
+    doubt = calibration_words.doubt(variants.case, name) if np.isnan(uses[0]) and not doubt else doubt
     _, low, high = variants.band(uses)
     return Limit(
         name=name,

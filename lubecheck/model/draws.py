@@ -53,6 +53,12 @@ def band(value: float, draws: Array) -> tuple[float, float]:
     return min(value, float(known[outside])), max(value, float(known[-1 - outside]))
 
 
+def scores(place: int) -> Array:
+    """Return the standard normal scores of the draws for one input, by its place among them."""
+    one: Array = _scores(place + 1)[place]
+    return one
+
+
 @functools.cache
 def _scores(inputs: int) -> Array:
     """Return standard normal scores, [input, draw]: each input takes every one of as many even shares once."""

@@ -12,9 +12,11 @@ from lubecheck.data import lubricants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.cleanliness import setting_of
 from lubecheck.data.oil_analysis import OilAnalysis
+from lubecheck.model.calibration import Calibration
 from lubecheck.model.cleanliness import stated_setting
 from lubecheck.model.duty_entries import Duty, Shaft
 from lubecheck.model.entry import entry_of
+from lubecheck.model.measured_entries import Measured
 from lubecheck.model.part_entries import BearingTable, LubricantTable
 from lubecheck.model.place_entries import Housing, Surroundings
 from lubecheck.model.plan_entries import GreasePlan, OilPlan
@@ -103,6 +105,8 @@ class Case:
     oil: OilPlan = OilPlan()
     cleanliness: Cleanliness = Cleanliness()
     limits: Requirements = Requirements()
+    measured: tuple[Measured, ...] = ()
+    calibration: Calibration | None = None  # what `measured` says, once studies/calibrate has found it
     analysis: OilAnalysis | None = None  # of the oil in use; `lubricant` is then the oil as it is now
     given: tuple[tuple[str, str], ...] = ()  # "table.key" and the text the user wrote, in their order
 
@@ -150,4 +154,5 @@ TABLES: dict[str, type] = {
     "oil": OilPlan,
     "cleanliness": Cleanliness,
     "limits": Requirements,
+    "measured": Measured,
 }

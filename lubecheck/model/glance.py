@@ -14,7 +14,7 @@ from typing import Any
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import limits, wording
+from lubecheck.model import calibration_words, limits, wording
 from lubecheck.model.check import LIMITS, readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air, Equilibrium
@@ -173,7 +173,7 @@ def _governing(judged: Sequence[Limit], verdict: str) -> Limit:
 
 def _reason(limit: Limit, case: Case, outcome: Outcome) -> str:
     use = "no finite use" if limit.use is None else f"use {limit.use:.2f} of 1"
-    doubt = ""
+    doubt = "" if limit.use is not None else calibration_words.doubt(case, limit.name)
     if limit.state == STATES[UNKNOWN] and limit.use is not None:
         facts = [fact.name for fact in readings(case)[0] if limit.name in fact.limits]
         doubt = f"hangs on what was not said: {', '.join(facts)}"

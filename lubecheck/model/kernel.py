@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import dataclasses
 from collections.abc import Mapping
 from dataclasses import dataclass
 
@@ -11,11 +12,13 @@ from lubecheck.data import air
 from lubecheck.model import intervals, limits
 from lubecheck.model.equilibrium import TOP_TEMPERATURE, Air, Equilibrium, solve
 from lubecheck.model.limits import Judged
-from lubecheck.model.points import BEYOND_SETTINGS, Codes, Points
+from lubecheck.model.points import BEYOND_SETTINGS, Codes, Flags, Points
 from lubecheck.physics import cleanliness, fatigue, film, grease_amount
 from lubecheck.units import Array
 
 PROPOSED_SHARE = 0.8  # of the allowed interval that is proposed: leaves a fifth for what varies, so that it is `within`
+# Limits that the bearing's temperature moves: a measured one that nothing explains leaves them unknown.
+MOVED_BY_HEAT = ("film", "temperature", "set_point", "rings", "flash_point", "clearance", "interval", "fatigue_life")
 
 
 @dataclass(frozen=True, slots=True)
@@ -95,6 +98,10 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
             "static_load": limits.reduce(p, limits.static_load(p)),
             "fatigue_life": limits.of_positions(p, p.life_target[p.starts], modified, everywhere),
         }
+    is_doubted = np.logical_or.reduceat(p.is_doubted > 0, p.starts)
+    if is_doubted.any():
+        judged |= {name: _doubted(judged[name], is_doubted) for name in MOVED_BY_HEAT}
+        modified, proposed = (np.where(is_doubted, np.nan, hours) for hours in (modified, proposed))
     verdict, governing = _verdict(judged)
     return Outcome(
         points=p,
@@ -120,6 +127,13 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         verdict=verdict,
         governing=governing,
     )
+
+
+def _doubted(limit: Judged, is_doubted: Flags) -> Judged:
+    """Return a limit with what is doubted unknown; what is beyond stays beyond."""
+    is_hidden = is_doubted & ~(limit.use > 1.0)
+    use, allowed = (np.where(is_hidden, np.nan, array) for array in (limit.use, limit.allowed))
+    return dataclasses.replace(limit, use=use, allowed=allowed, state=limits.state_of(use))
 
 
 def _life_factor(points: Points, state: Equilibrium, kappa: Array) -> tuple[Array, Array]:

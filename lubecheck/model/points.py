@@ -92,6 +92,7 @@ class Points:
     oil_inlet: Array
     oil_conductance: Array
     machine_heat: Array
+    is_doubted: Array  # a temperature was measured that nothing admissible explains
     held_temperature: Array  # degC at which the bearing is held; NaN where it is solved for
     interval_factor: Array  # dust, water, vibration, orientation, turning ring, air flow together
     inside_factor: Array  # the part of it that reaches the grease of a closed bearing

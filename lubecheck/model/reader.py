@@ -22,11 +22,12 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis, analyse
 from lubecheck.errors import CaseError, Fault, InputError, nearest, shown
-from lubecheck.model import conflicts
+from lubecheck.model import conflicts, measured
 from lubecheck.model.cleanliness import contradictions
 from lubecheck.model.duty_entries import Duty, Shaft
 from lubecheck.model.entries import TABLES, Case, Cleanliness, Requirements
 from lubecheck.model.entry import entries
+from lubecheck.model.measured_entries import Measured
 from lubecheck.model.part_entries import BearingTable, LubricantTable
 from lubecheck.model.place_entries import Housing, Surroundings
 from lubecheck.model.plan_entries import GreasePlan, OilPlan
@@ -39,6 +40,7 @@ from lubecheck.units import UnreadableText
 STANDARD_INPUT = "-"
 _ANALYSED = ("measured_viscosity", "water", "iso_code")  # keys of [lubricant] that are of the oil in use
 _KIND_OF_GREASE = ("thickener", "base_oil", "nlgi")  # keys of [lubricant] that make it another one
+MOST_MEASURED = 100  # temperatures of one case: a year of weekly readings is 52; more is a log, not a case
 _LARGEST_FILE = 1_000_000  # bytes; a case is a page of text, so more is a slip of the hand
 
 T = TypeVar("T")
@@ -185,6 +187,7 @@ class _Reading:
         oil = self._table(document, "oil", OilPlan) or OilPlan()
         cleanliness = self._table(document, "cleanliness", Cleanliness) or Cleanliness()
         limits = self._table(document, "limits", Requirements) or Requirements()
+        temperatures = self._measured(document)
         self._problems(conflicts.of_place(housing, duty, surroundings))
         self._problems(conflicts.of_stream(oil))
         self._coolant(housing)
@@ -212,9 +215,11 @@ class _Reading:
         case = Case(
             title=title, note=note, bearing=bearing, lubricant=analysis.used if analysis else lubricant, duty=duty,
             surroundings=surroundings, shaft=shaft, opposed=opposed, housing=housing, grease=grease, oil=oil,
-            cleanliness=cleanliness, limits=limits, analysis=analysis, given=tuple(self.given),
+            cleanliness=cleanliness, limits=limits, measured=temperatures, analysis=analysis, given=tuple(self.given),
         )  # fmt: skip
         self._problems(duty_faults(case))
+        if not any(fault.key.startswith("measured") for fault in self.faults):
+            self._problems(measured.faults(case, is_list=isinstance(document.get("measured"), list)))
         return case
 
     def _problems(self, problems: Iterator[Problem]) -> None:
@@ -275,6 +280,21 @@ class _Reading:
         if len(read) < len(points):
             return ()
         return read
+
+    def _measured(self, document: Mapping[str, Any]) -> tuple[Measured, ...]:
+        """Read the measured temperatures: one [measured] table, or several of [[measured]]."""
+        value = document.get("measured", [])
+        if isinstance(value, dict):
+            one = self._keys(("measured",), value, Measured)
+            return () if one is None else (one,)
+        if not isinstance(value, list) or not all(isinstance(item, dict) for item in value):
+            self.fault(("measured",), shown(value), "a [measured] table, or several [[measured]]", plain=True)
+            return ()
+        if len(value) > MOST_MEASURED:
+            self.fault(("measured",), f"{len(value)} of [[measured]]", f"at most {MOST_MEASURED}", plain=True)
+            return ()
+        read = [self._keys(("measured", i), item, Measured) for i, item in enumerate(value)]
+        return tuple(one for one in read if one is not None)
 
     def _shares(self, points: Sequence[Mapping[str, Any]]) -> None:
         """Several duty points need their shares of the running time, and the shares have to add up."""

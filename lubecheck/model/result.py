@@ -15,6 +15,8 @@ from lubecheck.units import quantity
 if TYPE_CHECKING:
     import pint
 
+    from lubecheck.model.calibration import Calibrated
+
 
 @dataclass(frozen=True, slots=True)
 class Figure:
@@ -414,6 +416,7 @@ class Result:
     interval_lines: tuple[IntervalLine, ...] = ()
     interval_spread: str = ""  # how far the lines lie apart, in words
     warm_up: WarmUp | None = None  # where it was asked for
+    calibration: Calibrated | None = None  # None where no temperature was measured
 
     def limit(self, name: str) -> Limit:
         """Return a limit by its name.

@@ -9,7 +9,9 @@ from typing import Any
 from lubecheck.data import coolants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
-from lubecheck.model.assumptions import HOUSING_AREA, PROPOSED_HOUSING_FILL, SMALLEST_AREA
+from lubecheck.errors import NotCalibrated
+from lubecheck.model.assumptions import HOUSING_AREA, PROPOSED_HOUSING_FILL, SMALLEST_AREA, at_worst
+from lubecheck.model.calibration import COOLING
 from lubecheck.model.duty_entries import Duty
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import Amount
@@ -77,7 +79,10 @@ def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dic
     """Return the rows of one case under one reading of the facts it leaves out.
 
     `reading` maps the name of a fact ("[housing] void") to the value it is read as.
+
+    Raises NotCalibrated where temperatures were measured and nothing was made of them.
     """
+    calibrated = _calibration_columns(case, reading)
     shared = _bearing_columns(case.bearing, reading)
     family = FAMILIES[case.bearing.family]
     shared |= _lubricant_columns(case, reading)
@@ -93,10 +98,23 @@ def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dic
             row = shared | _duty_columns(case, duty, reading, shared, season) | rubbing
             row["share"] /= len(year)
             row |= _amount_columns(case, reading, row)
-            row |= {"case": number, **dict.fromkeys(FACTORS, 1.0)}
+            row |= {"case": number, **dict.fromkeys(FACTORS, 1.0), **calibrated}
             rows.append(row)
     _propose_one_fill(case, rows)
     return rows
+
+
+def _calibration_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float]:
+    """What measured temperatures say, found under the same reading; nothing where they are not explained."""
+    found = case.calibration
+    if found is None:
+        if case.measured:
+            raise NotCalibrated("measured temperatures have to be fitted first: studies.calibrate.calibrated")
+        return {"is_doubted": 0.0}
+    if not found.is_explained:
+        return {"is_doubted": 1.0}
+    is_asked = found.column == COOLING or case.grease.fill == "unknown"  # a fill that was made anew is known
+    return {"is_doubted": 0.0} | ({found.column: found.at(at_worst(reading))} if is_asked else {})
 
 
 def _propose_one_fill(case: Case, rows: list[dict[str, float]]) -> None:

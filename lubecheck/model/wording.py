@@ -14,8 +14,8 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.data.oil_analysis import OilAnalysis
+from lubecheck.model import calibration_words, limits, oil_words
 from lubecheck.model import given as after
-from lubecheck.model import limits, oil_words
 from lubecheck.model.amounts import CARTRIDGE_G
 from lubecheck.model.assumptions import FACTS, PROPOSED_HOUSING_FILL, Fact
 from lubecheck.model.entries import Case
@@ -149,7 +149,7 @@ def _fill(case: Case, outcome: Outcome, row: int) -> str:
     held = outcome.state.held_volume[row]
     said = "proposed" if case.grease.fill is None else ""
     if isinstance(case.grease.fill, str):
-        said = "unknown fill, judged from 30 to 100 %: inspect, or purge first"
+        said = calibration_words.found_fill(case) or "unknown fill, judged from 30 to 100 %: inspect, or purge first"
     churned = f"{held:.1f} cm^3 cannot clear and are churned" if held > 0 else ""
     over = "more than the bearing's free volume" if points.fill[row] > 1 else ""
     side = "held against the least" if outcome.judged["fill"].demand[0] != points.fill[row] else ""
@@ -270,7 +270,8 @@ def _life(case: Case, outcome: Outcome, row: int) -> str:
     life = float(outcome.modified_life[0])
     reached = float(outcome.points.reliability[0]) * 100
     if math.isnan(life):
-        return "outside the range of ISO 281: " + _outside_life(outcome)
+        is_doubted = bool(outcome.points.is_doubted[0])
+        return "" if is_doubted else "outside the range of ISO 281: " + _outside_life(outcome)
     if life > LONG_LIFE:
         return (
             f"over {_spaced(LONG_LIFE)} h: fatigue will not end this bearing; what may is {_what_ends(case, outcome)}"
@@ -478,7 +479,8 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         is_beside = comes_filled and fact.name in _BESIDE_THE_BEARING
         if fact.is_missing(case) and not is_beside and fact.usual != "estimate":  # estimates are listed below
             worst = " (judged at its worst as well)" if fact.name in judged_too else ""
-            said.append(Assumed(fact.name, fact.text + worst, fact.basis))
+            found = calibration_words.found_fill(case) if fact.name == "[grease] fill" else ""
+            said.append(Assumed(fact.name, found or fact.text + worst, fact.basis))
     own = case.limits
     defaults = (
         ("[limits] life", own.life, f"{DEFAULT_LIFE:.0f} h, continuous service", "common-practice"),
@@ -501,6 +503,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
         said.append(Assumed("[cleanliness] water", f"dry: no more than {ppm:.0f} ppm in the oil", "cantley"))
     said += [Assumed("[lubricant]", text, "common-practice") for text in case.lubricant.assumed]
     said += oil_words.assumed(case)
+    said += calibration_words.assumed(case)
     around = case.surroundings
     if case.is_grease and around.turning_ring is None:
         said.append(Assumed("[surroundings] turning_ring", "the inner ring turns", "common-practice"))

@@ -6,6 +6,7 @@ of one kernel call.
 
 from __future__ import annotations
 
+import dataclasses
 import functools
 import math
 from dataclasses import dataclass
@@ -13,7 +14,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import limits, wording
+from lubecheck.model import calibration_words, limits, wording
 from lubecheck.model.check import readings
 from lubecheck.model.circuit import Circuit
 from lubecheck.model.cleanliness import numbers_of
@@ -22,6 +23,7 @@ from lubecheck.model.kernel import Outcome, judge
 from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join
 from lubecheck.model.rows import rows_of
 from lubecheck.physics import cleanliness, fatigue
+from lubecheck.studies.calibrate import calibrated
 
 CAUTIONS = (
     "Life is statistical: of many such circuits the stated share runs longer without a pit; one may fail sooner",
@@ -87,6 +89,13 @@ class CircuitResult:
 
 def study(circuit: Circuit, *, air_properties: Air = air.properties) -> CircuitResult:
     """Return what the circuit does to the life of its positions, in each state of its oil."""
+    circuit = dataclasses.replace(
+        circuit,
+        members=tuple(
+            dataclasses.replace(member, case=calibrated(member.case, air_properties=air_properties))
+            for member in circuit.members
+        ),
+    )
     states = oil_states(circuit)
     said = [readings(member.case) for member in circuit.members]
     # Positions in the order member, reading (usual, worst).
@@ -129,9 +138,18 @@ def study(circuit: Circuit, *, air_properties: Air = air.properties) -> CircuitR
         debris_costs_h=_difference(rest, 0, 1),
         filter_is_worth_h=_difference(rest, 2, 1),
         debris_uses=_used(circuit, rest),
-        notes=tuple(notes),
+        notes=(*notes, *_measured(circuit)),
         cautions=CAUTIONS + wording.SAFETY,
     )
+
+
+def _measured(circuit: Circuit) -> list[str]:
+    """Say which positions stand on measured temperatures."""
+    return [
+        f"{member.name}: {calibration_words.said(member.case.calibration)}"
+        for member in circuit.members
+        if member.case.calibration is not None
+    ]
 
 
 def oil_states(circuit: Circuit) -> tuple[OilState, ...]:

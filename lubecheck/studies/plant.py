@@ -14,6 +14,7 @@ from lubecheck.model.entries import Case
 from lubecheck.model.glance import glances
 from lubecheck.model.limits import STATES
 from lubecheck.model.points import Codes, Flags
+from lubecheck.studies.calibrate import calibrated
 from lubecheck.studies.swap import found, replaced
 from lubecheck.units import Array
 
@@ -59,7 +60,7 @@ def plant(cases: Mapping[str, Case], candidates: Sequence[str | Lubricant], *, o
     """
     kinds: set[str] = {case.lubricant.kind for case in cases.values()}
     named = _of_kinds(candidates, kinds, own)
-    names, positions = list(cases), list(cases.values())
+    names, positions = list(cases), [calibrated(case) for case in cases.values()]
     now, _ = _states(positions)
     states = np.full((len(named), len(positions)), -1, dtype=np.intp)
     uses = np.full(states.shape, np.inf)

@@ -39,6 +39,10 @@ def check(case: Case, *, warm_up: bool = False, air_properties: Air = air.proper
     Every limit comes with its use, the demand over what is allowed; the verdict is the worst state, and what could not
     be judged is never called good. With `warm_up` the way to the steady state is followed and judged as well.
     """
+    if case.measured:
+        from lubecheck.studies.calibrate import calibrated  # here, so that a check without one does not load it
+
+        case = calibrated(case, air_properties=air_properties)
     result = judge_case(case, air_properties=air_properties)
     if any(limit.state in _FAILING for limit in result.limits):
         result = dataclasses.replace(result, remedies=find(case, air_properties=air_properties))

@@ -16,10 +16,11 @@ from lubecheck.data.compatibility import Cell, Meeting
 from lubecheck.data.lubricant import Lubricant
 from lubecheck.data.lubricant_files import read_entry
 from lubecheck.errors import Fault, InputError, shown
-from lubecheck.model import wording
+from lubecheck.model import calibration_words, wording
 from lubecheck.model.entries import Case
 from lubecheck.model.glance import READINGS, Glance, glances, part_of, points_of
 from lubecheck.model.limits import STATES
+from lubecheck.studies.calibrate import calibrated
 from lubecheck.studies.change_over import ChangeOver, change_over
 from lubecheck.studies.mixture import Path, blends, paths, points_between
 
@@ -105,6 +106,7 @@ def swaps(
     Raises InputError with every candidate that was refused.
     """
     named = found(candidates, case.lubricant.kind, own)
+    case = calibrated(case)
     news = [new for _, new in named]
     cases = [case, *(replaced(case, new) for new in news)]
     every = points_of(cases)
@@ -146,8 +148,15 @@ def swaps(
         bearing=wording.bearing(case.bearing),
         lubricant=wording.lubricant(case.lubricant, case.analysis),
         candidates=tuple(made),
-        cautions=CAUTIONS + wording.cautions(case),
+        cautions=CAUTIONS + _measured(case) + wording.cautions(case),
     )
+
+
+def _measured(case: Case) -> tuple[str, ...]:
+    """Say that both sides stand on temperatures that were measured with the present lubricant."""
+    if case.calibration is None:
+        return ()
+    return (f"{calibration_words.said(case.calibration)}: measured with the lubricant that is there",)
 
 
 def replaced(case: Case, new: Lubricant) -> Case:

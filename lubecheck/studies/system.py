@@ -10,7 +10,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import wording
+from lubecheck.model import calibration_words, wording
 from lubecheck.model.check import readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
@@ -18,6 +18,7 @@ from lubecheck.model.kernel import judge
 from lubecheck.model.points import from_rows, join
 from lubecheck.model.rows import rows_of
 from lubecheck.physics import fatigue
+from lubecheck.studies.calibrate import calibrated
 
 NOTE = (
     f"ln(1/R) of the bearings adds up, with the Weibull slope {fatigue.WEIBULL_SLOPE:g} of ISO/TR 1281-2: the life at "
@@ -48,6 +49,7 @@ class SystemLife:
 
 def study(cases: Sequence[Case], *, air_properties: Air = air.properties) -> SystemLife:
     """Return the life of several bearings together, each at the reliability of the first case."""
+    cases = [calibrated(case, air_properties=air_properties) for case in cases]
     said = [readings(case) for case in cases]
     points = join(from_rows(rows_of(case, reading[0])) for case, (_, reading) in zip(cases, said, strict=True))
     reliability = float(points.reliability[0])
@@ -70,5 +72,10 @@ def study(cases: Sequence[Case], *, air_properties: Air = air.properties) -> Sys
         for case, (facts, _) in zip(cases, said, strict=True)
         for fact in facts
         if "fatigue_life" in fact.limits
+    ]
+    unsaid += [
+        f"{case.title or wording.bearing(case.bearing)}: {calibration_words.said(case.calibration)}"
+        for case in cases
+        if case.calibration is not None
     ]
     return SystemLife(parts, together, reliability, (NOTE, *unsaid))

@@ -13,7 +13,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from lubecheck.data import air
-from lubecheck.model import wording
+from lubecheck.model import calibration_words, wording
 from lubecheck.model.check import readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
@@ -22,6 +22,7 @@ from lubecheck.model.points import BEYOND_SETTINGS, Points, from_rows, join
 from lubecheck.model.rows import rows_of
 from lubecheck.physics import fatigue, viscosity
 from lubecheck.physics.wanted_life import bracketed_root
+from lubecheck.studies.calibrate import calibrated
 from lubecheck.units import Array
 
 
@@ -88,6 +89,7 @@ _NOTE = {
 
 def study(case: Case, life: float | None = None, *, air_properties: Air = air.properties) -> WantedLife:
     """Return what reaches the wanted life: the case's own, or the one given in hours."""
+    case = calibrated(case, air_properties=air_properties)
     facts, said = readings(case)
     points = from_rows(rows_of(case, said[0]))
     wanted = life if life is not None else float(points.life_target[0])
@@ -130,6 +132,7 @@ def study(case: Case, life: float | None = None, *, air_properties: Air = air.pr
         )
     answers.append(_cleanliness(points, wanted, air_properties))
     notes = [f"not said, read as usual: {fact.name}" for fact in facts if "fatigue_life" in fact.limits]
+    notes += [] if case.calibration is None else [calibration_words.said(case.calibration)]
     notes.append("one thing is changed at a time and the rest is as it is; temperature and film follow")
     return WantedLife(
         title=case.title,

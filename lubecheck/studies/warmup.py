@@ -21,6 +21,7 @@ from lubecheck.model.limits import BEYOND, STATES, UNKNOWN
 from lubecheck.model.result import ColdTorque, Course, CourseFigures, Crossing, Limit, Result, WarmUp
 from lubecheck.model.rows import seasons
 from lubecheck.physics import churning, viscosity, warm_up
+from lubecheck.studies.calibrate import calibrated
 from lubecheck.studies.courses import AFTER_GREASING, COLD_START, FIRST_START, START, Run, runs_of
 from lubecheck.units import Array
 
@@ -43,6 +44,7 @@ def judged(case: Case, result: Result, *, air_properties: Air = air.properties) 
     `peak_temperature` is the most that bearing and lubricant come to, against what they stand; `set_point` is then of
     the peaks too; `start_torque` stands where the case says what the drive has.
     """
+    case = calibrated(case, air_properties=air_properties)
     runs = runs_of(case, air_properties)
     new = {limit.name: limit for limit in _limits(case, runs)}
     limits = tuple(new.pop(limit.name, limit) for limit in result.limits) + tuple(new.values())
@@ -126,17 +128,21 @@ def _kept(run: Run) -> list[int]:
 
 def _crossing(name: str, set_point: float, run: Run) -> Crossing:
     over = np.flatnonzero(run.history.outer[:, 0] >= set_point)
-    uses = _use(run.peaks, run.ambient, set_point)
+    uses = _use(run, run.peaks, set_point)
     use, low, high = (_finite(value) for value in run.band(uses))
     at = float(run.history.time[over[0], 0]) if len(over) else None
     return Crossing(name, set_point, STATES[_state(uses)], at, use, low, high)
 
 
-def _use(peak: Array, ambient: Array, top: Array | float) -> Array:
-    """Return the rise over the ambient as a share of what a top temperature leaves: the use of a temperature limit."""
-    room = top - ambient
-    use: Array = np.where(room > 0, (peak - ambient) / room, np.inf)
-    return np.where(np.isnan(peak) | np.isnan(room), np.nan, use)
+def _use(run: Run, peak: Array, top: Array | float) -> Array:
+    """Return the rise over the ambient as a share of what a top temperature leaves: the use of a temperature limit.
+
+    Beside a measured temperature that nothing explains it is not known, unless it is beyond.
+    """
+    room = top - run.ambient
+    use: Array = np.where(room > 0, (peak - run.ambient) / room, np.inf)
+    is_doubted = (run.points.is_doubted > 0) & ~(use > 1.0)
+    return np.where(np.isnan(peak) | np.isnan(room) | is_doubted, np.nan, use)
 
 
 def _state(use: Array) -> int:
@@ -154,7 +160,7 @@ def _limits(case: Case, runs: Mapping[str, Run]) -> Iterator[Limit]:
 
 def _hottest(name: str, basis: str, runs: Mapping[str, Run], of: Callable[[Run], tuple[Array, Array]]) -> Limit:
     """Judge the peak of the course that comes nearest to what is allowed, or past it."""
-    uses = {key: _use(of(run)[0], run.ambient, of(run)[1]) for key, run in runs.items()}
+    uses = {key: _use(run, *of(run)) for key, run in runs.items()}
     worst = max(runs, key=lambda key: (_state(uses[key]), float(np.nan_to_num(uses[key][0], nan=-1.0))))
     run, use, state = runs[worst], uses[worst], _state(uses[worst])
     peak, top = of(run)

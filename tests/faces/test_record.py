@@ -72,6 +72,35 @@ def test_a_case_without_equilibrium_has_null_and_no_number():
     assert record["governing"] == "temperature"
 
 
+FIGURES = {"cooling_factor": "1", "admissible_factor": "1", "conductance": "W/K", "fill": "1", "chi_square": "1",
+           "error_scale": "1", "before": "degC", "after": "degC"}  # fmt: skip
+READINGS = {"measured": "degC", "reading_error": "delta_degC", "before": "degC", "after": "degC",
+            "residual": "delta_degC"}  # fmt: skip
+EXPLANATION = {"cause", "needed", "unit", "usual_low", "usual_high", "surprise", "words"}
+
+
+def test_the_calibration_is_null_without_a_measurement(record):
+    assert (record["calibration"] is None) == ("measured" not in "".join(record["inputs"]["given"]))
+
+
+@pytest.mark.parametrize(("temperature", "is_explained"), [("48 degC", True), ("88 degC", False)])
+def test_the_calibration_has_its_measurements_figures_and_explanations(temperature, is_explained):
+    text = (EXAMPLES / "measured_fan.toml").read_text().replace("48 degC", temperature)
+    found = json.loads(to_json(lubecheck.check(read_case(text))), parse_constant=pytest.fail)["calibration"]
+    assert found["is_explained"] is is_explained
+    assert {name: found[name]["unit"] for name in FIGURES} == FIGURES
+    (reading,) = found["measurements"]
+    assert {name: reading[name]["unit"] for name in READINGS} == READINGS
+    assert reading["place"] == "housing"
+    assert bool(found["explanations"]) is not is_explained
+    assert all(set(item) == EXPLANATION for item in found["explanations"])
+    assert found["text"].startswith("Calibrated on 1 measurement" if is_explained else "Not calibrated")
+    factor = found["cooling_factor"]
+    assert factor["low"] <= factor["value"] <= factor["high"]
+    assert (found["after"]["value"] is None) is not is_explained
+    assert found["chi_square"]["value"] is None  # of one measurement there is none
+
+
 def test_no_number_of_a_record_is_endless(record):
     def walk(node):
         if isinstance(node, dict):

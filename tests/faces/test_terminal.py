@@ -63,6 +63,21 @@ def test_inch_units_convert_every_figure_that_has_a_dimension():
     assert "248  degF" in limits  # 120 degC
 
 
+def test_measured_temperatures_are_told_in_the_units_of_the_user():
+    text = " ".join(printed(EXAMPLES / "measured_fan.toml").split())
+    assert re.search(r"Calibrated on 1 measurement: cooling by air 0\.7\d times the estimate", text)
+    assert re.search(r"residual 0\.0 K; temperature \d+ to \d+ degC before, \d+ to \d+ degC after", text)
+    inch = " ".join(printed(EXAMPLES / "measured_fan.toml", system="inch").split())
+    assert re.search(r"residual 0 delta_degF; temperature \d+ to \d+ degF before", inch)
+
+
+def test_a_reading_that_nothing_explains_is_told_with_what_would_explain_it():
+    text = " ".join(printed((EXAMPLES / "measured_fan.toml").read_text().replace("48 degC", "118 degC")).split())
+    assert "UNKNOWN" in text
+    assert "Not calibrated: 118.0 degC was measured where" in text
+    assert "Each of these alone would explain it, the least surprising first: - a thermometer that shows degF" in text
+
+
 def test_a_users_text_is_never_markup_nor_steers_the_terminal():
     title = 'title = "[bold red]x[/x] \\u001b[2J \\u0007 end"\n'
     text = printed(title + BASE, force_terminal=True, color_system="standard")

@@ -13,6 +13,7 @@ from conftest import BASE, EXAMPLES, with_key
 
 import lubecheck
 from lubecheck.faces.terminal import plan_parts
+from lubecheck.model.calibration import CalibrationFigures, MeasuredFigures
 from lubecheck.model.entries import TABLES
 from lubecheck.model.entry import entries
 from lubecheck.model.reader import read_case
@@ -308,7 +309,7 @@ def test_exact_fluids_change_the_temperature_by_less_than_a_tenth_of_a_kelvin():
     assert table != exact
 
 
-@pytest.mark.parametrize("group", [Operating, Grease, Life])
+@pytest.mark.parametrize("group", [Operating, Grease, Life, CalibrationFigures, MeasuredFigures])
 def test_every_figure_says_what_it_means(group):
     assert all(len(declared.meaning) > 5 for declared in group.declared().values())
 

@@ -9,6 +9,7 @@ import pytest
 from conftest import BASE, EXAMPLES, with_key
 
 from lubecheck.errors import CaseError
+from lubecheck.model import measured
 from lubecheck.model.entries import TABLES
 from lubecheck.model.entry import entries
 from lubecheck.model.reader import load_case, read_case
@@ -105,6 +106,24 @@ BAD_VALUES = [
     ("limits", "life", '"0 h"', "time"),
     ("oil", "supply", '"bath"', "grease"),
     ("gear", "ratio", "2", "bearing"),
+    ("measured", "temperature", '"64"', "temperature"),
+    ("measured", "temperature", '"900 degC"', "-60 to 400"),
+    ("measured", "temperature", '"64 K"', "-60 to 400"),
+    ("measured", "place", '"bearing"', "housing"),
+    ("measured", "duty", "0.5", "1 to 1000"),
+    ("measured", "duty", '"first"', "number"),
+    ("measured", "speed", '"1480"', "speed"),
+    ("measured", "radial_load", '"1.8 kg"', "force"),
+    ("measured", "axial_load", '"200"', "force"),
+    ("measured", "ambient", '"210 degC"', "-60 to 150"),
+    ("measured", "draught", '"2 m"', "velocity"),
+    ("measured", "shaft_temperature", '"75"', "temperature"),
+    ("measured", "fill", '"unknown"', "mass or volume"),
+    ("measured", "fill", '"0 g"', "mass"),
+    ("measured", "reading_error", '"2 degC"', "temperature difference"),
+    ("measured", "reading_error", '"0 K"', "0.1"),
+    ("measured", "running_time", '"30"', "time"),
+    ("measured", "tempereture", '"64 degC"', "temperature"),
 ]
 
 
@@ -264,6 +283,9 @@ def test_every_key_says_what_it_is_and_what_it_expects(table, key, entry):
 
 
 PUMP = (EXAMPLES / "oil_bath_pump.toml").read_text()
+PINION = (EXAMPLES / "pinion_shaft.toml").read_text()
+MEASURED = '\n[measured]\ntemperature = "64 degC"\n'
+READ = BASE + MEASURED
 
 
 @pytest.mark.parametrize(
@@ -284,6 +306,25 @@ PUMP = (EXAMPLES / "oil_bath_pump.toml").read_text()
         (BASE, [("lubricant", "thickener", '"sodium"')], "lubricant.thickener", "by its figures"),
         (BASE, [("lubricant", "nlgi", '"000"')], "lubricant.nlgi", "by its figures"),
         (BASE, [("lubricant", "base_oil", '"ester"')], "lubricant.base_oil", "by its figures"),
+        (READ, [("measured", "duty", "2")], "measured.duty", "1 to 1"),
+        (READ, [("measured", "duty", "1.5")], "measured.duty", "1 to 1"),
+        (READ, [("measured", "running_time", '"2 h"')], "measured.running_time", "at least 4 h"),
+        (READ, [("measured", "place", '"oil outlet"')], "measured.place", "flow and inlet"),
+        (READ, [("measured", "radial_load", '"0 N"'), ("measured", "axial_load", '"0 N"')], "measured.radial_load",
+         "above 0 N"),
+        (READ, [("housing", "kind", None), ("surroundings", "draught", None), ("housing", "conductance", '"1 W/K"'),
+                ("measured", "draught", '"2 m/s"')], "measured.draught", "beside [housing] conductance"),
+        (READ, [("housing", "kind", None), ("surroundings", "draught", None), ("housing", "conductance", '"1 W/K"'),
+                ("grease", "fill", '"unknown"'), ("measured", "fill", '"15 g"')], "measured.fill", "it is what is"),
+        (READ, [("housing", "shaft_temperature", None), ("housing", "machine_heat", '"12 W"'),
+                ("measured", "shaft_temperature", '"75 degC"')], "measured.shaft_temperature", "either this or"),
+        (READ, [("surroundings", "ambient_lowest", '"0 degC"'), ("surroundings", "ambient_highest", '"50 degC"')],
+         "measured.ambient", "each month"),
+        (PUMP + MEASURED, [], "measured.duty", "since there are 2 duty points"),
+        (PUMP + MEASURED, [("measured", "speed", '"1480 rpm"')], "measured.duty", "no radial_load, axial_load"),
+        (PUMP + MEASURED, [("measured", "duty", "3")], "measured.duty", "1 to 2"),
+        (PUMP + MEASURED, [("measured", "duty", "2"), ("measured", "fill", '"15 g"')], "measured.fill", "is oil"),
+        (PINION + MEASURED, [("measured", "radial_load", '"3 kN"')], "measured.radial_load", "by its number"),
     ],
 )  # fmt: skip
 def test_facts_that_contradict_each_other_are_one_clear_fault(text, changes, key, word):
@@ -300,3 +341,46 @@ def test_a_lubricant_whose_figures_were_changed_says_so_in_its_name():
     assert changed.name == read_case(BASE).lubricant.name + ", figures changed by the user"
     same = read_case(with_key(BASE, "lubricant", "nu_40", '"110 mm^2/s"')).lubricant
     assert same.name == read_case(BASE).lubricant.name
+
+
+def test_a_measured_temperature_may_stand_alone_or_among_several():
+    one = read_case(READ).measured
+    several = read_case(BASE + "".join(MEASURED.replace("[measured]", "[[measured]]") for _ in range(3))).measured
+    assert len(one) == 1
+    assert several == one * 3
+
+
+@pytest.mark.parametrize(
+    ("text", "key", "word"),
+    [
+        (BASE + MEASURED.replace("[measured]", "[[measured]]") + '\n[[measured]]\nspeed = "2 rpm"\n',
+         "measured[2].temperature", "temperature"),
+        (BASE + MEASURED.replace("[measured]", "[[measured]]") * 2 + "duty = 4\n", "measured[2].duty", "1 to 1"),
+        ('measured = "64 degC"\n' + BASE, "measured", "[measured] table"),
+        ("measured = [64]\n" + BASE, "measured", "[measured] table"),
+        (BASE + MEASURED.replace("[measured]", "[[measured]]") * 101, "measured", "at most 100"),
+    ],
+)  # fmt: skip
+def test_a_fault_of_a_measurement_says_which(text, key, word):
+    (fault,) = faults_of(text)
+    assert fault.key == key
+    assert word in str(fault)
+    assert fault.line
+
+
+def test_a_measurement_stands_on_its_duty_point_or_on_what_it_says():
+    two = read_case(PUMP + MEASURED + "duty = 2\n")
+    state = measured.at_state(two, two.measured[0])
+    assert state.duty[0].radial_load == two.duty[1].radial_load
+    assert state.duty[0].shaft_temperature == two.duty[1].shaft_temperature
+    own = read_case(PUMP + MEASURED + 'speed = "900 rpm"\nradial_load = "1 kN"\naxial_load = "2 kN"\n')
+    duty = measured.at_state(own, own.measured[0]).duty[0]
+    assert (duty.speed, duty.radial_load, duty.axial_load) == (900.0, 1000.0, 2000.0)
+    months = with_key(BASE, "surroundings", "ambient_lowest", '"0 degC"')
+    months = with_key(months, "surroundings", "ambient_highest", '"50 degC"')
+    read = read_case(months + MEASURED + 'ambient = "12 degC"\nfill = "50 %"\n')
+    state = measured.at_state(read, read.measured[0])
+    assert len(state.duty) == 1
+    assert state.duty[0].ambient == 12.0
+    assert state.surroundings.ambient_lowest is None
+    assert state.grease.fill.value == 0.5

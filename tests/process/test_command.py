@@ -34,6 +34,8 @@ def run(*arguments: str, stdin: str | None = None, **env: str) -> subprocess.Com
         ("overfilled_motor", (), 1),
         ("slow_roller", (), 1),
         ("slow_roller", ("--json",), 1),
+        ("measured_fan", (), 0),
+        ("measured_fan", ("--warmup", "--fail-on", "near"), 1),
     ],
 )
 def test_the_exit_code_is_the_verdict(example, options, code):
@@ -142,8 +144,9 @@ def imported_by(*arguments: str) -> set[str]:
 
 
 @pytest.mark.parametrize("options", [(), ("--json",)])
-def test_check_starts_light(options):
-    modules = imported_by("check", "examples/new_motor.toml", *options)
+@pytest.mark.parametrize("example", ["new_motor", "measured_fan"])
+def test_check_starts_light(example, options):
+    modules = imported_by("check", f"examples/{example}.toml", *options)
     roots = {name.partition(".")[0] for name in modules}
     assert "lubecheck" in roots
     assert not roots & {"CoolProp", "scipy", "pint", "pandas", "pydantic", "dask", "xarray", "mpmath", "unittest"}

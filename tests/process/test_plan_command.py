@@ -46,6 +46,15 @@ def test_json_and_standard_input():
     assert json.loads(done.stdout)["lines"][0]["planned_days"] == 112
 
 
+def test_a_measured_temperature_reaches_the_plan_and_one_that_nothing_explains_holds_it_back():
+    text = (ROOT / "examples" / "measured_fan.toml").read_text(encoding="utf-8")
+    assert run("plan", "-", stdin=text).returncode == 0
+    hotter = run("plan", "-", "--json", stdin=text.replace("48 degC", "51 degC"))
+    assert hotter.returncode == 1  # the planned year is too long for a bearing that runs so hot
+    assert json.loads(hotter.stdout)["lines"][0]["governing"] == "interval"
+    assert run("plan", "-", stdin=text.replace("48 degC", "90 degC")).returncode == 3
+
+
 def test_every_fault_of_every_case_is_told_and_nothing_is_written(tmp_path):
     path = tmp_path / "plan.csv"
     done = run("plan", GOOD, "none.toml", "-", "--to", str(path), stdin=BASE.replace('"1480 rpm"', '"1480"'))

@@ -20,6 +20,7 @@ from lubecheck.model.check import check
 from lubecheck.model.glance import glances
 from lubecheck.model.reader import load_case, read_case
 from lubecheck.physics import viscosity
+from lubecheck.studies.calibrate import calibrated
 from lubecheck.studies.mixture import SHARES
 from lubecheck.studies.plant import fewest, plant
 from lubecheck.studies.swap import swap, swaps
@@ -56,7 +57,7 @@ def test_a_lubricant_to_itself_changes_nothing_at_all(path):
     assert found.before == found.after  # bit for bit
     assert found.meeting.state == "mixes"
     assert (found.sides, found.differences, found.mixture, found.change_over.way) == ((), (), None, "nothing to do")
-    assert found.verdict == check(case).verdict
+    assert found.verdict == check(calibrated(case)).verdict
 
 
 def test_every_candidate_is_judged_as_a_check_of_it_would_be():

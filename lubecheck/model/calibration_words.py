@@ -1,0 +1,165 @@
+"""The words of a calibration: what the measurements gave, how well they fit, and what they could not settle."""
+
+from __future__ import annotations
+
+import math
+
+from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
+from lubecheck.model.calibration import COOLING, WIDEST_COOLING, Calibrated, Calibration, CalibrationFigures
+from lubecheck.model.entries import Case
+from lubecheck.model.kernel import MOVED_BY_HEAT
+from lubecheck.model.measured import (
+    READING_ERROR,
+    SETTLED_AFTER_GREASING,
+    SETTLED_AFTER_START,
+    at_state,
+)
+from lubecheck.model.result import Assumed
+
+Band = tuple[float, float, float]
+LIKELY = 3.0  # half widths outside the usual range, from which a cause is not likely: estimate
+
+
+def told(case: Case, before: Band, after: Band) -> Calibrated | None:
+    """Return the calibration of a case as a result tells it, with the temperature of the operating point."""
+    found = case.calibration
+    if found is None:
+        return None
+    is_cooling = found.column == COOLING
+    value = (found.value, found.low, found.high)
+    figures = CalibrationFigures.of(
+        {
+            "cooling_factor": value if is_cooling else None,
+            "admissible_factor": (1.0, *found.admissible) if is_cooling else None,
+            "conductance": found.conductance,
+            "fill": None if is_cooling else value,
+            "chi_square": found.chi_square,
+            "error_scale": found.error_scale,
+            "before": before,
+            "after": after if found.is_explained else None,
+        }
+    )
+    text = _explained(found, before, after) if found.is_explained else unexplained(found)
+    return Calibrated(text, found.is_explained, figures, found.points, found.explanations, _notes(case, found))
+
+
+def _explained(found: Calibration, before: Band, after: Band) -> str:
+    return f"{said(found)}; {_residuals(found)}; temperature {_span(before)} before, {_span(after)} after"
+
+
+def said(found: Calibration) -> str:
+    """Say in one clause what the measurements gave, for every result that rests on it."""
+    if not found.is_explained:
+        return unexplained(found)
+    what = _many(len(found.points))
+    if found.column == COOLING:
+        conductance = "" if found.conductance is None else f", {found.conductance:.3g} W/K"
+        return (
+            f"Calibrated on {what}: cooling by air {found.value:.2f} times the estimate ({found.low:.2f} to "
+            f"{found.high:.2f}{conductance})"
+        )
+    return (
+        f"Calibrated on {what}: the bearing is filled to {found.value * 100:.0f} % of its free volume "
+        f"({found.low * 100:.0f} to {found.high * 100:.0f} % by the reading error alone)"
+    )
+
+
+def unexplained(found: Calibration) -> str:
+    """Say that no admissible cooling, or fill, gives what was measured."""
+    figures = max((point.figures.figures for point in found.points), key=lambda one: abs(one["residual"].value or 0.0))
+    least, most = found.admissible
+    if not math.isfinite(found.value):
+        needed = "a balance of heat, which was not found"
+    elif found.column == COOLING:
+        is_end = not 1.001 / WIDEST_COOLING < found.value < WIDEST_COOLING / 1.001
+        beyond = ("under " if found.value < 1 else "over ") if is_end else ""
+        needed = (
+            f"cooling {beyond}{found.value:.2g} times the estimate, where {least:.2g} to {most:.2g} can be believed"
+        )
+    else:
+        needed = f"no fill from {least * 100:.0f} to {most * 100:.0f} %"
+    measured, computed = (figures[name].value for name in ("measured", "before"))
+    beside = "no equilibrium" if computed is None else f"{computed:.1f} degC"
+    return (
+        f"Not calibrated: {measured or 0.0:.1f} degC was measured where {beside} is computed, and it would take "
+        f"{needed}. So what the temperature moves is not judged"
+    )
+
+
+def doubt(case: Case, name: str) -> str:
+    """Say that a limit was not judged because a measured temperature contradicts what it rests on."""
+    found = case.calibration
+    if found is None or found.is_explained or name not in MOVED_BY_HEAT:
+        return ""
+    return "not judged: a measured temperature contradicts the computed one"
+
+
+def found_fill(case: Case) -> str:
+    """Say what a calibration found of an unknown fill; empty where it found none."""
+    found = case.calibration
+    if found is None or not found.is_explained or found.column == COOLING:
+        return ""
+    return (
+        f"found by the measured temperature: {found.value * 100:.0f} % (at worst {found.values['worst'] * 100:.0f} %)"
+    )
+
+
+def assumed(case: Case) -> tuple[Assumed, ...]:
+    """Return what the measurements left out, and how it was read."""
+    said = {}
+    for one in case.measured:
+        if one.reading_error is None:
+            said["reading_error"] = f"{READING_ERROR:g} K, good 95 times of 100"
+        if one.running_time is None:
+            text = f"settled: more than {SETTLED_AFTER_START:g} h after a start"
+            after = f", more than {SETTLED_AFTER_GREASING:g} h after greasing" if case.is_grease else ""
+            said["running_time"] = text + after
+        if one.place is None:
+            said["place"] = "on the housing or the outer ring"
+        if case.is_grease and at_state(case, one).grease.fill is None:
+            said["fill"] = "as proposed, with the housing at " + f"{PROPOSED_HOUSING_FILL * 100:.0f} %"
+    return tuple(Assumed(f"[measured] {key}", text, "common-practice") for key, text in said.items())
+
+
+def _notes(case: Case, found: Calibration) -> tuple[str, ...]:
+    said = []
+    if found.error_scale > 1 and found.chi_square is not None:
+        said.append(
+            f"the residuals are larger than the reading errors: chi-square {found.chi_square:.1f} for "
+            f"{len(found.points) - 1} degrees of freedom, so the errors are taken {found.error_scale:.1f} times as "
+            "large; something differed between the readings that the case does not say"
+        )
+    if not found.is_explained and min((one.surprise for one in found.explanations), default=LIKELY) >= LIKELY:
+        said.append(
+            "nothing alone is likely to explain it: check thermometer and state, and look for several causes together"
+        )
+    times = [one.running_time for one in case.measured if one.running_time is not None]
+    if case.is_grease and times and min(times) < SETTLED_AFTER_GREASING:
+        said.append(
+            f"a reading {min(times):g} h after greasing is not steady: the rise after greasing is gone after about "
+            f"{SETTLED_AFTER_GREASING:g} h; if that time counts from a start it has settled"
+        )
+    if found.is_explained:
+        said.append(
+            "what [measured] leaves out is read from the rest of the case: after a change there, say in [measured] "
+            "how it was at the reading, or measure again"
+        )
+    return tuple(said)
+
+
+def _residuals(found: Calibration) -> str:
+    residuals = [round(point.figures.figures["residual"].value or 0.0, 1) + 0.0 for point in found.points]
+    if len(residuals) == 1:
+        return f"residual {residuals[0]:.1f} K"
+    return f"residuals {', '.join(f'{one:.1f} K' for one in residuals)}"
+
+
+def _many(count: int) -> str:
+    return "1 measurement" if count == 1 else f"{count} measurements"
+
+
+def _span(band: Band) -> str:
+    value, low, high = band
+    if not math.isfinite(value):
+        return "not found"
+    return f"{low:.0f} to {high:.0f} degC" if math.isfinite(high - low) else f"{value:.0f} degC, of no known band"

@@ -1,0 +1,449 @@
+"""Calibration: a measured temperature gives the cooling, or the unknown fill, back; and what contradicts it is told."""
+
+from __future__ import annotations
+
+import dataclasses
+import functools
+import math
+
+import numpy as np
+import pytest
+from conftest import BASE, EXAMPLES, with_key
+
+import lubecheck
+from lubecheck.errors import NotCalibrated
+from lubecheck.model.assumptions import uncertain
+from lubecheck.model.check import check as plain_check
+from lubecheck.model.check import readings
+from lubecheck.model.equilibrium import solve
+from lubecheck.model.kernel import MOVED_BY_HEAT
+from lubecheck.model.points import from_rows
+from lubecheck.model.reader import load_case, read_case
+from lubecheck.model.rows import rows_of
+from lubecheck.studies.calibrate import calibrated, states_of
+from lubecheck.studies.circuit import study as circuit_study
+from lubecheck.studies.plant import plant
+from lubecheck.studies.swap import swap
+from lubecheck.studies.system import study as system_study
+from lubecheck.studies.wanted import study as wanted_study
+from lubecheck.studies.warmup import judged as warm_up_judged
+
+PUMP = (EXAMPLES / "oil_bath_pump.toml").read_text()
+MOTOR = (EXAMPLES / "new_motor.toml").read_text()
+# Cooling is stated, the fill is not known, and surplus grease has no room.
+PACKED = BASE
+for _table, _key, _value in (
+    ("grease", "fill", '"unknown"'),
+    ("surroundings", "draught", None),
+    ("housing", "kind", None),
+    ("housing", "conductance", '"1.0 W/K"'),
+    ("housing", "void", '"5 cm^3"'),
+):
+    PACKED = with_key(PACKED, _table, _key, _value)
+
+
+def measured(text: str, *tables: dict[str, object]) -> str:
+    """Return a case with measured temperatures; numbers are degrees or kelvin."""
+    for table in tables:
+        head = "[measured]" if len(tables) == 1 else "[[measured]]"
+        units = {"temperature": "degC", "ambient": "degC", "shaft_temperature": "degC", "reading_error": "K"}
+        lines = [f'{key} = "{value!r} {units[key]}"' if key in units and not isinstance(value, str)
+                 else f"{key} = {value!r}" for key, value in table.items()]  # fmt: skip
+        text += "\n" + "\n".join([head, *lines]) + "\n"
+    return text
+
+
+def predicted(text: str, states: list[dict[str, object]], place: str = "outer", **columns: float) -> list[float]:
+    """Return what a sensor would read at some states of a case in which a column is other than estimated."""
+    case = read_case(measured(text, *({"temperature": 20.0, **state} for state in states)))
+    points = states_of(case, readings(case)[1][0])
+    return getattr(solve(points.changed(**columns)), place).tolist()
+
+
+def found_of(text: str):
+    return calibrated(read_case(text)).calibration
+
+
+@pytest.mark.parametrize("factor", [0.62, 1.0, 1.7])
+@pytest.mark.parametrize(
+    ("text", "state", "place"),
+    [
+        (MOTOR, {"ambient": 18.0}, "outer"),
+        (MOTOR, {"place": "inner ring", "speed": "900 rpm"}, "inner"),
+        (PUMP, {"ambient": 12.0, "duty": 2}, "outer"),
+        (PUMP, {"speed": "1480 rpm", "radial_load": "1 kN", "axial_load": "1 kN"}, "outer"),
+        (MOTOR, {"draught": "2 m/s", "fill": "60 %"}, "outer"),
+    ],
+)
+def test_a_hidden_cooling_is_found_again(text, state, place, factor):
+    (temperature,) = predicted(text, [state], place, cooling_factor=factor)
+    found = found_of(measured(text, {"temperature": temperature, **state}))
+    assert found.is_explained
+    assert found.value == pytest.approx(factor, rel=1e-6)
+    assert found.low < factor < found.high
+    (point,) = found.points
+    assert point.figures.figures["residual"].value == pytest.approx(0.0, abs=1e-6)
+
+
+@pytest.mark.parametrize("fill", [0.62, 0.8, 0.97])
+def test_a_hidden_fill_is_found_again_where_the_cooling_is_known(fill):
+    (temperature,) = predicted(PACKED, [{}], fill=fill)
+    found = found_of(measured(PACKED, {"temperature": temperature, "reading_error": 0.5}))
+    assert (found.column, found.is_explained) == ("fill", True)
+    assert found.value == pytest.approx(fill, abs=1e-6)
+    assert found.low < fill < found.high
+    assert found.conductance == pytest.approx(1.0)
+
+
+def test_a_fill_that_was_found_is_judged_and_its_worst_is_what_the_reading_leaves():
+    (temperature,) = predicted(PACKED, [{}], fill=0.95)
+    result = lubecheck.check(read_case(measured(PACKED, {"temperature": temperature})))
+    limit = result.limit("fill")
+    assert limit.state == "beyond"
+    assert limit.demand == pytest.approx(0.95, abs=1e-6)
+    assert "found by the measured temperature: 95 %" in limit.note
+    assert result.calibration.figures.figures["cooling_factor"].value is None
+    assert result.calibration.figures.figures["fill"].value == pytest.approx(0.95, abs=1e-6)
+
+
+def test_an_outlet_of_circulating_oil_is_a_place():
+    text = PUMP.replace(
+        'supply = "bath"\nlevel = "0 mm"', 'supply = "circulating"\nflow = "0.3 l/min"\ninlet = "45 degC"'
+    )
+    text = text.replace("bath -/17/14", "circulating -/17/14")
+    case = read_case(measured(text, {"temperature": 20.0, "duty": 1}))
+    state = solve(states_of(case, readings(case)[1][0]).changed(cooling_factor=1.3))
+    # Half of what the oil could take, by the model's own share; so it leaves half way to the bearing's temperature.
+    outlet = 45.0 + 0.5 * (float(state.temperature[0]) - 45.0)
+    found = found_of(measured(text, {"temperature": outlet, "duty": 1, "place": "oil outlet"}))
+    assert found.value == pytest.approx(1.3, rel=1e-6)
+
+
+def test_several_readings_that_agree_give_the_cooling_and_a_smaller_error():
+    states = [{"ambient": 18.0}, {"ambient": 30.0}, {"speed": "900 rpm"}]
+    temperatures = predicted(MOTOR, states, cooling_factor=0.8)
+    readings_of = [{"temperature": t, **state} for t, state in zip(temperatures, states, strict=True)]
+    three, one = found_of(measured(MOTOR, *readings_of)), found_of(measured(MOTOR, readings_of[0]))
+    assert three.value == pytest.approx(0.8, rel=1e-6)
+    assert three.chi_square == pytest.approx(0.0, abs=1e-9)
+    assert three.error_scale == 1.0
+    assert one.low < three.low < 0.8 < three.high < one.high
+
+
+def test_readings_of_one_state_that_differ_leave_their_half_as_residuals_and_weigh_by_their_error():
+    (at,) = predicted(MOTOR, [{}], cooling_factor=0.9)
+    alike = found_of(measured(MOTOR, {"temperature": at - 1.5}, {"temperature": at + 1.5}))
+    assert alike.value == pytest.approx(0.9, rel=1e-5)
+    assert [p.figures.figures["residual"].value for p in alike.points] == pytest.approx([-1.5, 1.5], abs=1e-4)
+    # 2 K are 95 %, so 1.96 standard errors: (1.5 / 1.0204)^2 twice.
+    assert alike.chi_square == pytest.approx(2 * (1.5 / (2 / 1.96)) ** 2, rel=1e-3)
+    # The mean of two readings of errors 1 and 2 K weighs them 4 to 1.
+    finer = found_of(measured(MOTOR, {"temperature": at - 0.4, "reading_error": 1.0}, {"temperature": at + 1.6}))
+    assert finer.value == pytest.approx(0.9, rel=1e-5)
+
+
+def test_residuals_larger_than_the_reading_errors_are_said_and_widen_the_result():
+    (at,) = predicted(MOTOR, [{}], cooling_factor=0.9)
+    near = lubecheck.check(read_case(measured(MOTOR, {"temperature": at - 0.5}, {"temperature": at + 0.5})))
+    far = lubecheck.check(read_case(measured(MOTOR, {"temperature": at - 4.0}, {"temperature": at + 4.0})))
+    assert not any("residuals" in note for note in near.calibration.notes)
+    (note,) = [note for note in far.calibration.notes if "residuals are larger" in note]
+    assert "chi-square 30.7 for 1 degrees of freedom" in note  # 2 (4 * 1.96 / 2)^2 / 4 * ... by hand: 2 * 3.92^2
+    spans = [one.calibration.figures.figures["cooling_factor"] for one in (near, far)]
+    assert spans[1].high - spans[1].low > 2 * (spans[0].high - spans[0].low)
+
+
+@pytest.mark.parametrize("name", ["new_motor", "oil_bath_pump", "pinion_shaft", "belt_fan", "overfilled_motor"])
+@pytest.mark.parametrize("away", [-3.0, 0.0, 5.0])
+def test_the_band_is_that_of_the_reading_where_it_was_read_and_narrower_everywhere(name, away):
+    text = (EXAMPLES / f"{name}.toml").read_text()
+    state = {"duty": 1}
+    (estimate,) = predicted(text, [state])
+    result = lubecheck.check(read_case(measured(text, {"temperature": estimate + away, **state})))
+    before = lubecheck.check(read_case(text))
+    for point, plain in zip(result.duty, before.duty, strict=True):
+        for key in ("temperature", "outer_ring_temperature", "inner_ring_temperature"):
+            after, wide = point.figures[key], plain.figures[key]
+            assert after.high - after.low < wide.high - wide.low, key
+    outer = result.duty[0].figures["outer_ring_temperature"]
+    assert outer.value == pytest.approx(estimate + away, abs=1e-4)
+    # The reading is good to 2 K, 95 times of 100; a band holds 97 of its 100 draws, 2.2 K.
+    assert outer.value - outer.low == pytest.approx(2.2, abs=0.1)
+    assert outer.high - outer.value == pytest.approx(2.2, abs=0.1)
+
+
+def test_a_reading_that_is_coarser_than_the_estimate_takes_nothing_from_it():
+    text = (EXAMPLES / "slow_roller.toml").read_text()
+    (estimate,) = predicted(text, [{}])
+    result = lubecheck.check(read_case(measured(text, {"temperature": estimate, "reading_error": 10.0})))
+    after, before = (
+        result.operating.figures["temperature"],
+        lubecheck.check(read_case(text)).operating.figures["temperature"],
+    )
+    assert after.high - after.low <= 1.05 * (before.high - before.low)
+
+
+@pytest.mark.parametrize(("name", "away"), [("new_motor", 3.0), ("new_motor", -3.0), ("oil_bath_pump", 4.0),
+                                            ("pinion_shaft", 0.0), ("belt_fan", 4.0)])  # fmt: skip
+def test_inputs_that_give_the_reading_give_the_prediction_within_the_band(name, away, report):
+    """Brute force: inputs drawn from their ranges, kept as far as they give the reading within its error."""
+    text = (EXAMPLES / f"{name}.toml").read_text()
+    state = {"ambient": 10.0, "duty": 1}
+    (estimate,) = predicted(text, [state])
+    case = read_case(measured(text, {"temperature": estimate + away, **state}))
+    band = lubecheck.check(case).duty[0].figures["temperature"]
+    usual = readings(case)[1][0]
+    there, here = states_of(case, usual), from_rows(rows_of(dataclasses.replace(case, measured=()), usual)[:1])
+    chance, count = np.random.default_rng(5), 20_000
+    drawn = {}
+    for column, low, high in uncertain(case):  # the ends hold 95 %: 1.96 standard deviations to each side
+        z = chance.standard_normal(count) / 1.96
+        drawn[column] = np.exp(np.where(z < 0, -z * np.log(low), z * np.log(high)))
+
+    def state_of(points):
+        many = points.take(np.zeros(count, dtype=int))
+        return solve(many.changed(**{key: getattr(many, key) * value for key, value in drawn.items()}))
+
+    off = (state_of(there).outer - estimate - away) / (2.0 / 1.96)
+    kept = chance.random(count) < np.exp(-(off**2) / 2)
+    predictions = state_of(here).temperature[kept]
+    inside = float(((predictions >= band.low) & (predictions <= band.high)).mean())
+    report.append(f"calibrated band of {name}, reading {away:+g} K: holds {inside * 100:.1f} % of {kept.sum()}")
+    assert kept.sum() > 1000
+    assert inside >= 0.94  # 95 %, less what so few samples leave open
+
+
+@pytest.mark.parametrize("cause", ["degF read as degC", "degC read as degF", "rise read as temperature"])
+def test_a_misread_unit_ranks_first_where_it_fits(cause):
+    (estimate,) = predicted(BASE, [{"ambient": 25.0}])
+    text = {
+        "degF read as degC": f"{estimate * 1.8 + 32:.1f} degC",
+        "degC read as degF": f"{estimate:.1f} degF",
+        "rise read as temperature": f"{estimate - 25.0:.1f} degC",
+    }[cause]
+    found = found_of(measured(BASE, {"temperature": text, "ambient": 25.0}))
+    assert not found.is_explained
+    assert found.explanations[0].cause == cause
+    assert found.explanations[0].needed == pytest.approx(estimate, abs=0.1)
+
+
+def at_explanation(text: str, table: dict[str, object], **changes: float) -> float:
+    """Return what the sensor would read were the explanation true."""
+    case = read_case(measured(text, table))
+    points = states_of(case, readings(case)[1][0])
+    return float(solve(points.changed(**changes)).outer[0])
+
+
+@pytest.mark.parametrize(
+    ("cause", "column"),
+    [("machine heat", "machine_heat"), ("shaft temperature", "shaft_temperature"), ("ambient", "ambient")],
+)
+def test_each_explanation_of_a_reading_that_is_too_hot_gives_the_reading(cause, column):
+    table = {"temperature": 68.0, "running_time": "48 h"}
+    found = found_of(measured(BASE, table))
+    assert not found.is_explained
+    (one,) = [item for item in found.explanations if item.cause == cause]
+    assert at_explanation(BASE, table, **{column: one.needed}) == pytest.approx(68.0, abs=1e-4)
+    assert f"{one.needed:.0f} degC" in one.words or f"{one.needed:.3g} W" in one.words
+
+
+def test_an_overfill_that_explains_a_reading_is_named_first_with_its_share():
+    # Cooling and machine heat are known, the fill is said to be right, and the housing has no room.
+    text = PACKED
+    for table, key, value in (("grease", "fill", '"35 %"'), ("housing", "shaft_temperature", None),
+                              ("housing", "machine_heat", '"0 W"'), ("housing", "conductance", '"1.5 W/K"'),
+                              ("duty", "speed", '"3000 rpm"')):  # fmt: skip
+        text = with_key(text, table, key, value)
+    hot = at_explanation(text, {"temperature": 60.0}, fill=0.97, housing_fill=1.0)
+    found = found_of(measured(text, {"temperature": hot, "reading_error": 0.2, "running_time": "48 h"}))
+    assert not found.is_explained
+    assert found.explanations[0].cause == "overfill"
+    assert found.explanations[0].needed == pytest.approx(0.97, abs=1e-4)
+    assert "filled to 97 %" in found.explanations[0].words
+
+
+def test_explanations_are_ranked_by_how_far_outside_its_usual_range_each_would_be():
+    for text, table in (
+        (BASE, {"temperature": 68.0}),
+        (MOTOR, {"temperature": 30.0}),
+        (PUMP, {"temperature": 120.0, "duty": 1}),
+    ):
+        surprises = [item.surprise for item in found_of(measured(text, table)).explanations]
+        assert len(surprises) >= 2
+        assert surprises == sorted(surprises)
+
+
+def test_a_reading_that_is_too_cold_is_explained_by_what_cools_or_by_a_start_just_before():
+    found = found_of(measured(MOTOR, {"temperature": 47.0}))
+    causes = {item.cause: item for item in found.explanations}
+    assert not found.is_explained
+    assert {"ambient", "draught", "shaft temperature", "not settled after a start"} <= set(causes)
+    assert causes["ambient"].needed < 40
+    assert causes["shaft temperature"].needed < 95
+    blown = at_explanation(MOTOR, {"temperature": 47.0}, draught=causes["draught"].needed)
+    assert blown == pytest.approx(47.0, abs=1e-4)
+    settled = found_of(measured(MOTOR, {"temperature": 47.0, "running_time": "30 h"}))
+    assert "not settled after a start" not in {item.cause for item in settled.explanations}
+
+
+@pytest.mark.parametrize(("text", "table"), [(MOTOR, {"temperature": 95.0}), (MOTOR, {"temperature": 20.0}),
+                                             (PUMP, {"temperature": 140.0, "duty": 1})])  # fmt: skip
+def test_what_heat_moves_is_not_judged_beside_a_reading_that_nothing_explains(text, table):
+    plain = lubecheck.check(read_case(text))
+    result = lubecheck.check(read_case(measured(text, table)))
+    assert not result.calibration.is_explained
+    assert "Not calibrated" in result.calibration.text
+    for limit in result.limits:
+        before = plain.limit(limit.name).state
+        if limit.name in MOVED_BY_HEAT:
+            assert limit.state == ("beyond" if before == "beyond" else "unknown"), limit.name
+            assert limit.use is None
+            assert "contradicts" in limit.note
+        else:
+            assert limit.state == before
+    assert result.verdict == "unknown"
+    assert result.life.figures["modified_life"].value is None
+
+
+def test_what_is_beyond_stays_beyond_beside_a_reading_that_nothing_explains():
+    text = with_key(MOTOR, "lubricant", "name", '"lithium-15-2"') if "lithium-15-2" in MOTOR else MOTOR
+    text = text.replace('speed = "1480 rpm"', 'speed = "60 rpm"')
+    plain = lubecheck.check(read_case(text))
+    assert plain.limit("film").state == "beyond"
+    result = lubecheck.check(read_case(measured(text, {"temperature": 95.0})))
+    assert not result.calibration.is_explained
+    assert result.limit("film").state == "beyond"
+    assert result.limit("film").use == pytest.approx(plain.limit("film").use)
+    assert result.verdict == "beyond"
+
+
+def test_a_case_with_a_measurement_is_never_judged_without_it():
+    case = read_case(measured(MOTOR, {"temperature": 60.0}))
+    with pytest.raises(NotCalibrated):
+        plain_check(case)
+    with pytest.raises(NotCalibrated):
+        rows_of(case, readings(case)[1][0])
+    assert calibrated(calibrated(case)) == calibrated(case)
+
+
+HOT = {"temperature": 64.0}  # the motor of the example is estimated at 60 degC on its outer ring
+
+
+def test_every_study_sees_the_measurement():
+    plain, hot = read_case(MOTOR), read_case(measured(MOTOR, HOT))
+    lubricant = "lithium-complex-220-2-ep"
+    assert lubecheck.check(hot).limit("interval").use > lubecheck.check(plain).limit("interval").use
+    sides = [swap(case, lubricant) for case in (plain, hot)]
+    for side in ("before", "after"):
+        temperatures = [getattr(one, side).figures.figures["temperature"].value for one in sides]
+        assert temperatures[1] > temperatures[0] + 2
+    assert system_study([hot]).life_h < system_study([plain]).life_h
+    assert wanted_study(hot).life_h < wanted_study(plain).life_h
+    assert any("Calibrated" in note for note in (*system_study([hot]).notes, *wanted_study(hot).notes))
+    uses = [plant({"a": case, "b": case}, [lubricant]).counts[0] for case in (plain, hot)]
+    assert uses[0].judged == uses[1].judged == 2
+
+
+def test_a_warm_up_ends_at_what_was_calibrated_and_is_not_judged_beside_what_nothing_explains():
+    case = read_case(measured(MOTOR, HOT))
+    result = warm_up_judged(case, lubecheck.check(case))
+    (start,) = [course for course in result.warm_up.courses if course.name == "start"]
+    steady = result.operating.figures["outer_ring_temperature"].value
+    assert steady == pytest.approx(64.0, abs=1e-4)
+    assert start.figures.figures["end"].value == pytest.approx(steady, abs=0.1)
+    case = read_case(measured(MOTOR, {"temperature": 95.0}))
+    result = warm_up_judged(case, lubecheck.check(case))
+    assert result.limit("peak_temperature").state == "unknown"
+
+
+def test_a_circuit_sees_the_measurements_of_its_positions(tmp_path):
+    for name, table in (("a", ()), ("b", ({"temperature": 80.0, "duty": 1},))):
+        (tmp_path / f"{name}.toml").write_text(measured(PUMP, *table))
+    (tmp_path / "circuit.toml").write_text('[circuit]\ncases = ["a.toml", "b.toml"]\ncode = "-/17/14"\n')
+    from lubecheck.model.circuit import load_circuit
+
+    result = circuit_study(load_circuit(tmp_path / "circuit.toml"))
+    assert any(note.startswith("b: Calibrated") for note in result.notes)
+
+
+def test_a_change_of_the_cooling_multiplies_what_was_found():
+    case = calibrated(read_case(measured(MOTOR, HOT)))
+    from lubecheck.studies.changes import Change, apply
+
+    blown = apply(case, Change("", "cooling", 1, (("surroundings.draught", "3 m/s"),)))
+    row, there = (rows_of(one, readings(one)[1][0])[0] for one in (case, blown))
+    assert row["cooling_factor"] == there["cooling_factor"] == pytest.approx(case.calibration.value)
+    assert solve(from_rows([there])).outer[0] < solve(from_rows([row])).outer[0] - 3
+
+
+def test_a_measured_temperature_makes_the_kind_of_the_housing_matter_little():
+    text = with_key(measured(MOTOR, HOT), "housing", "kind", None)
+    limit = lubecheck.check(read_case(text)).limit("temperature")
+    assert limit.state == "within"
+    temperatures = [lubecheck.check(read_case(one)).operating.figures["temperature"].value
+                    for one in (text, measured(MOTOR, HOT))]  # fmt: skip
+    assert temperatures[0] == pytest.approx(temperatures[1], abs=0.2)
+
+
+FACTS_OF_MOTOR = [("housing", "relief"), ("surroundings", "orientation"), ("bearing", "cage"),
+                  ("surroundings", "altitude"), ("surroundings", "dust"), ("cleanliness", "setting"),
+                  ("housing", "void"), ("surroundings", "draught"), ("grease", "hours_per_day")]  # fmt: skip
+
+
+@pytest.mark.parametrize("temperature", [47.0, 54.0, 60.0])
+@pytest.mark.parametrize(("table", "key"), FACTS_OF_MOTOR)
+def test_taking_a_fact_away_beside_an_explained_measurement_never_improves_a_limit(table, key, temperature):
+    """Beside one that is not, the fact that contradicts it may go: then what temperature moves is judged again."""
+    gravity = {"within": 0, "near": 1, "unknown": 2, "beyond": 2}
+    text = measured(BASE, {"temperature": temperature})
+    before = lubecheck.check(read_case(text))
+    assert before.calibration.is_explained
+    after = lubecheck.check(read_case(with_key(text, table, key, None)))
+    for limit in before.limits:
+        assert gravity[after.limit(limit.name).state] >= gravity[limit.state], limit.name
+
+
+@functools.cache
+def uses_without_measurement() -> dict[str, float]:
+    return {limit.name: limit.use for limit in lubecheck.check(read_case(MOTOR)).limits}
+
+
+@pytest.mark.parametrize("temperature", [57.0, 58.5, 60.0, 62.0, 64.0])
+def test_a_measurement_says_what_is_so_better_or_worse(temperature):
+    """A reading hotter than computed worsens every limit of heat, a cooler one betters it: it is evidence."""
+    plain = uses_without_measurement()
+    (estimate,) = predicted(MOTOR, [{}])
+    result = lubecheck.check(read_case(measured(MOTOR, {"temperature": temperature})))
+    for name in ("temperature", "rings", "interval", "film", "fatigue_life"):
+        change = result.limit(name).use - plain[name]
+        assert math.copysign(1, change) == math.copysign(1, temperature - estimate), name
+
+
+def test_a_hotter_reading_never_gives_a_cooler_bearing():
+    cooling = [found_of(measured(MOTOR, {"temperature": float(t)})).value for t in np.linspace(52, 72, 11)]
+    assert (np.diff(cooling) < 0).all()
+
+
+def test_what_a_measurement_leaves_out_is_listed_as_assumed():
+    listed = {item.name for item in lubecheck.check(read_case(measured(MOTOR, HOT))).assumed}
+    assert {"[measured] reading_error", "[measured] running_time", "[measured] place"} <= listed
+    full = {**HOT, "reading_error": 1.0, "running_time": "30 h", "place": "housing"}
+    listed = {item.name for item in lubecheck.check(read_case(measured(MOTOR, full))).assumed}
+    assert not any(name.startswith("[measured]") for name in listed)
+
+
+def test_a_reading_some_hours_after_greasing_is_said_not_to_be_steady():
+    soon, late = (
+        lubecheck.check(read_case(measured(MOTOR, {**HOT, "running_time": time}))) for time in ("6 h", "25 h")
+    )
+    assert any("not steady" in note for note in soon.calibration.notes)
+    assert not any("not steady" in note for note in late.calibration.notes)
+
+
+def test_the_example_tells_its_story():
+    result = lubecheck.check(load_case(EXAMPLES / "measured_fan.toml"))
+    figures = result.calibration.figures.figures
+    assert figures["cooling_factor"].value < 1
+    assert figures["after"].high - figures["after"].low < 0.65 * (figures["before"].high - figures["before"].low)
+    assert (result.verdict, result.governing) == ("near", "interval")
+    assert lubecheck.check(load_case(EXAMPLES / "new_motor.toml")).verdict == "within"
