@@ -15,6 +15,7 @@ from rich.text import Text
 
 from lubecheck.faces.display import amount, figure, in_system, is_plain, number, printable, shown_unit
 from lubecheck.faces.losses import print_damage, print_losses
+from lubecheck.faces.needs import print_needs
 from lubecheck.model.result import Figures, Limit, PlanLine, Result
 from lubecheck.sources import cite
 
@@ -37,7 +38,8 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     _heading(result, console, system)
     _limits(result, console, system)
     _plan(result, console, system)
-    _remedies(result, console)
+    _remedies(result, console, system)
+    print_needs(result.needs, console, system)
     bullets("Notes", (in_system(note, system) for note in result.notes), console)
     _operating(result, console, system)
     _heat(result, console)
@@ -246,9 +248,9 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
     return parts
 
 
-def _remedies(result: Result, console: Console) -> None:
+def _remedies(result: Result, console: Console, system: str) -> None:
     """Print the changes that bring the verdict back, with what each does to the limits."""
-    lines = (f"{one.change} -> {one.verdict_after}. {one.note}" for one in result.remedies)
+    lines = (in_system(f"{one.change} -> {one.verdict_after}. {one.note}", system) for one in result.remedies)
     bullets("What would bring it back, least effort first", lines, console)
 
 

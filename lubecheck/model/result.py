@@ -286,6 +286,28 @@ class Remedy:
 
 
 @dataclass(frozen=True, slots=True)
+class Need:
+    """What one means alone has to be to hold a temperature."""
+
+    means: str
+    now: float | str | None  # None: there is none of it yet
+    needed: float | str | None  # None: it cannot do it alone
+    unit: str
+    note: str
+    temperature: float | None  # degC, of the hottest duty point then
+    edits: tuple[tuple[str, str | Mapping[str, str] | None], ...]  # of the case file, as of a remedy
+
+
+@dataclass(frozen=True, slots=True)
+class Needs:
+    """What each means alone has to be, and for what."""
+
+    question: str = ""  # what is to be held, in words; empty where nothing was asked
+    found: tuple[Need, ...] = ()
+    is_due: bool = False  # it was asked, or heat brings a limit near or beyond
+
+
+@dataclass(frozen=True, slots=True)
 class Damage:
     """What one duty point takes of the fatigue life."""
 
@@ -414,6 +436,7 @@ class Result:
     interval_lines: tuple[IntervalLine, ...] = ()
     interval_spread: str = ""  # how far the lines lie apart, in words
     warm_up: WarmUp | None = None  # where it was asked for
+    needs: Needs = Needs()
 
     def limit(self, name: str) -> Limit:
         """Return a limit by its name.
