@@ -4,6 +4,8 @@ from __future__ import annotations
 
 import math
 
+import numpy as np
+
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.result import Amounts, PlanLine
@@ -35,6 +37,26 @@ def housing_fill(case: Case, outcome: Outcome) -> Triple | tuple[None, None, Non
     planned = case.grease.housing_fill if outcome.judged["fill"].use[0] <= 1 else None
     nominal = nominal if planned is None else planned
     return min(low, nominal) * full, nominal * full, max(high, nominal) * full
+
+
+def purge_run(case: Case) -> Triple:
+    """Return the hours to run with the way out open, at the slowest duty point: low, nominal, high."""
+    slowest = min(duty.speed for duty in case.duty)
+    low, nominal, high = grease_amount.purge_run.plain(np.asarray(slowest))
+    return float(low), float(nominal), float(high)
+
+
+def run_words(low_h: float, high_h: float) -> str:
+    """Return a span of time as a fitter reads it, in steps of five minutes or half an hour.
+
+    >>> run_words(10 / 60, 0.5), run_words(17 / 60, 50 / 60), run_words(0.83, 2.5), run_words(8.0, 8.0)
+    ('10 to 30 min', '15 to 50 min', '1 to 2.5 h', 'a shift of 8 h')
+    """
+    if low_h == high_h:
+        return f"a shift of {high_h:g} h"
+    per_h, unit, step = (60, "min", 5.0) if high_h <= 2 else (1, "h", 0.5)
+    low, high = (max(step, round(time * per_h / step) * step) for time in (low_h, high_h))
+    return f"{low:g} to {high:g} {unit}"
 
 
 def amounts(case: Case, outcome: Outcome, plan: PlanLine) -> Amounts:
@@ -69,6 +91,7 @@ def amounts(case: Case, outcome: Outcome, plan: PlanLine) -> Amounts:
         found |= {
             "regrease_quantity": float(grease_amount.regrease_quantity_by_rule.plain(**sizes, rule=rule)),
             "purge_quantity": float(grease_amount.purge_quantity.plain(**sizes)),
+            "purge_run": (purge_run(case)[1], purge_run(case)[0], purge_run(case)[2]),
             "continuous_feed": (feed(case)[1], feed(case)[0], feed(case)[2]),
             "grease_per_year": year,
             "cartridges_per_year": None if year is None else year / cartridge(case),

@@ -156,6 +156,7 @@ class Amounts(Figures):
     purge_quantity = Declared(
         "g", "grease that renews a neglected or over-aged filling, in steps, with the way out open"
     )
+    purge_run = Declared("h", "time to run with the way out open after greasing, and between the steps of a purge")
     continuous_feed = Declared("g/h", "rate of continuous feeding, where an interval would be too short")
     grease_per_year = Declared("g", "grease given in a year by the plan line")
     cartridges_per_year = Declared("1", "cartridges that this is")

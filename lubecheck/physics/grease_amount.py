@@ -13,7 +13,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from lubecheck.method import method
-from lubecheck.units import Choice, Cm3, Gram, GramPerHour, KgPerM3, Mm, Rpm, Share
+from lubecheck.units import Choice, Cm3, Gram, GramPerHour, Hour, KgPerM3, Mm, Rpm, Share
 
 STEEL_DENSITY = 7.85  # g/cm^3, bearing steel; a brass cage (8.5) or ceramic balls (3.2) shift the free volume
 GREASE_DENSITY = 900.0  # kg/m^3; greases with soap and mineral oil 870 to 950, with fluorinated oil up to 2000
@@ -25,6 +25,13 @@ REGREASE_GRAMS = {"side": 0.005, "groove": 0.002, "weekly": 0.002, "monthly": 0.
 _REGREASE_GRAMS = np.array(list(REGREASE_GRAMS.values()))
 _PURGE_GRAMS = 0.01  # g/mm^2, before a restart after years at rest or with over-aged grease; handbooks, from memory
 _FEED_GRAMS = (0.3e-4, 0.4e-4, 0.5e-4)  # g/(h*mm^2), low, nominal, high; handbooks, from memory
+
+# Time to run with the way out open after greasing. Motor makers' sheets and handbooks, from memory: most say 10 to 30
+# min at running speed, single ones 5 min or 2 h. At slow shafts it is the turns that matter, not the minutes: counted
+# at 1500 rpm (estimate of this program, as is the longest, a shift).
+PURGE_RUN = (10 / 60, 20 / 60, 30 / 60)  # h, low, nominal, high
+_PURGE_SPEED = 1500.0  # rpm
+_PURGE_LONGEST = 8.0  # h
 
 RegreaseRule = Annotated[NDArray[np.intp], Choice(tuple(REGREASE_GRAMS))]
 
@@ -216,6 +223,25 @@ def purge_quantity(*, outside: Mm, width: Mm) -> Gram:
     <Quantity(25.0, 'gram')>
     """
     return _PURGE_GRAMS * outside * width
+
+
+@method(source="common-practice", valid={"speed": (1e-3, 1e6)})
+def purge_run(speed: Rpm) -> tuple[Hour, Hour, Hour]:
+    """Time to run with the way out open after greasing, and between the steps of a purge: low, nominal, high.
+
+    10 - 20 - 30 min from 1500 rpm up, as many turns (15 000 to 45 000) below it, at most a shift of 8 h. A range of
+    common practice, from memory, and no measured end: it is over when the temperature has turned over and nothing more
+    comes out.
+
+    speed [rpm]: running speed n, any shape
+    returns [h, h, h]
+
+    >>> [round(time.to("min").magnitude) for time in purge_run("300 rpm")]
+    [50, 100, 150]
+    """
+    slow = np.maximum(1.0, _PURGE_SPEED / speed)
+    low, nominal, high = (np.minimum(time * slow, _PURGE_LONGEST) for time in PURGE_RUN)
+    return low, nominal, high
 
 
 @method(source="fill-handbooks", valid={"outside": _SIZE, "width": _SIZE})

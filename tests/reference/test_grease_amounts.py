@@ -100,3 +100,13 @@ def test_fill_of_a_slow_bearing_may_be_whole():
 def test_grease_of_ordinary_density_weighs_900_grams_a_litre():
     assert grease_amount.grease_mass("1 l", "0.9 g/cm^3").to("g").magnitude == pytest.approx(900.0)
     assert grease_amount.GREASE_DENSITY == 900.0
+
+
+def test_the_time_with_the_way_out_open_is_that_of_common_practice():
+    # Motor makers' sheets, memory: 10 to 30 min at 4 and 2 poles; at 300 rpm the same turns take five times as long
+    for speed, minutes in ((1480.0, (10.1, 20.3, 30.4)), (2960.0, (10, 20, 30)), (300.0, (50, 100, 150))):
+        found = np.array(grease_amount.purge_run.plain(speed)) * 60
+        assert found == pytest.approx(np.array(minutes), rel=0.01)
+    assert grease_amount.purge_run.plain(1.0) == (8.0, 8.0, 8.0)
+    slower = np.array(grease_amount.purge_run.plain(np.geomspace(1.0, 1e5, 500)))
+    assert np.all(np.diff(slower, axis=1) <= 0)
