@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 
+from lubecheck.model import intervals
 from lubecheck.model.assumptions import FACTS
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
@@ -147,7 +148,8 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
     p, found = outcome.points, outcome.lines
     bath, oxidation = _finite(found.bath[0]), _finite(found.oxidation[0])
     is_bath, is_circulating = bool(p.is_bath[0]), bool(p.is_circulating[0])
-    water = tuple(f for f in (("water", float(p.water_share[0])),) if f[1] != 1.0)
+    charge = float(intervals.charge_share(p, outcome.state.friction_power)[int(outcome.hottest[0])])
+    factors = tuple(f for f in (("water", float(p.water_share[0])), ("volume", charge)) if f[1] != 1.0)
     hot = "the bath is hotter than the rule goes"
     low, high = oil_life.OXIDATION_RANGE
     return (
@@ -157,7 +159,7 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
             failed=None,
             applies=is_bath and bath is not None,
             governs=bool(is_bath and bath is not None and bath == found.allowed[0]),
-            factors=water,
+            factors=factors,
             basis="bath-handbooks",
             note=("12 months up to 50 degC, 3 at 100 degC" if bath is not None else hot)
             if is_bath
@@ -169,12 +171,34 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
             failed=None,
             applies=(is_bath or is_circulating) and oxidation is not None,
             governs=bool(oxidation is not None and oxidation == found.allowed[0]),
-            factors=water,
+            factors=factors,
             basis="whitby",
             note=f"4 years up to 70 degC, halved each 10 K; published rates {low:g} to {high:g} times each 10 K; read "
             f"at the bearing's temperature, the hottest place of the oil, valid to {oil_life.OXIDATION_TOP:g} degC",
         ),
     )
+
+
+def charge_words(case: Case, outcome: Outcome) -> str:
+    """Say how large the oil charge is beside an ordinary one, where it was stated."""
+    p, row = outcome.points, int(outcome.hottest[0])
+    volume = float(p.oil_volume[row])
+    share = float(intervals.charge_share(p, outcome.state.friction_power)[row])
+    if p.is_bath[0]:
+        figure = volume / float(outcome.state.friction_power[row])
+        low, high, unit = *oil_life.ORDINARY_SUMP, "l a kW of friction"
+    elif p.is_circulating[0]:
+        figure = float(oil_life.dwell_time.plain(p.oil_volume[row], p.oil_flow[row])) * 60
+        low, high = (60 * end for end in oil_life.ORDINARY_DWELL)
+        unit = "min of the flow"
+    else:
+        return ""
+    if not math.isfinite(figure) or low <= figure <= high:
+        return ""
+    size = f"{figure:.2g} {unit}, ordinary are {low:g} to {high:g}"
+    if figure < low:
+        return f"a small charge, {size}: the rule may be too long for it, look at the oil or change it earlier"
+    return f"a large charge, {size}: x {share:.2f} (estimate)"
 
 
 def interval_note(case: Case, outcome: Outcome) -> str:

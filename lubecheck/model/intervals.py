@@ -29,8 +29,8 @@ class Lines:
     allowed: Array  # the shortest that applies, with rest and calendar ceiling
 
 
-def of(points: Points, temperature: Array, load_ratio: Array) -> Lines:
-    """Return the lines of every position at the temperatures and loads that were worked out for its rows."""
+def of(points: Points, temperature: Array, load_ratio: Array, power: Array) -> Lines:
+    """Return the lines of every position at the temperatures, loads and friction heat worked out for its rows."""
     p = points
     first = p.starts
     is_grease, is_sealed = p.is_grease[first] > 0, p.is_sealed[first] > 0
@@ -40,8 +40,11 @@ def of(points: Points, temperature: Array, load_ratio: Array) -> Lines:
     classical = damage_sum(p, classical_rows(p, temperature, load_ratio))
     classical *= to_share(grease_life.L01, failed)
     booser = damage_sum(p, booser_rows(p, temperature, load_ratio)) * to_share(grease_life.L50, failed)
-    bath = damage_sum(p, _calendar(p, temperature, grease_life.bath_change_interval))
-    oxidation = damage_sum(p, _calendar(p, temperature, oil_life.oxidation_life))
+    charge = charge_share(p, power)
+    bath = damage_sum(p, charge * _calendar(p, temperature, grease_life.bath_change_interval))
+    # A large charge ages more slowly where it is hot; no charge serves longer than a cool one.
+    coolest = _calendar(p, np.zeros(len(p)), oil_life.oxidation_life)
+    oxidation = damage_sum(p, np.minimum(charge * _calendar(p, temperature, oil_life.oxidation_life), coolest))
     worksheet = grease_corrections.worksheet_parameter.plain(p.k_f, p.speed, p.pitch_diameter)
 
     renewed = grease_corrections.with_rest.plain(running_life=classical, hours_per_day=hours_per_day)
@@ -99,6 +102,15 @@ def booser_rows(points: Points, temperature: Array, load_ratio: Array) -> Array:
 
 
 LITHIUM_REFERENCE = 70.0  # degC, of the grease that Booser's equation stands for without corrections
+
+
+def charge_share(points: Points, power: Array) -> Array:
+    """Return what the size of the oil charge does to its change interval; 1 where it was not stated."""
+    p = points
+    sump = oil_life.sump_share.plain(p.oil_volume, power)
+    circuit = oil_life.circuit_share.plain(oil_life.dwell_time.plain(p.oil_volume, p.oil_flow))
+    share = np.where(p.is_bath > 0, sump, np.where(p.is_circulating > 0, circuit, 1.0))
+    return np.where(np.isnan(share), 1.0, share)
 
 
 def _calendar(points: Points, temperature: Array, rule: Method[..., Array]) -> Array:

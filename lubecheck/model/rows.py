@@ -239,6 +239,8 @@ def _surroundings_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, f
     water = around.water or reading.get("[surroundings] water")
     return {
         "inside_factor": inside,
+        "oil_volume": _known(case.oil.volume),
+        "oil_flow": _known(case.oil.flow or None),
         "water_share": oil_life.WATER_SHARES[water] if water is not None else 1.0,
         "coldest": _known(around.coldest),
         "pressure": float(cooling.pressure_at.plain(altitude)),

@@ -21,7 +21,7 @@ from lubecheck.model.assumptions import FACTS, PROPOSED_HOUSING_FILL, Fact
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
-from lubecheck.model.interval_lines import interval_note, percentile
+from lubecheck.model.interval_lines import charge_words, interval_note, percentile
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import FLASH_MARGIN, parts_rows, takes_loads
 from lubecheck.model.part_entries import BearingTable
@@ -164,7 +164,7 @@ def _interval(case: Case, outcome: Outcome, row: int) -> str:
         bath = points.is_bath[0]
         by = "oil change by the temperature of the bath" if bath else "oil change by oxidation at the bearing"
         wet = "shortened by water" if points.water_share[0] < 1 else ""
-        return join(by + ("" if case.oil.interval else ", proposed"), wet)
+        return join(by + ("" if case.oil.interval else ", proposed"), wet, charge_words(case, outcome))
     if points.is_sealed[0]:
         if case.grease.interval is not None:
             return "closed on both sides: do not regrease"
@@ -514,7 +514,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     if case.is_grease and case.bearing.sealed_sides != 2 and case.grease.rule is None:
         said.append(Assumed("[grease] rule", "side: the grease goes in beside the bearing", "neale:A20.5"))
     if not case.is_grease and case.oil.volume is None and case.oil.supply != "mist":
-        said.append(Assumed("[oil] volume", "not known, so no change quantity", "common-practice"))
+        said.append(Assumed("[oil] volume", "not known: no change quantity, and an ordinary charge", "common-practice"))
     if case.bearing.cage is None:
         said.append(Assumed("[bearing] cage", "metal", "common-practice"))
     return tuple(said)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import dataclasses
 import math
 
 import numpy as np
@@ -215,6 +216,40 @@ def test_circulating_oil_is_judged_by_oxidation_alone():
 def test_water_in_the_air_shortens_an_oil_change():
     dry, wet = (lubecheck.check(oil_case(water=word)).limit("interval").allowed for word in ("dry", "damp"))
     assert wet == pytest.approx(dry / 2)
+
+
+def test_a_large_charge_serves_longer_and_a_small_or_unsaid_one_as_the_rule_says():
+    def bath(volume):
+        case = oil_case()
+        charge = None if volume is None else 1000 * volume
+        return lubecheck.check(dataclasses.replace(case, oil=dataclasses.replace(case.oil, volume=charge)))
+
+    results = {volume: bath(volume) for volume in (None, 0.05, 0.3, 0.6, 1.2, 9.0)}
+    hours = {volume: result.limit("interval").allowed for volume, result in results.items()}
+    watts = results[None].operating.friction_power.m_as("W")
+    temperature = results[None].operating.temperature.m_as("degC")
+    by_hand = 8766 * 0.25 ** (max(temperature - 50, 0) / 50)  # 12 months to 50 degC, 3 at 100: handbooks
+    for volume, allowed in hours.items():
+        factor = 1.0 if volume is None else min(2.0, max(1.0, volume * 1000 / watts / 10))  # 5 to 10 l/kW: handbooks
+        assert allowed == pytest.approx(factor * by_hand, rel=1e-6), volume
+    assert hours[9.0] == pytest.approx(2 * hours[None])
+    assert "a small charge" in results[0.05].limit("interval").note
+    assert "a large charge" in results[9.0].limit("interval").note
+    assert ("volume", 2.0) in results[9.0].interval_lines[0].factors
+
+
+@pytest.mark.parametrize(("litres", "factor"), [(5, 1.0), (10, 1.0), (15, 1.5), (60, 2.0)])
+def test_circulating_oil_serves_longer_the_more_seldom_it_turns_over_but_never_over_four_years(litres, factor):
+    case = oil_case("circulating", ambient="75 degC")
+    hot = dataclasses.replace(case, oil=dataclasses.replace(case.oil, inlet=85.0, volume=1000.0 * litres))
+    result = lubecheck.check(hot)
+    temperature = result.operating.temperature.m_as("degC")
+    assert 80 < temperature < 100
+    # Whitby: 4 years up to 70 degC, halved each 10 K; ordinary tanks hold 5 to 10 min of the flow of 1 l/min
+    by_hand = 4 * 8766 * 2 ** ((70 - temperature) / 10)
+    assert result.limit("interval").allowed == pytest.approx(min(4 * 8766, factor * by_hand), rel=1e-6)
+    cool = lubecheck.check(dataclasses.replace(case, oil=dataclasses.replace(case.oil, volume=1000.0 * litres)))
+    assert cool.limit("interval").allowed <= 4 * 8766 * (1 + 1e-9)
 
 
 def test_an_oil_hotter_than_the_rules_go_is_unknown():
