@@ -27,12 +27,22 @@ def feed(case: Case) -> Triple:
     return float(low), float(nominal), float(high)
 
 
+def lies(case: Case) -> int:
+    """Return how the shaft lies, as the position in HOUSING_FILL; level where it is not said."""
+    return tuple(grease_amount.HOUSING_FILL).index(case.surroundings.orientation or "horizontal")
+
+
 def housing_fill(case: Case, outcome: Outcome) -> Triple | tuple[None, None, None]:
     """Return the first fill of the space beside the bearing in g: low, nominal or planned, high."""
     if not case.is_grease or outcome.points.is_sealed[0]:
         return _NONE
     full = float(outcome.points.void[0]) * float(outcome.points.density[0]) / 1000
-    low, nominal, high = grease_amount.HOUSING_FILL
+    low, nominal, high = (
+        float(share)
+        for share in grease_amount.housing_fill.plain(
+            max(duty.speed for duty in case.duty), outcome.points.pitch_diameter[0], lies(case)
+        )
+    )
     # A fill that is beyond is not repeated on the plan, neither in the bearing nor beside it.
     planned = case.grease.housing_fill if outcome.judged["fill"].use[0] <= 1 else None
     nominal = nominal if planned is None else planned
@@ -76,7 +86,8 @@ def amounts(case: Case, outcome: Outcome, plan: PlanLine) -> Amounts:
         "pitch_diameter": points.pitch_diameter[0],
     }
     full = float(points.free_volume[0]) * float(points.density[0]) / 1000
-    low, nominal, high = (float(share) * full for share in grease_amount.first_fill.plain(**speeds))
+    sealing = grease_amount.SEALINGS.index("closed" if points.is_sealed[0] else "open")
+    low, nominal, high = (float(share) * full for share in grease_amount.first_fill.plain(**speeds, sealing=sealing))
     least, most = (float(share) * full for share in grease_amount.allowed_fill.plain(**speeds))
     is_open = not points.is_sealed[0]
     rule = REGREASE_RULES.index(case.grease.rule or "side")

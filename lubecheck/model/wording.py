@@ -17,7 +17,7 @@ from lubecheck.data.oil_analysis import OilAnalysis
 from lubecheck.model import given as after
 from lubecheck.model import limits, oil_words
 from lubecheck.model.amounts import CARTRIDGE_G
-from lubecheck.model.assumptions import FACTS, PROPOSED_HOUSING_FILL, Fact
+from lubecheck.model.assumptions import FACTS, Fact
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
@@ -30,7 +30,7 @@ from lubecheck.model.result import Assumed
 from lubecheck.model.rows import DEFAULT_KAPPA, DEFAULT_LIFE, DEFAULT_RELIABILITY, LIMIT_ORIGINS, RULE_DAYS, seasons
 from lubecheck.model.shaft import loads_of
 from lubecheck.model.side_figures import curing_preload, safe_speed
-from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_life, oil_life
+from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_amount, grease_life, oil_life
 from lubecheck.units import KINDS
 
 SAFETY = (
@@ -397,7 +397,8 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
     if case.is_grease and case.grease.rule in RULE_DAYS:
         said.append(f"the {case.grease.rule} rule gives so little that it holds for that rhythm only")
     if case.surroundings.orientation == "vertical" and case.is_grease:
-        said.append("the upright shaft halves the interval, not the amount: a baffle below keeps the grease in place")
+        said.append("the upright shaft halves the interval, not the bearing's fill: a baffle below keeps the grease in "
+                    "place; of the space beside it fill half above and up to three quarters below")  # fmt: skip
     if not case.is_grease and case.oil.volume is not None and case.oil.flow and case.oil.supply == "circulating":
         dwell = float(oil_life.dwell_time.plain(case.oil.volume, case.oil.flow))
         if dwell < oil_life.LEAST_DWELL:
@@ -488,9 +489,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     said += [Assumed(name, text, source) for name, value, text, source in defaults if value is None]
     is_proposed = case.grease.housing_fill is None and case.grease.fill != "unknown"
     if case.is_grease and is_proposed and not comes_filled:
-        said.append(
-            Assumed("[grease] housing_fill", f"{PROPOSED_HOUSING_FILL * 100:.0f} % proposed", "common-practice")
-        )
+        said.append(Assumed("[grease] housing_fill", f"{_housing_fill(case) * 100:.0f} % proposed", "fill-handbooks"))
     for key, (low, high) in case.bearing.estimated.items():
         value = getattr(case.bearing, key)
         source = case.bearing.basis.get(key, "own-estimate")
@@ -518,6 +517,10 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     if case.bearing.cage is None:
         said.append(Assumed("[bearing] cage", "metal", "common-practice"))
     return tuple(said)
+
+
+def _housing_fill(case: Case) -> float:
+    return grease_amount.HOUSING_FILL[case.surroundings.orientation or "horizontal"][1]
 
 
 def _comes_filled(case: Case) -> bool:
