@@ -10,7 +10,7 @@ from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.result import IntervalLine
 from lubecheck.model.rows import INTERVAL_ANSWERS, answer_factor, seasons
-from lubecheck.physics import grease_life, oil_life
+from lubecheck.physics import grease_corrections, grease_curve, grease_life, oil_life
 
 Factors = tuple[tuple[str, float], ...]
 
@@ -82,7 +82,7 @@ def _grease_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
     classical, booser = _finite(outcome.lines.classical[0]), _finite(outcome.lines.booser[0])
     inside = tuple(f for f in (("surroundings", float(p.inside_factor[row])),) if f[1] != 1.0)
     load = float(grease_life.load_factor.plain(outcome.load_ratio[row]))
-    worksheet = float(outcome.lines.worksheet[0])
+    worksheet = _finite(outcome.lines.worksheet[0])
     return (
         IntervalLine(
             name="classical",
@@ -106,15 +106,43 @@ def _grease_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
         ),
         IntervalLine(
             name="GfT worksheet 3",
-            hours=None,
-            failed=None,
-            applies=False,
+            hours=worksheet,
+            failed=failed if worksheet is not None else None,
+            applies=worksheet is not None,
             governs=False,
-            factors=(),
+            factors=() if worksheet is None else _worksheet_factors(case, outcome, is_sealed=is_sealed),
             basis="gft-3",
-            note=f"k_f n dm is {worksheet:.3g} mm/min: no point of the curve is known here surely enough to be read; "
-            "who has the worksheet can enter it there",
+            note=_worksheet_note(outcome),
         ),
+    )
+
+
+def _worksheet_factors(case: Case, outcome: Outcome, *, is_sealed: bool) -> Factors:
+    p, row = outcome.points, int(outcome.hottest[0])
+    named = classical_factors(case, outcome)
+    kept = [pair for pair in named if pair[0] in ("temperature", "load")]
+    whole = float(p.inside_factor[row] if is_sealed else p.interval_factor[row])
+    answers = (("surroundings", whole),) if is_sealed and whole != 1.0 else () if is_sealed else _answers(case, whole)
+    return (*kept, *answers, *_percentile_factor(grease_curve.FAILED, float(p.grease_failed[0])))
+
+
+def _worksheet_note(outcome: Outcome) -> str:
+    p, row = outcome.points, int(outcome.hottest[0])
+    parameter, hours = float(outcome.lines.worksheet_parameter[0]), float(outcome.lines.worksheet[0])
+    left, right = grease_curve.worksheet_life.valid["parameter"]
+    where = f"k_f n dm is {parameter:.3g} mm/min"
+    if parameter > right:
+        return f"{where}: the curve ends at {right:.3g}"
+    if math.isnan(hours):
+        return f"{where}: load or temperature outside its range"
+    end = ", read at the curve's left end" if parameter < left else ""
+    doubt = grease_curve.CURVE_DOUBT
+    at = grease_corrections.worksheet_parameter.plain(p.k_f[row], p.speed[row], p.pitch_diameter[row])
+    raw = float(grease_curve.worksheet_life.plain(at))
+    return (
+        f"{where}{end}: {raw:.0f} h before the factors, lithium soap at 70 degC, L10; from memory, "
+        f"times or divided by {doubt:g}: "
+        f"{hours / doubt:.0f} to {hours * doubt:.0f} h; the curve is only remembered, so it never governs"
     )
 
 

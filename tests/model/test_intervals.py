@@ -146,9 +146,38 @@ def test_the_lines_stand_side_by_side_with_their_percentiles_and_one_governs():
         by_name["classical"].hours, rel=1e-4
     )
     assert "times apart" in result.interval_spread
-    # k_f n dm by hand: 1.0 x 1480 x 72.5 = 107 300; the curve is not read.
-    assert by_name["GfT worksheet 3"].hours is None
-    assert "1.07e+05" in by_name["GfT worksheet 3"].note
+    # k_f n dm by hand: 1.0 x 1480 x 72.5 = 107 300; the curve is remembered, and only stands beside the others
+    curve = by_name["GfT worksheet 3"]
+    assert "1.07e+05" in curve.note
+    raw = float(curve.note.split(": ")[1].split()[0])
+    assert 17_000 < raw < 30_000
+    assert raw * math.prod(dict(curve.factors).values()) == pytest.approx(curve.hours, rel=1e-3)
+    assert curve.failed == 0.01
+    assert "L10 to L01" in dict(curve.factors)
+    assert "never governs" in curve.note
+
+
+def test_the_remembered_curve_follows_the_plain_answers_and_never_moves_the_verdict():
+    plain, harsh = (lubecheck.check(case_of(**answers)) for answers in (
+        {}, {"surroundings__dust": '"dusty"', "surroundings__orientation": '"vertical"'}))  # fmt: skip
+    lines = [result.interval_lines[2] for result in (plain, harsh)]
+    # dust 0.4, upright 0.5: reliability handbooks; the temperature moves a little with the friction of an upright shaft
+    assert lines[1].hours / lines[0].hours == pytest.approx(0.2, rel=0.1)
+    for result in (plain, harsh):
+        assert result.limit("interval").allowed == pytest.approx(result.interval_lines[0].hours)
+    (safer,) = [item for item in lubecheck.check(case_of(limits__grease_reliability='"90 %"')).interval_lines
+                if item.name == "GfT worksheet 3"]  # fmt: skip
+    # L10 over L01 with the slope 2.3: 2.8 times (handbooks)
+    assert safer.hours / lines[0].hours == pytest.approx(2.78, rel=0.01)
+
+
+def test_beyond_the_right_end_of_the_curve_nothing_is_read():
+    text = with_key(BASE, "duty", "speed", '"2900 rpm"').replace('"6309"', '"22222"')
+    for key in ("dynamic_rating", "static_rating", "mass"):
+        text = with_key(text, "bearing", key, None)
+    curve = lubecheck.check(read_case(text)).interval_lines[2]
+    assert curve.hours is None  # k_f n dm about 8 x 2900 x 155 = 3.6e6
+    assert "the curve ends at 2e+06" in curve.note
 
 
 def test_a_closed_bearing_is_judged_by_the_life_of_its_grease():
