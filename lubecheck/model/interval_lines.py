@@ -214,7 +214,8 @@ def charge_words(case: Case, outcome: Outcome) -> str:
     share = float(intervals.charge_share(p, outcome.state.friction_power)[row])
     if p.is_bath[0]:
         figure = volume / float(outcome.state.friction_power[row])
-        low, high, unit = *oil_life.ORDINARY_SUMP, "l a kW of friction"
+        low, high = oil_life.ORDINARY_SUMP
+        unit = "l a kW of friction"
     elif p.is_circulating[0]:
         figure = float(oil_life.dwell_time.plain(p.oil_volume[row], p.oil_flow[row])) * 60
         low, high = (60 * end for end in oil_life.ORDINARY_DWELL)
@@ -223,7 +224,7 @@ def charge_words(case: Case, outcome: Outcome) -> str:
         return ""
     if not math.isfinite(figure) or low <= figure <= high:
         return ""
-    size = f"{figure:.2g} {unit}, ordinary are {low:g} to {high:g}"
+    size = f"{figure:.2g} {unit}, ordinary are {low:g} to {high:g} {unit.split()[0]}"
     if figure < low:
         return f"a small charge, {size}: the rule may be too long for it, look at the oil or change it earlier"
     return f"a large charge, {size}: x {share:.2f} (estimate)"

@@ -232,8 +232,8 @@ def _clearance(case: Case, outcome: Outcome, row: int) -> str:
         return f"no clearance table for {case.bearing.family} of this bore, or class"
     left = judged.allowed[0] - judged.demand[0]
     sign = "; below zero: the bearing is preloaded, take a class with more" if left < 0 else ""
-    taken = f"{points.fit_loss[row] * 1000:.0f} um by the fits, the rest by a warmer inner ring"
-    whole = f"{left * 1000:.0f} um are left of {judged.allowed[0] * 1000:.0f} on the average"
+    taken = f"{points.fit_loss[row]:.3f} mm by the fits, the rest by a warmer inner ring"
+    whole = f"{left:.3f} mm are left of {judged.allowed[0]:.3f} mm on the average"
     return f"{case.bearing.clearance}: {whole}{sign}; {taken}"
 
 
