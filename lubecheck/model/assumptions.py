@@ -108,7 +108,8 @@ def _plans_running_hours(case: Case) -> bool:
 
 
 def _may_be_wet(case: Case) -> bool:
-    return not case.is_grease and case.water is None and case.surroundings.water in WET
+    # What surrounds it and was not said may be wet as well.
+    return not case.is_grease and case.water is None and case.surroundings.water in (None, *WET)
 
 
 FACTS: tuple[Fact, ...] = (
