@@ -10,7 +10,7 @@ from rich.console import Console
 from rich.table import Table
 from rich.text import Text
 
-from lubecheck.faces.display import amount, figure, printable, shown_unit
+from lubecheck.faces.display import amount, figure, in_system, printable, shown_unit
 from lubecheck.model.bearing_sheet import BearingSheet, Listed, ListedFamily
 
 SCHEMA = "lubecheck/bearings/1"
@@ -80,7 +80,7 @@ def print_sheets(sheets: Sequence[BearingSheet], console: Console, system: str =
             table.add_row(*map(Text, (*cells, one.basis) if is_wide else cells))
         console.print(table)
         for note in sheet.notes:
-            console.print(Text(printable(f"- {note}")))
+            console.print(Text(printable(f"- {in_system(note, system)}")))
 
 
 def print_listing(listed: Sequence[Listed], console: Console, system: str = "si") -> None:

@@ -87,16 +87,25 @@ def check(
     warmup: Annotated[
         bool, typer.Option("--warmup", help="Follow starts, regreasing and a cold start too, and judge their peaks.")
     ] = False,
+    hold: Annotated[
+        str,
+        typer.Option(
+            metavar="TEMPERATURE",
+            help="Tell what draught, housing area, oil flow or fill alone holds a temperature such as '70 degC', or "
+            "'limit' for the highest that the case allows. Told unasked where heat brings a limit near or beyond.",
+        ),
+    ] = "",
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
-    from lubecheck.model.reader import load_case
+    from lubecheck.model.reader import load_case, read_hold
     from lubecheck.studies.remedies import check as judge
 
     result = judge(
         load_case(case, own=own_lubricants(lubricants)),
         warm_up=warmup,
         air_properties=air.exact if exact_fluids else air.properties,
+        hold=read_hold(hold) if hold else None,
     )
     if json:
         from lubecheck.faces.record import to_json

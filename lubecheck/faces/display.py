@@ -6,7 +6,7 @@ import math
 import re
 from typing import TYPE_CHECKING
 
-from lubecheck.units import KINDS, Kind, from_house
+from lubecheck.units import KINDS, Kind, from_house, to_house
 
 if TYPE_CHECKING:
     from rich.console import Console
@@ -24,6 +24,7 @@ _INCH = {
     "torque": "lbf*in",
     "temperature": "degF",
     "temperature difference": "delta_degF",
+    "flow": "gal/min",
 }
 _KIND_OF_UNIT: dict[str, Kind] = {kind.unit: kind for kind in reversed(tuple(KINDS.values()))}
 
@@ -85,10 +86,21 @@ def figure(value: float | None, unit: str, system: str) -> str:
 
 
 _NUMBER = r"-?[0-9]+(?:\.[0-9]+)?(?:e[+-]?[0-9]+)?"
-# As texts write the house units; a kelvin of a text is always a difference.
-_WORDS = {KINDS[name].unit: KINDS[name].unit for name in _INCH} | {"K": KINDS["temperature difference"].unit}
+# What has no form of its own in inch practice, or is a name: watts and what is made of them, hours, rpm, mm^2/s (which
+# is cSt), n dm in mm/min, g/h of a feeder, kg/m^3, rad/s^2, MPa, and the um of filters and ISO 4406.
+# As texts write units: each with its kind and the word it becomes. A kelvin of a text is always a difference.
+_WORDS = {KINDS[name].unit: (name, word) for name, word in _INCH.items()} | {
+    "K": ("temperature difference", "delta_degF"),
+    "m": ("length", "ft"),
+    "m^2": ("area", "ft^2"),
+    "l": ("volume", "gal"),
+    "kg": ("mass", "lb"),
+    "kN": ("force", "lbf"),
+    "mm/s": ("velocity", "in/s"),
+}
 # One number, several of a size ("45 x 100 x 25 mm") or a range ("14 to 17 K"), then a house unit that ends there.
 _UNITS = "|".join(re.escape(unit) for unit in sorted(_WORDS, key=len, reverse=True))
+_DESIGNATION = re.compile("[0-9]{4,}")  # "22218 K" has a tapered bore, and no bearing is that much hotter
 _FIGURES = re.compile(rf"(?<![\w.,/-])({_NUMBER}(?: (?:x|to) {_NUMBER})*) ({_UNITS})(?![\w/^*]|\.[0-9])")
 
 
@@ -104,11 +116,31 @@ def in_system(text: str, system: str) -> str:
         return text
 
     def shown(found: re.Match[str]) -> str:
-        unit = _WORDS[found[2]]
-        figures = re.sub(_NUMBER, lambda one: number(converted(float(one[0]), unit, system)), found[1])
-        return f"{figures} {shown_unit(unit, system)}"
+        name, word = _WORDS[found[2]]
+        kind = KINDS[name]
+        figures = found[1]
+        if found[2] == "K" and _DESIGNATION.fullmatch(figures):
+            return found[0]
+        written = "delta_degC" if found[2] == "K" else found[2]
+        figures = re.sub(
+            _NUMBER, lambda one: number(from_house(to_house(float(one[0]), written, kind), word, kind)), figures
+        )
+        return f"{figures} {word}"
 
     return _FIGURES.sub(shown, text)
+
+
+def named(line: str, system: str) -> str:
+    """Return the line of a bearing or lubricant: its figures follow the name, which may end in what reads like a unit.
+
+    >>> named("22218 K spherical roller, 90 x 160 x 40 mm", "inch")
+    '22218 K spherical roller, 3.54 x 6.30 x 1.57 in'
+    >>> named("oil N (46 mm^2/s at 40 degC)", "inch")
+    'oil N (46 mm^2/s at 104 degF)'
+    """
+    mark = "(" if "(" in line else ", "
+    name, middle, figures = line.rpartition(mark)
+    return printable(name + middle + in_system(figures, system))
 
 
 def printable(text: str) -> str:

@@ -19,7 +19,7 @@ from lubecheck.data import lubricant_sheet as sheet
 from lubecheck.data.grades import EDITIONS, equivalents
 from lubecheck.data.lubricant import FIELDS, Field, Lubricant
 from lubecheck.faces.charts import LETTERS, STYLES, Curve, viscosity_chart
-from lubecheck.faces.display import amount, converted, is_plain, number, printable, shown_unit
+from lubecheck.faces.display import amount, converted, in_system, is_plain, number, printable, shown_unit
 from lubecheck.model.required import RequiredViscosity
 from lubecheck.sources import SOURCES
 
@@ -148,7 +148,7 @@ def print_one(
     said += ["ranges: how far lubricants of the kind spread; a data sheet goes before"] if one.ranges else []
     table = _table("left")
     for text in said:
-        _row(table, text)
+        _row(table, in_system(text, system))
     console.print(table)
 
 
@@ -164,7 +164,7 @@ def _facts(one: Lubricant, console: Console, system: str) -> None:
                 low, high = (_shown(end, entry, system) for end in one.ranges[name])
                 spread = f"({low} to {high})"
             label = _LABELS[name] + (" (base oil)" if one.kind == "grease" and name in _BASE_OIL else "")
-            _row(table, label, _shown(value, entry, system), shown_unit(entry.unit, system), spread)
+            _row(table, in_system(label, system), _shown(value, entry, system), shown_unit(entry.unit, system), spread)
         elif name in ("lowest", "highest"):
             _row(table, _LABELS[name], "not stated")
         elif value is not None:

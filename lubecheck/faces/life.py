@@ -8,7 +8,7 @@ import json
 from rich.console import Console
 from rich.text import Text
 
-from lubecheck.faces.display import amount, figure, number, printable
+from lubecheck.faces.display import amount, figure, named, number, printable
 from lubecheck.faces.losses import plain_table
 from lubecheck.faces.terminal import STYLES, bullets
 from lubecheck.physics.fatigue import PIT_AREA
@@ -32,7 +32,7 @@ def print_circuit(result: CircuitResult, console: Console, system: str = "si") -
     if result.title:
         console.print(Text(printable(result.title), style="bold"))
     shared = figure(result.oil_temperature, "degC", system)
-    console.print(Text(printable(f"{result.lubricant}, shared at {shared}")))
+    console.print(Text(f"{named(result.lubricant, system)}, shared at {shared}"))
     for state in result.states:
         console.print(
             Text(printable(f"  {state.name}: ISO 4406 {state.code}, filter {state.filter}, taken as {state.setting}"))
@@ -62,15 +62,15 @@ def print_circuit(result: CircuitResult, console: Console, system: str = "si") -
     if said:
         console.print(Text("\nFailure travels: " + "; ".join(said), style="bold"))
     unsaid = [f"{member.name} leaves out {', '.join(member.unsaid)}" for member in result.members if member.unsaid]
-    bullets("Notes", (*result.notes, *unsaid), console)
-    bullets("Cautions", result.cautions, console)
+    bullets("Notes", (*result.notes, *unsaid), console, system)
+    bullets("Cautions", result.cautions, console, system)
 
 
 def print_wanted(result: WantedLife, console: Console, system: str = "si") -> None:
     """Print what reaches a wanted life."""
-    for text in (result.title, result.bearing, result.lubricant):
+    for text in (printable(result.title), named(result.bearing, system), named(result.lubricant, system)):
         if text:
-            console.print(Text(printable(text)))
+            console.print(Text(text))
     percent = (1 - result.reliability) * 100
     console.print(
         Text(f"\nLife L{percent:.3g}: {figure(result.life_h, 'h', system)}, "
@@ -84,7 +84,9 @@ def print_wanted(result: WantedLife, console: Console, system: str = "si") -> No
             Text(figure(answer.temperature, "degC", system)), Text(number(answer.viscosity_ratio)),
         )  # fmt: skip
     console.print(table)
-    bullets("Notes", (*(f"{answer.question}: {answer.note}" for answer in result.answers), *result.notes), console)
+    bullets(
+        "Notes", (*(f"{answer.question}: {answer.note}" for answer in result.answers), *result.notes), console, system
+    )
 
 
 def system_json(result: SystemLife) -> str:

@@ -9,7 +9,7 @@ from rich.padding import Padding
 from rich.table import Table
 from rich.text import Text
 
-from lubecheck.faces.display import amount, is_plain, number, shown_unit
+from lubecheck.faces.display import amount, in_system, is_plain, number, shown_unit
 from lubecheck.model.result import Damage, LossAccount
 
 _BAR = 12  # cells of the waterfall's widest bar
@@ -35,13 +35,13 @@ def print_damage(points: tuple[Damage, ...], console: Console, system: str) -> N
     console.print(table)
 
 
-def print_losses(account: LossAccount, console: Console) -> None:
+def print_losses(account: LossAccount, console: Console, system: str = "si") -> None:
     """Print the loss account: a table, and a waterfall of bars on a logarithmic scale."""
     console.print(Text("\nLoss account of the fatigue life", style="bold"))
     if account.reference_life_h is None or account.life_h is None:
         console.print(Text("  not worked out: the life is outside the range of ISO 281"))
         return
-    console.print(Padding(Text(f"Reference: {account.reference}"), (0, 0, 0, 2)))
+    console.print(Padding(Text(f"Reference: {in_system(account.reference, system)}"), (0, 0, 0, 2)))
     table = plain_table("As it is", "times", "life, h", "waterfall", "if right, h", "times")
     table.columns[3].justify = "left"
     top = account.reference_life_h

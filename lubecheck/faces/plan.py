@@ -17,7 +17,7 @@ from rich.text import Text
 
 from lubecheck.errors import Fault, InputError, nearest
 from lubecheck.faces.calendar import to_ics
-from lubecheck.faces.display import figure, number, printable
+from lubecheck.faces.display import figure, in_system, number, printable
 from lubecheck.faces.files import write_whole
 from lubecheck.model.schedule import PlanRow
 
@@ -165,13 +165,13 @@ def print_plan(rows: Sequence[PlanRow], console: Console, system: str = "si") ->
             if line:
                 console.print(Padding(Text(line), (0, 0, 0, 2)))
         for i, step in enumerate(row.steps, start=1):
-            console.print(Padding(Text(f"{i}. {step}"), (0, 0, 0, 2)))
+            console.print(Padding(Text(f"{i}. {in_system(step, system)}"), (0, 0, 0, 2)))
         for note in row.notes:
-            console.print(Padding(Text(f"- {printable(note)}"), (0, 0, 0, 2)))
+            console.print(Padding(Text(f"- {printable(in_system(note, system))}"), (0, 0, 0, 2)))
         console.print()
     console.print(Text("Cautions", style="bold"))
     for caution in dict.fromkeys(caution for row in rows for caution in row.cautions):
-        console.print(Padding(Text(f"- {caution}"), (0, 0, 0, 2)))
+        console.print(Padding(Text(f"- {in_system(caution, system)}"), (0, 0, 0, 2)))
 
 
 def _what(row: PlanRow, system: str) -> str:

@@ -60,6 +60,8 @@ def of_result(result: Result) -> dict[str, Any]:
         "calibration": _calibration(result.calibration),
         "plan": dataclasses.asdict(result.plan),
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
+        "needs": [dataclasses.asdict(need) for need in result.needs.found],
+        "needs_for": result.needs.question,
         "warm_up": warm_up(result.warm_up),
         "notes": list(result.notes),
         "cautions": list(result.cautions),

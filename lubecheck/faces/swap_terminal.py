@@ -11,7 +11,7 @@ from rich.console import Console
 from rich.table import Table
 from rich.text import Text
 
-from lubecheck.faces.display import amount, figure, number, printable, shown_unit
+from lubecheck.faces.display import amount, figure, in_system, named, number, printable, shown_unit
 from lubecheck.faces.terminal import STYLES, bullets
 from lubecheck.model.result import Limit
 from lubecheck.studies.change_over import ChangeOver
@@ -26,14 +26,14 @@ def print_swaps(swaps: Swaps, console: Console, system: str = "si") -> None:
     """Print all candidates of a position: the ranked table where there are several, then the best in full."""
     if swaps.title:
         console.print(Text(printable(swaps.title), style="bold"))
-    console.print(Text(printable(swaps.bearing)))
-    console.print(Text(printable(f"now: {swaps.lubricant}")))
+    console.print(Text(named(swaps.bearing, system)))
+    console.print(Text(f"now: {named(swaps.lubricant, system)}"))
     candidates = swaps.candidates
     if len(candidates) > 1:
         _ranked(candidates, console, system)
     for one in candidates[: MOST_DETAILED if len(candidates) <= MOST_DETAILED else 1]:
         _swap(one, console, system)
-    bullets("Cautions", swaps.cautions, console)
+    bullets("Cautions", swaps.cautions, console, system)
 
 
 def _ranked(candidates: Sequence[Swap], console: Console, system: str) -> None:
@@ -75,17 +75,17 @@ def _use(limit: Limit) -> str:
 
 def _swap(one: Swap, console: Console, system: str) -> None:
     console.print()
-    console.print(Text(printable(f"to: {one.lubricant}"), style="bold"))
+    console.print(Text(f"to: {named(one.lubricant, system)}", style="bold"))
     verdict = Text("Verdict: ")
     verdict.append(f" {one.verdict.upper()} ", style=f"bold reverse {STYLES[one.verdict]}".strip())
     verdict.append(f"  governed by {one.governing.replace('_', ' ')}")
     console.print(verdict)
-    console.print(Text(printable(one.reason), style="italic"))
+    console.print(Text(printable(in_system(one.reason, system)), style="italic"))
     _side_by_side(one, console, system)
-    bullets("What changes", one.differences or ("nothing",), console)
+    bullets("What changes", one.differences or ("nothing",), console, system)
     lines = [f"{side.name.replace('_', ' ')}: {side.state}; {side.reason} [{side.source}]" for side in one.sides]
     lines += [cell for cell in _cells(one) if not any(cell in line for line in lines)]
-    bullets("May the two meet", lines or (one.meeting.reason,), console)
+    bullets("May the two meet", lines or (one.meeting.reason,), console, system)
     if one.mixture is not None:
         _mixture(one.mixture, console, system)
     _change_over(one.change_over, console, system)
@@ -124,7 +124,8 @@ def _side_by_side(one: Swap, console: Console, system: str) -> None:
 
 def _mixture(path: Path, console: Console, system: str) -> None:
     console.print(Text("\nOn the way, by share of the new", style="bold"))
-    table = _table(">Share", ">nu at 40 degC", ">kappa", ">Film use", f">Temp. {shown_unit('degC', system)}", ">NLGI")
+    grade, heat = in_system(">nu at 40 degC", system), f">Temp. {shown_unit('degC', system)}"
+    table = _table(">Share", grade, ">kappa", ">Film use", heat, ">NLGI")
     for share in path.shares:
         table.add_row(
             Text(f"{share.share * 100:.0f} %"),
@@ -159,8 +160,8 @@ def _change_over(line: ChangeOver, console: Console, system: str) -> None:
     if line.interval_h is not None and line.interval_weeks is not None:
         said.append(f"interval meanwhile: {number(line.interval_h)} running hours ({line.interval_weeks:g} weeks)")
     bullets("", said, console)
-    bullets("Steps", line.steps, console)
-    bullets("Watch", line.watch, console)
+    bullets("Steps", line.steps, console, system)
+    bullets("Watch", line.watch, console, system)
 
 
 def print_plant(plant: Plant, console: Console) -> None:

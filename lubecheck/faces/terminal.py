@@ -5,6 +5,7 @@ Only prints a finished result. A user's text goes through rich's Text and never 
 
 from __future__ import annotations
 
+import re
 from collections.abc import Iterable
 from typing import Literal
 
@@ -13,8 +14,9 @@ from rich.padding import Padding
 from rich.table import Table
 from rich.text import Text
 
-from lubecheck.faces.display import amount, figure, in_system, is_plain, number, printable, shown_unit
+from lubecheck.faces.display import amount, figure, in_system, is_plain, named, number, printable, shown_unit
 from lubecheck.faces.losses import print_damage, print_losses
+from lubecheck.faces.needs import print_needs
 from lubecheck.model.calibration import Explanation
 from lubecheck.model.result import Figures, Limit, PlanLine, Result
 from lubecheck.sources import cite
@@ -30,6 +32,7 @@ _SAID_ELSEWHERE = {
 _LEAST_WATTS = 0.05
 _LEAST_SHARE = 0.005
 _BAR = 10  # cells of a bar that is full at the limit
+_BIGGER = re.compile(r"(bigger bearing: [^(]*\()")
 _WIDE = 100  # columns from which sources stand beside the limits
 
 
@@ -39,8 +42,9 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     _limits(result, console, system)
     _calibration(result, console, system)
     _plan(result, console, system)
-    _remedies(result, console)
-    bullets("Notes", (in_system(note, system) for note in result.notes), console)
+    _remedies(result, console, system)
+    print_needs(result.needs, console, system)
+    bullets("Notes", result.notes, console, system)
     _operating(result, console, system)
     _heat(result, console)
     _interval_lines(result, console, system)
@@ -50,20 +54,18 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
         print_warm_up(result.warm_up, console, system)
     print_damage(result.damage, console, system)
     if losses:
-        print_losses(result.losses, console)
-    assumed = (f"{a.name}: {in_system(a.value, system)} ({a.basis})" for a in result.assumed)
-    bullets("Not said, so assumed", assumed, console)
-    _sources(result, console)
-    bullets("Cautions", result.cautions, console)
+        print_losses(result.losses, console, system)
+    assumed = (f"{a.name}: {a.value} ({a.basis})" for a in result.assumed)
+    bullets("Not said, so assumed", assumed, console, system)
+    _sources(result, console, system)
+    bullets("Cautions", result.cautions, console, system)
 
 
 def _heading(result: Result, console: Console, system: str) -> None:
     if result.title:
         console.print(Text(printable(result.title), style="bold"))
-    # A designation or a name may end in what reads like a unit ("22218 K"): only what follows it holds figures.
-    for line, mark in ((result.bearing, ", "), (result.lubricant, "(")):
-        name, middle, figures = line.rpartition(mark)
-        console.print(Text(printable(name + middle + in_system(figures, system))))
+    for line in (result.bearing, result.lubricant):
+        console.print(Text(named(line, system)))
     governing = result.limit(result.governing)
     verdict = Text("\nVerdict: ")
     style = STYLES[result.verdict]
@@ -119,13 +121,13 @@ def _limits(result: Result, console: Console, system: str) -> None:
         console.print(why)
 
 
-def _sources(result: Result, console: Console) -> None:
+def _sources(result: Result, console: Console, system: str) -> None:
     """Print the sources: by their keys where the table shows these, else by the limits."""
     if console.width >= _WIDE:
         keys = dict.fromkeys(limit.basis for limit in result.limits)
-        bullets("Sources", (f"{key}: {cite(key)}" for key in keys), console)
+        bullets("Sources", (f"{key}: {cite(key)}" for key in keys), console, system)
     else:
-        bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console)
+        bullets("Sources", (f"{_words(limit.name)}: {cite(limit.basis)}" for limit in result.limits), console, system)
 
 
 def _words(name: str) -> str:
@@ -209,7 +211,7 @@ def _interval_lines(result: Result, console: Console, system: str) -> None:
         told = "; ".join(part for part in (factors if line.applies else "", line.note) if part)
         table.add_row(Text(line.name), Text(hours), Text(use), Text(in_system(told, system)))
     console.print(table)
-    console.print(Padding(Text(result.interval_spread), (0, 0, 0, 2)))
+    console.print(Padding(Text(in_system(result.interval_spread, system)), (0, 0, 0, 2)))
 
 
 def _heat(result: Result, console: Console) -> None:
@@ -268,10 +270,18 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
     return parts
 
 
-def _remedies(result: Result, console: Console) -> None:
+def _remedies(result: Result, console: Console, system: str) -> None:
     """Print the changes that bring the verdict back, with what each does to the limits."""
     lines = (f"{one.change} -> {one.verdict_after}. {one.note}" for one in result.remedies)
-    bullets("What would bring it back, least effort first", lines, console)
+    bullets(
+        "What would bring it back, least effort first", (_but_designations(line, system) for line in lines), console
+    )
+
+
+def _but_designations(line: str, system: str) -> str:
+    """Return a line with its figures in a system: the name of a bigger bearing may end in what reads like a unit."""
+    parts = _BIGGER.split(line)
+    return "".join(part if i % 2 else in_system(part, system) for i, part in enumerate(parts))
 
 
 def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
@@ -282,8 +292,8 @@ def _strokes(strokes: int | None, stroke_g: float | None, system: str) -> str:
     return f" = {strokes} strokes of {figure(stroke_g, 'g', system)} ({figure(strokes * stroke_g, 'g', system)})"
 
 
-def bullets(heading: str, lines: Iterable[str], console: Console) -> None:
-    """Print lines under a heading, or under none; nothing where there are no lines."""
+def bullets(heading: str, lines: Iterable[str], console: Console, system: str = "si") -> None:
+    """Print lines under a heading, or under none, their figures in a unit system; nothing where there are no lines."""
     lines = tuple(lines)
     if not lines:
         return
@@ -293,5 +303,5 @@ def bullets(heading: str, lines: Iterable[str], console: Console) -> None:
     table.add_column(width=3, justify="right")
     table.add_column()
     for line in lines:
-        table.add_row(Text("-"), Text(printable(line)))
+        table.add_row(Text("-"), Text(printable(in_system(line, system))))
     console.print(table)

@@ -4,6 +4,8 @@ from __future__ import annotations
 
 import math
 
+import numpy as np
+
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.result import Amounts, PlanLine
@@ -25,16 +27,46 @@ def feed(case: Case) -> Triple:
     return float(low), float(nominal), float(high)
 
 
+def lies(case: Case) -> int:
+    """Return how the shaft lies, as the position in HOUSING_FILL; level where it is not said."""
+    return tuple(grease_amount.HOUSING_FILL).index(case.surroundings.orientation or "horizontal")
+
+
 def housing_fill(case: Case, outcome: Outcome) -> Triple | tuple[None, None, None]:
     """Return the first fill of the space beside the bearing in g: low, nominal or planned, high."""
     if not case.is_grease or outcome.points.is_sealed[0]:
         return _NONE
     full = float(outcome.points.void[0]) * float(outcome.points.density[0]) / 1000
-    low, nominal, high = grease_amount.HOUSING_FILL
+    low, nominal, high = (
+        float(share)
+        for share in grease_amount.housing_fill.plain(
+            max(duty.speed for duty in case.duty), outcome.points.pitch_diameter[0], lies(case)
+        )
+    )
     # A fill that is beyond is not repeated on the plan, neither in the bearing nor beside it.
     planned = case.grease.housing_fill if outcome.judged["fill"].use[0] <= 1 else None
     nominal = nominal if planned is None else planned
     return min(low, nominal) * full, nominal * full, max(high, nominal) * full
+
+
+def purge_run(case: Case) -> Triple:
+    """Return the hours to run with the way out open, at the slowest duty point: low, nominal, high."""
+    slowest = min(duty.speed for duty in case.duty)
+    low, nominal, high = grease_amount.purge_run.plain(np.asarray(slowest))
+    return float(low), float(nominal), float(high)
+
+
+def run_words(low_h: float, high_h: float) -> str:
+    """Return a span of time as a fitter reads it, in steps of five minutes or half an hour.
+
+    >>> run_words(10 / 60, 0.5), run_words(17 / 60, 50 / 60), run_words(0.83, 2.5), run_words(8.0, 8.0)
+    ('10 to 30 min', '15 to 50 min', '1 to 2.5 h', 'a shift of 8 h')
+    """
+    if low_h == high_h:
+        return f"a shift of {high_h:g} h"
+    per_h, unit, step = (60, "min", 5.0) if high_h <= 2 else (1, "h", 0.5)
+    low, high = (max(step, round(time * per_h / step) * step) for time in (low_h, high_h))
+    return f"{low:g} to {high:g} {unit}"
 
 
 def amounts(case: Case, outcome: Outcome, plan: PlanLine) -> Amounts:
@@ -54,7 +86,8 @@ def amounts(case: Case, outcome: Outcome, plan: PlanLine) -> Amounts:
         "pitch_diameter": points.pitch_diameter[0],
     }
     full = float(points.free_volume[0]) * float(points.density[0]) / 1000
-    low, nominal, high = (float(share) * full for share in grease_amount.first_fill.plain(**speeds))
+    sealing = grease_amount.SEALINGS.index("closed" if points.is_sealed[0] else "open")
+    low, nominal, high = (float(share) * full for share in grease_amount.first_fill.plain(**speeds, sealing=sealing))
     least, most = (float(share) * full for share in grease_amount.allowed_fill.plain(**speeds))
     is_open = not points.is_sealed[0]
     rule = REGREASE_RULES.index(case.grease.rule or "side")
@@ -69,6 +102,7 @@ def amounts(case: Case, outcome: Outcome, plan: PlanLine) -> Amounts:
         found |= {
             "regrease_quantity": float(grease_amount.regrease_quantity_by_rule.plain(**sizes, rule=rule)),
             "purge_quantity": float(grease_amount.purge_quantity.plain(**sizes)),
+            "purge_run": (purge_run(case)[1], purge_run(case)[0], purge_run(case)[2]),
             "continuous_feed": (feed(case)[1], feed(case)[0], feed(case)[2]),
             "grease_per_year": year,
             "cartridges_per_year": None if year is None else year / cartridge(case),

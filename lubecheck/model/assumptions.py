@@ -13,7 +13,7 @@ from dataclasses import dataclass
 from typing import Any
 
 from lubecheck.model.entries import Case
-from lubecheck.physics import cleanliness, friction, grease_life, heat_paths, seal_friction
+from lubecheck.physics import cleanliness, friction, grease_amount, grease_life, heat_paths, seal_friction
 
 # Multiples of D^2 that the outer area of a housing comes to. Estimates of this program from ordinary proportions of
 # such housings, (low, nominal, high); a flange is the smallest.
@@ -35,7 +35,7 @@ ORDINARY_RUN_UP = 5.0  # s: estimate, a start that nobody calls rapid takes 2 to
 SHORTEST_RUN_UP = 1e-3  # s a mm of mean diameter
 WETTEST_OIL = cleanliness.WATER_RANGE[1]  # beyond it the effect on life is not known
 WET = tuple(answer.word for answer in grease_life.WATER[-2:])  # surroundings that put water into the oil
-PROPOSED_HOUSING_FILL = 0.4  # common practice, 30 to 50 %
+PROPOSED_HOUSING_FILL = grease_amount.HOUSING_FILL["horizontal"][1]
 LARGEST_ALTITUDE = 5000e3  # mm, the highest that a case may state
 
 
@@ -108,7 +108,8 @@ def _plans_running_hours(case: Case) -> bool:
 
 
 def _may_be_wet(case: Case) -> bool:
-    return not case.is_grease and case.water is None and case.surroundings.water in WET
+    # What surrounds it and was not said may be wet as well.
+    return not case.is_grease and case.water is None and case.surroundings.water in (None, *WET)
 
 
 FACTS: tuple[Fact, ...] = (
@@ -121,7 +122,7 @@ FACTS: tuple[Fact, ...] = (
          lambda case: case.surroundings.water is None and (case.is_grease or case.oil.supply != "mist")),
     Fact("surroundings", "vibration", "smooth", "severe", "smooth", "common-practice", ("interval", "static_load"),
          _missing("surroundings", "vibration")),
-    Fact("surroundings", "orientation", "horizontal", "vertical", "horizontal", "common-practice", THERMAL,
+    Fact("surroundings", "orientation", "horizontal", "vertical", "horizontal", "common-practice", ("fill", *THERMAL),
          _missing("surroundings", "orientation")),
     Fact("housing", "kind", "pedestal", "smallest", "pedestal", "own-estimate", THERMAL, _no_cooling),
     # What a machine sends cannot be guessed, nor bounded: not a number, so that what hangs on it is not judged.

@@ -186,6 +186,7 @@ def _following(bearing: Bearing) -> Iterator[SheetFigure]:
             speed=np.asarray(speed),
             speed_limit=np.asarray(family.grease_speed_limit / pitch),
             pitch_diameter=np.asarray(pitch),
+            sealing=np.asarray(grease_amount.SEALINGS.index("closed" if bearing.sealed_sides == 2 else "open")),
         )
     )
     yield SheetFigure("usual_fill", usual, "g", of_mass, "fill-handbooks", low, high)

@@ -4,12 +4,13 @@ from __future__ import annotations
 
 import math
 
+from lubecheck.model import intervals
 from lubecheck.model.assumptions import FACTS
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.result import IntervalLine
 from lubecheck.model.rows import INTERVAL_ANSWERS, answer_factor, seasons
-from lubecheck.physics import grease_life, oil_life
+from lubecheck.physics import grease_corrections, grease_curve, grease_life, oil_life
 
 Factors = tuple[tuple[str, float], ...]
 
@@ -81,7 +82,7 @@ def _grease_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
     classical, booser = _finite(outcome.lines.classical[0]), _finite(outcome.lines.booser[0])
     inside = tuple(f for f in (("surroundings", float(p.inside_factor[row])),) if f[1] != 1.0)
     load = float(grease_life.load_factor.plain(outcome.load_ratio[row]))
-    worksheet = float(outcome.lines.worksheet[0])
+    worksheet = _finite(outcome.lines.worksheet[0])
     return (
         IntervalLine(
             name="classical",
@@ -105,15 +106,43 @@ def _grease_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
         ),
         IntervalLine(
             name="GfT worksheet 3",
-            hours=None,
-            failed=None,
-            applies=False,
+            hours=worksheet,
+            failed=failed if worksheet is not None else None,
+            applies=worksheet is not None,
             governs=False,
-            factors=(),
+            factors=() if worksheet is None else _worksheet_factors(case, outcome, is_sealed=is_sealed),
             basis="gft-3",
-            note=f"k_f n dm is {worksheet:.3g} mm/min: no point of the curve is known here surely enough to be read; "
-            "who has the worksheet can enter it there",
+            note=_worksheet_note(outcome),
         ),
+    )
+
+
+def _worksheet_factors(case: Case, outcome: Outcome, *, is_sealed: bool) -> Factors:
+    p, row = outcome.points, int(outcome.hottest[0])
+    named = classical_factors(case, outcome)
+    kept = [pair for pair in named if pair[0] in ("temperature", "load")]
+    whole = float(p.inside_factor[row] if is_sealed else p.interval_factor[row])
+    answers = (("surroundings", whole),) if is_sealed and whole != 1.0 else () if is_sealed else _answers(case, whole)
+    return (*kept, *answers, *_percentile_factor(grease_curve.FAILED, float(p.grease_failed[0])))
+
+
+def _worksheet_note(outcome: Outcome) -> str:
+    p, row = outcome.points, int(outcome.hottest[0])
+    parameter, hours = float(outcome.lines.worksheet_parameter[0]), float(outcome.lines.worksheet[0])
+    left, right = grease_curve.worksheet_life.valid["parameter"]
+    where = f"k_f n dm is {parameter:.3g} mm/min"
+    if parameter > right:
+        return f"{where}: the curve ends at {right:.3g}"
+    if math.isnan(hours):
+        return f"{where}: load or temperature outside its range"
+    end = ", read at the curve's left end" if parameter < left else ""
+    doubt = grease_curve.CURVE_DOUBT
+    at = grease_corrections.worksheet_parameter.plain(p.k_f[row], p.speed[row], p.pitch_diameter[row])
+    raw = float(grease_curve.worksheet_life.plain(at))
+    return (
+        f"{where}{end}: {raw:.0f} h before the factors, lithium soap at 70 degC, L10; from memory, "
+        f"times or divided by {doubt:g}: "
+        f"{hours / doubt:.0f} to {hours * doubt:.0f} h; the curve is only remembered, so it never governs"
     )
 
 
@@ -147,7 +176,8 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
     p, found = outcome.points, outcome.lines
     bath, oxidation = _finite(found.bath[0]), _finite(found.oxidation[0])
     is_bath, is_circulating = bool(p.is_bath[0]), bool(p.is_circulating[0])
-    water = tuple(f for f in (("water", float(p.water_share[0])),) if f[1] != 1.0)
+    charge = float(intervals.charge_share(p, outcome.state.friction_power)[int(outcome.hottest[0])])
+    factors = tuple(f for f in (("water", float(p.water_share[0])), ("volume", charge)) if f[1] != 1.0)
     hot = "the bath is hotter than the rule goes"
     low, high = oil_life.OXIDATION_RANGE
     return (
@@ -157,7 +187,7 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
             failed=None,
             applies=is_bath and bath is not None,
             governs=bool(is_bath and bath is not None and bath == found.allowed[0]),
-            factors=water,
+            factors=factors,
             basis="bath-handbooks",
             note=("12 months up to 50 degC, 3 at 100 degC" if bath is not None else hot)
             if is_bath
@@ -169,12 +199,35 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
             failed=None,
             applies=(is_bath or is_circulating) and oxidation is not None,
             governs=bool(oxidation is not None and oxidation == found.allowed[0]),
-            factors=water,
+            factors=factors,
             basis="whitby",
             note=f"4 years up to 70 degC, halved each 10 K; published rates {low:g} to {high:g} times each 10 K; read "
             f"at the bearing's temperature, the hottest place of the oil, valid to {oil_life.OXIDATION_TOP:g} degC",
         ),
     )
+
+
+def charge_words(case: Case, outcome: Outcome) -> str:
+    """Say how large the oil charge is beside an ordinary one, where it was stated."""
+    p, row = outcome.points, int(outcome.hottest[0])
+    volume = float(p.oil_volume[row])
+    share = float(intervals.charge_share(p, outcome.state.friction_power)[row])
+    if p.is_bath[0]:
+        figure = volume / float(outcome.state.friction_power[row])
+        low, high = oil_life.ORDINARY_SUMP
+        unit = "l a kW of friction"
+    elif p.is_circulating[0]:
+        figure = float(oil_life.dwell_time.plain(p.oil_volume[row], p.oil_flow[row])) * 60
+        low, high = (60 * end for end in oil_life.ORDINARY_DWELL)
+        unit = "min of the flow"
+    else:
+        return ""
+    if not math.isfinite(figure) or low <= figure <= high:
+        return ""
+    size = f"{figure:.2g} {unit}, ordinary are {low:g} to {high:g} {unit.split()[0]}"
+    if figure < low:
+        return f"a small charge, {size}: the rule may be too long for it, look at the oil or change it earlier"
+    return f"a large charge, {size}: x {share:.2f} (estimate)"
 
 
 def interval_note(case: Case, outcome: Outcome) -> str:

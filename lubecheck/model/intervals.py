@@ -13,7 +13,7 @@ import numpy as np
 
 from lubecheck.method import Method
 from lubecheck.model.points import Points
-from lubecheck.physics import grease_corrections, grease_life, oil_life
+from lubecheck.physics import grease_corrections, grease_curve, grease_life, oil_life
 from lubecheck.units import DAY_H, Array
 
 
@@ -23,14 +23,15 @@ class Lines:
 
     classical: Array  # open grease bearings
     booser: Array  # grease that is never renewed; for open bearings a second opinion
-    worksheet: Array  # k_f n dm of the hardest row, where a reader may enter the curve; not hours
+    worksheet: Array  # GfT worksheet 3, from memory: beside the others, never governing
+    worksheet_parameter: Array  # k_f n dm of the hardest row, where a reader may enter the curve
     bath: Array  # oil baths, handbooks
     oxidation: Array  # baths and circulating oil
     allowed: Array  # the shortest that applies, with rest and calendar ceiling
 
 
-def of(points: Points, temperature: Array, load_ratio: Array) -> Lines:
-    """Return the lines of every position at the temperatures and loads that were worked out for its rows."""
+def of(points: Points, temperature: Array, load_ratio: Array, power: Array) -> Lines:
+    """Return the lines of every position at the temperatures, loads and friction heat worked out for its rows."""
     p = points
     first = p.starts
     is_grease, is_sealed = p.is_grease[first] > 0, p.is_sealed[first] > 0
@@ -40,9 +41,13 @@ def of(points: Points, temperature: Array, load_ratio: Array) -> Lines:
     classical = damage_sum(p, classical_rows(p, temperature, load_ratio))
     classical *= to_share(grease_life.L01, failed)
     booser = damage_sum(p, booser_rows(p, temperature, load_ratio)) * to_share(grease_life.L50, failed)
-    bath = damage_sum(p, _calendar(p, temperature, grease_life.bath_change_interval))
-    oxidation = damage_sum(p, _calendar(p, temperature, oil_life.oxidation_life))
-    worksheet = grease_corrections.worksheet_parameter.plain(p.k_f, p.speed, p.pitch_diameter)
+    charge = charge_share(p, power)
+    bath = damage_sum(p, charge * _calendar(p, temperature, grease_life.bath_change_interval))
+    # A large charge ages more slowly where it is hot; no charge serves longer than a cool one.
+    coolest = _calendar(p, np.zeros(len(p)), oil_life.oxidation_life)
+    oxidation = damage_sum(p, np.minimum(charge * _calendar(p, temperature, oil_life.oxidation_life), coolest))
+    worksheet = damage_sum(p, worksheet_rows(p, temperature, load_ratio)) * to_share(grease_curve.FAILED, failed)
+    parameter = grease_corrections.worksheet_parameter.plain(p.k_f, p.speed, p.pitch_diameter)
 
     renewed = grease_corrections.with_rest.plain(running_life=classical, hours_per_day=hours_per_day)
     renewed = np.minimum(renewed, p.ceiling[first])
@@ -50,7 +55,8 @@ def of(points: Points, temperature: Array, load_ratio: Array) -> Lines:
     return Lines(
         classical=np.where(is_grease & ~is_sealed, classical, np.nan),
         booser=np.where(is_grease, booser, np.nan),
-        worksheet=np.where(is_grease, np.maximum.reduceat(worksheet, first), np.nan),
+        worksheet=np.where(is_grease, worksheet, np.nan),
+        worksheet_parameter=np.where(is_grease, np.maximum.reduceat(parameter, first), np.nan),
         bath=np.where(is_bath, bath, np.nan),
         oxidation=np.where(is_bath | is_circulating, oxidation, np.nan),
         # A closed bearing keeps its grease for life: no ceiling of the calendar.
@@ -98,7 +104,34 @@ def booser_rows(points: Points, temperature: Array, load_ratio: Array) -> Array:
     return np.where(is_outside, np.nan, hours)
 
 
+def worksheet_rows(points: Points, temperature: Array, load_ratio: Array) -> Array:
+    """Return the life of each row by the worksheet's curve, an L10; NaN beyond its right end and outside its loads.
+
+    Its factors come from the same plain answers as those of the classical line, and the same rule of temperature, so
+    that the lines can be compared; a closed bearing counts the answers that reach its grease.
+    """
+    p = points
+    parameter = grease_corrections.worksheet_parameter.plain(p.k_f, p.speed, p.pitch_diameter)
+    hours = grease_curve.worksheet_life.plain(parameter)
+    hours = hours * grease_life.temperature_halving.plain(
+        temperature=temperature, reference=p.life_reference, step=p.life_step
+    )
+    hours *= np.where(p.is_sealed > 0, p.inside_factor, p.interval_factor) * grease_life.load_factor.plain(load_ratio)
+    _, right = grease_curve.worksheet_life.valid["parameter"]
+    is_outside = (parameter > right) | grease_life.load_factor.outside(load_ratio=load_ratio)
+    return np.where(is_outside, np.nan, hours)
+
+
 LITHIUM_REFERENCE = 70.0  # degC, of the grease that Booser's equation stands for without corrections
+
+
+def charge_share(points: Points, power: Array) -> Array:
+    """Return what the size of the oil charge does to its change interval; 1 where it was not stated."""
+    p = points
+    sump = oil_life.sump_share.plain(p.oil_volume, power)
+    circuit = oil_life.circuit_share.plain(oil_life.dwell_time.plain(p.oil_volume, p.oil_flow))
+    share = np.where(p.is_bath > 0, sump, np.where(p.is_circulating > 0, circuit, 1.0))
+    return np.where(np.isnan(share), 1.0, share)
 
 
 def _calendar(points: Points, temperature: Array, rule: Method[..., Array]) -> Array:

@@ -82,7 +82,7 @@ class Housing:
     void: float | None = entry_of(
         "fact", "volume", 0, 1e7, meaning="space for grease beside the bearing", example='"60 cm^3"'
     )
-    relief: str | None = entry_of("fact", words=RELIEFS, meaning="relief or drain plug while running")
+    relief: str | None = entry_of("fact", words=RELIEFS, meaning="relief or drain plug, or grease valve, while running")
     machine_heat: float | None = entry_of(
         "fact", "power", 0, 1e6, meaning="heat from the machine into the bearing", example='"12 W"'
     )

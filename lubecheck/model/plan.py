@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import math
 
-from lubecheck.model.amounts import CONTINUOUS_BELOW_DAYS, feed, housing_fill
+from lubecheck.model.amounts import CONTINUOUS_BELOW_DAYS, feed, housing_fill, purge_run, run_words
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import room_for_grease
@@ -140,10 +140,17 @@ def _steps(case: Case, *, is_sealed: bool, feeding: float | None, has_room: bool
         "Wipe the nipple and the gun clean; check that the grease is the one on this line",
         relief,
         "Grease slowly while the shaft turns where that is safe and the site allows it, else at standstill",
-        "Run until the temperature has risen, levelled and turned over"
-        + ("" if case.housing.relief == "closed" else "; then close the plug")
-        + "; wipe off the surplus",
+        _run_in(case),
     )
+
+
+def _run_in(case: Case) -> str:
+    low, _, high = purge_run(case)
+    time = f"Run for {run_words(low, high)} at running speed"
+    turned = "the temperature has risen, levelled and turned over"
+    if case.housing.relief == "closed":
+        return f"{time} (common practice), and watch until {turned}; wipe off the surplus"
+    return f"{time} with the plug open (common practice), longer until {turned}; then close it and wipe off the surplus"
 
 
 def _finite(value: float) -> float | None:

@@ -97,6 +97,8 @@ class Points:
     interval_factor: Array  # dust, water, vibration, orientation, turning ring, air flow together
     inside_factor: Array  # the part of it that reaches the grease of a closed bearing
     water_share: Array  # of an oil change interval
+    oil_volume: Array  # cm^3 of a bath or circuit; NaN where it is not stated
+    oil_flow: Array  # l/min of a circuit; NaN without one
     # amounts
     fill: Array
     void: Array

@@ -116,6 +116,18 @@ def read_life(text: str) -> float:
         raise CaseError([Fault("life", shown(text), refused.expected, nearest=refused.near)]) from None
 
 
+def read_hold(text: str) -> float | str:
+    """Return a temperature to hold in degC, or "limit" for the highest allowed. Raises CaseError for any other text."""
+    if text.strip() == "limit":
+        return "limit"
+    entry = dict(entries(Requirements))["highest_temperature"]
+    try:
+        return float(value_of(text, entry))
+    except UnreadableText as refused:
+        expected = f'{refused.expected}, or "limit" for the highest that the case allows'
+        raise CaseError([Fault("--hold", shown(text), expected, nearest=refused.near)]) from None
+
+
 def _whole_file(name: str, given: str, expected: str, line: int | None = None) -> CaseError:
     return CaseError([Fault("(whole file)", given, expected, where=name, line=line)])
 

@@ -158,6 +158,7 @@ class Amounts(Figures):
     purge_quantity = Declared(
         "g", "grease that renews a neglected or over-aged filling, in steps, with the way out open"
     )
+    purge_run = Declared("h", "time to run with the way out open after greasing, and between the steps of a purge")
     continuous_feed = Declared("g/h", "rate of continuous feeding, where an interval would be too short")
     grease_per_year = Declared("g", "grease given in a year by the plan line")
     cartridges_per_year = Declared("1", "cartridges that this is")
@@ -285,6 +286,28 @@ class Remedy:
     effort: int  # 1 a setting or a dose ... 5 a new part; of a pair the sum
     edits: tuple[tuple[str, str | Mapping[str, str] | None], ...]  # of the case file: key or table, and what it becomes
     limits: tuple[LimitAfter, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Need:
+    """What one means alone has to be to hold a temperature."""
+
+    means: str
+    now: float | str | None  # None: there is none of it yet
+    needed: float | str | None  # None: it cannot do it alone
+    unit: str
+    note: str
+    temperature: float | None  # degC, of the hottest duty point then
+    edits: tuple[tuple[str, str | Mapping[str, str] | None], ...]  # of the case file, as of a remedy
+
+
+@dataclass(frozen=True, slots=True)
+class Needs:
+    """What each means alone has to be, and for what."""
+
+    question: str = ""  # what is to be held, in words; empty where nothing was asked
+    found: tuple[Need, ...] = ()
+    is_due: bool = False  # it was asked, or heat brings a limit near or beyond
 
 
 @dataclass(frozen=True, slots=True)
@@ -417,6 +440,7 @@ class Result:
     interval_spread: str = ""  # how far the lines lie apart, in words
     warm_up: WarmUp | None = None  # where it was asked for
     calibration: Calibrated | None = None  # None where no temperature was measured
+    needs: Needs = Needs()
 
     def limit(self, name: str) -> Limit:
         """Return a limit by its name.

@@ -10,7 +10,7 @@ from lubecheck.data import coolants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
 from lubecheck.errors import NotCalibrated
-from lubecheck.model.assumptions import HOUSING_AREA, PROPOSED_HOUSING_FILL, SMALLEST_AREA, at_worst
+from lubecheck.model.assumptions import HOUSING_AREA, SMALLEST_AREA, at_worst
 from lubecheck.model.calibration import COOLING
 from lubecheck.model.duty_entries import Duty
 from lubecheck.model.entries import Case
@@ -272,6 +272,8 @@ def _surroundings_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, f
     water = around.water or reading.get("[surroundings] water")
     return {
         "inside_factor": inside,
+        "oil_volume": _known(case.oil.volume),
+        "oil_flow": _known(case.oil.flow or None),
         "water_share": oil_life.WATER_SHARES[water] if water is not None else 1.0,
         "coldest": _known(around.coldest),
         "pressure": float(cooling.pressure_at.plain(altitude)),
@@ -469,8 +471,9 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
     volume, grams_per_cm3 = row["free_volume"], row["density"] / 1000
     void = case.housing.void if case.housing.void is not None else reading.get("[housing] void", 0.0)
     _, proposed, _ = grease_amount.first_fill.plain(
-        speed=row["speed"], speed_limit=row["speed_limit"], pitch_diameter=row["pitch_diameter"]
-    )
+        speed=row["speed"], speed_limit=row["speed_limit"], pitch_diameter=row["pitch_diameter"],
+        sealing=grease_amount.SEALINGS.index("closed" if case.bearing.sealed_sides == 2 else "open"),
+    )  # fmt: skip
     if plan.fill is None:
         fill = float(proposed)
     elif isinstance(plan.fill, str):
@@ -480,7 +483,8 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
     room = volume if void is None else void
     housing_fill = plan.housing_fill
     if housing_fill is None:
-        housing_fill = reading.get("[grease] housing_fill", PROPOSED_HOUSING_FILL)
+        lies = "vertical" if _is_vertical(case, reading) else "horizontal"
+        housing_fill = reading.get("[grease] housing_fill", grease_amount.HOUSING_FILL[lies][1])
     if plan.given is not None:
         # What the bearing has no room for went into the space beside it.
         found = fill_found(plan, fill, volume, grams_per_cm3)

@@ -13,7 +13,7 @@ from collections import Counter
 from collections.abc import Sequence
 from dataclasses import dataclass
 
-from lubecheck.model.amounts import dose, yearly
+from lubecheck.model.amounts import dose, run_words, yearly
 from lubecheck.model.plan import calendar_days_of
 from lubecheck.model.result import PlanLine, Result
 from lubecheck.units import POUND_G
@@ -96,7 +96,7 @@ def _row(result: Result, start: datetime.date, round_days: int | None, route: st
     purge = _purge(result, interval_h, days, last, start)
     if purge is not None:
         notes.append(f"more than {NEGLECTED:g} intervals old: renew it with {purge:.0f} g, in steps, the way out open, "
-                     "until clean grease comes")  # fmt: skip
+                     f"{_between(result)}until clean grease comes")  # fmt: skip
     if result.verdict in ("beyond", "unknown"):
         notes.append(f"verdict {result.verdict}: settle {result.governing.replace('_', ' ')} before the plan counts")
     # What stands in the plan after the check's own notes that a fitter needs.
@@ -195,6 +195,14 @@ def _purge(
         plan.hours_run is not None and plan.hours_run > NEGLECTED * interval_h
     )
     return amounts.figures["purge_quantity"].value if is_old else None
+
+
+def _between(result: Result) -> str:
+    """Say how long to run between the steps of a purge."""
+    run = None if result.amounts is None else result.amounts.figures["purge_run"]
+    if run is None or run.low is None or run.high is None:
+        return ""
+    return f"running {run_words(run.low, run.high)} between the steps (common practice), "
 
 
 def _staggered(rows: Sequence[PlanRow], start: datetime.date, slot: int) -> tuple[PlanRow, ...]:

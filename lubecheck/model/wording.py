@@ -17,11 +17,11 @@ from lubecheck.data.oil_analysis import OilAnalysis
 from lubecheck.model import calibration_words, limits, oil_words
 from lubecheck.model import given as after
 from lubecheck.model.amounts import CARTRIDGE_G
-from lubecheck.model.assumptions import FACTS, PROPOSED_HOUSING_FILL, Fact
+from lubecheck.model.assumptions import FACTS, Fact
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
-from lubecheck.model.interval_lines import interval_note, percentile
+from lubecheck.model.interval_lines import charge_words, interval_note, percentile
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import FLASH_MARGIN, parts_rows, takes_loads
 from lubecheck.model.part_entries import BearingTable
@@ -30,7 +30,7 @@ from lubecheck.model.result import Assumed
 from lubecheck.model.rows import DEFAULT_KAPPA, DEFAULT_LIFE, DEFAULT_RELIABILITY, LIMIT_ORIGINS, RULE_DAYS, seasons
 from lubecheck.model.shaft import loads_of
 from lubecheck.model.side_figures import curing_preload, safe_speed
-from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_life, oil_life
+from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_amount, grease_life, oil_life
 from lubecheck.units import KINDS
 
 SAFETY = (
@@ -164,7 +164,7 @@ def _interval(case: Case, outcome: Outcome, row: int) -> str:
         bath = points.is_bath[0]
         by = "oil change by the temperature of the bath" if bath else "oil change by oxidation at the bearing"
         wet = "shortened by water" if points.water_share[0] < 1 else ""
-        return join(by + ("" if case.oil.interval else ", proposed"), wet)
+        return join(by + ("" if case.oil.interval else ", proposed"), wet, charge_words(case, outcome))
     if points.is_sealed[0]:
         if case.grease.interval is not None:
             return "closed on both sides: do not regrease"
@@ -232,8 +232,8 @@ def _clearance(case: Case, outcome: Outcome, row: int) -> str:
         return f"no clearance table for {case.bearing.family} of this bore, or class"
     left = judged.allowed[0] - judged.demand[0]
     sign = "; below zero: the bearing is preloaded, take a class with more" if left < 0 else ""
-    taken = f"{points.fit_loss[row] * 1000:.0f} um by the fits, the rest by a warmer inner ring"
-    whole = f"{left * 1000:.0f} um are left of {judged.allowed[0] * 1000:.0f} on the average"
+    taken = f"{points.fit_loss[row]:.3f} mm by the fits, the rest by a warmer inner ring"
+    whole = f"{left:.3f} mm are left of {judged.allowed[0]:.3f} mm on the average"
     return f"{case.bearing.clearance}: {whole}{sign}; {taken}"
 
 
@@ -398,7 +398,8 @@ def notes(case: Case, outcome: Outcome) -> tuple[str, ...]:
     if case.is_grease and case.grease.rule in RULE_DAYS:
         said.append(f"the {case.grease.rule} rule gives so little that it holds for that rhythm only")
     if case.surroundings.orientation == "vertical" and case.is_grease:
-        said.append("the upright shaft halves the interval, not the amount: a baffle below keeps the grease in place")
+        said.append("the upright shaft halves the interval, not the bearing's fill: a baffle below keeps the grease in "
+                    "place; of the space beside it fill half above and up to three quarters below")  # fmt: skip
     if not case.is_grease and case.oil.volume is not None and case.oil.flow and case.oil.supply == "circulating":
         dwell = float(oil_life.dwell_time.plain(case.oil.volume, case.oil.flow))
         if dwell < oil_life.LEAST_DWELL:
@@ -490,9 +491,7 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     said += [Assumed(name, text, source) for name, value, text, source in defaults if value is None]
     is_proposed = case.grease.housing_fill is None and case.grease.fill != "unknown"
     if case.is_grease and is_proposed and not comes_filled:
-        said.append(
-            Assumed("[grease] housing_fill", f"{PROPOSED_HOUSING_FILL * 100:.0f} % proposed", "common-practice")
-        )
+        said.append(Assumed("[grease] housing_fill", f"{_housing_fill(case) * 100:.0f} % proposed", "fill-handbooks"))
     for key, (low, high) in case.bearing.estimated.items():
         value = getattr(case.bearing, key)
         source = case.bearing.basis.get(key, "own-estimate")
@@ -517,10 +516,14 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     if case.is_grease and case.bearing.sealed_sides != 2 and case.grease.rule is None:
         said.append(Assumed("[grease] rule", "side: the grease goes in beside the bearing", "neale:A20.5"))
     if not case.is_grease and case.oil.volume is None and case.oil.supply != "mist":
-        said.append(Assumed("[oil] volume", "not known, so no change quantity", "common-practice"))
+        said.append(Assumed("[oil] volume", "not known: no change quantity, and an ordinary charge", "common-practice"))
     if case.bearing.cage is None:
         said.append(Assumed("[bearing] cage", "metal", "common-practice"))
     return tuple(said)
+
+
+def _housing_fill(case: Case) -> float:
+    return grease_amount.HOUSING_FILL[case.surroundings.orientation or "horizontal"][1]
 
 
 def _comes_filled(case: Case) -> bool:

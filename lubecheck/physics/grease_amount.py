@@ -13,11 +13,19 @@ import numpy as np
 from numpy.typing import NDArray
 
 from lubecheck.method import method
-from lubecheck.units import Choice, Cm3, Gram, GramPerHour, KgPerM3, Mm, Rpm, Share
+from lubecheck.units import Choice, Cm3, Gram, GramPerHour, Hour, KgPerM3, Mm, Rpm, Share
 
 STEEL_DENSITY = 7.85  # g/cm^3, bearing steel; a brass cage (8.5) or ceramic balls (3.2) shift the free volume
 GREASE_DENSITY = 900.0  # kg/m^3; greases with soap and mineral oil 870 to 950, with fluorinated oil up to 2000
-HOUSING_FILL = (0.30, 0.40, 0.50)  # low, nominal, high share of the housing's void; handbooks (Neale: 30 to 50 %)
+# Low, nominal, high share of the housing's void, by how the shaft lies. Handbooks: 30 to 50 % (Neale); for an upright
+# shaft one fills half of the space above the bearing and three quarters of that below, 62 % where they are alike, since
+# grease sinks out of it (Neale, from memory), others as for a level one.
+HOUSING_FILL = {"horizontal": (0.30, 0.40, 0.50), "vertical": (0.30, 0.50, 0.62)}
+_HOUSING_FILL = np.array(list(HOUSING_FILL.values()))
+_SLOW_HOUSING = (
+    0.90  # high end where n dm is below 50 000: slow ones may be filled, housing too (handbooks: 90 to 100 %)
+)
+MAKERS_FILL = (0.25, 0.30, 0.35)  # of bearings that are filled and closed by their maker; handbooks, from memory
 
 # Grams a mm^2 of D B, by the way or the rhythm of regreasing. Side and groove: handbooks (Neale p. A20.5 for the side
 # rule); weekly and monthly: handbooks, from memory.
@@ -26,6 +34,17 @@ _REGREASE_GRAMS = np.array(list(REGREASE_GRAMS.values()))
 _PURGE_GRAMS = 0.01  # g/mm^2, before a restart after years at rest or with over-aged grease; handbooks, from memory
 _FEED_GRAMS = (0.3e-4, 0.4e-4, 0.5e-4)  # g/(h*mm^2), low, nominal, high; handbooks, from memory
 
+# Time to run with the way out open after greasing. Motor makers' sheets and handbooks, from memory: most say 10 to 30
+# min at running speed, single ones 5 min or 2 h. At slow shafts it is the turns that matter, not the minutes: counted
+# at 1500 rpm (estimate of this program, as is the longest, a shift).
+PURGE_RUN = (10 / 60, 20 / 60, 30 / 60)  # h, low, nominal, high
+_PURGE_SPEED = 1500.0  # rpm
+_PURGE_LONGEST = 8.0  # h
+
+Orientation = Annotated[NDArray[np.intp], Choice(tuple(HOUSING_FILL))]
+SEALINGS = ("open", "closed")  # closed: shields or seals on both sides
+Sealing = Annotated[NDArray[np.intp], Choice(SEALINGS)]
+_OPEN = np.array(0)
 RegreaseRule = Annotated[NDArray[np.intp], Choice(tuple(REGREASE_GRAMS))]
 
 # Speed parameter n dm in mm/min: below the first a bearing is slow and may be filled, from the second it is normal.
@@ -119,17 +138,21 @@ def _fill(slow: float, normal: float, limit: float, slowness: Share, nearness: S
 
 
 @method(source="fill-handbooks", valid=_SPEEDS)
-def first_fill(*, speed: Rpm, speed_limit: Rpm, pitch_diameter: Mm) -> tuple[Share, Share, Share]:
+def first_fill(
+    *, speed: Rpm, speed_limit: Rpm, pitch_diameter: Mm, sealing: Sealing = _OPEN
+) -> tuple[Share, Share, Share]:
     """First fill of a bearing as a share of its free volume: low, nominal and high.
 
+    A bearing that is closed on both sides is filled by its maker for any speed, with 25 - 30 - 35 %. An open one:
     25 - 30 - 35 % at normal speed (handbooks); 60 - 80 - 100 % where n dm is below 50 000 mm/min (handbooks: up to 90
     to 100 %; the nominal stays lower to leave room within the allowed band), linear in log(n dm) up to 150 000; falling
     from 0.8 of the speed limit to 20 - 25 - 30 % at it (own estimate of the handbooks' "less"). Continuous throughout.
-    The housing's share is HOUSING_FILL.
+    Handbooks give the bearing of an upright shaft the same fill; the housing's share is `housing_fill`.
 
     speed [rpm]: speed n, any shape
     speed_limit [rpm]: speed limit of the bearing with this grease, broadcasts with speed
     pitch_diameter [mm]: mean diameter dm = (d + D)/2, broadcasts with speed
+    sealing: open, or closed on both sides; the plain face takes its position in SEALINGS
     returns [1, 1, 1]
 
     >>> [share.magnitude for share in first_fill(speed="1480 rpm", speed_limit="4100 rpm", pitch_diameter="110 mm")]
@@ -137,11 +160,33 @@ def first_fill(*, speed: Rpm, speed_limit: Rpm, pitch_diameter: Mm) -> tuple[Sha
     """
     slowness = _slowness(speed, pitch_diameter)
     nearness = _nearness(speed, speed_limit)
-    return (
-        _fill(0.60, 0.25, 0.20, slowness, nearness),
-        _fill(0.80, 0.30, 0.25, slowness, nearness),
-        _fill(1.00, 0.35, 0.30, slowness, nearness),
+    is_closed = np.asarray(sealing) == SEALINGS.index("closed")
+    low, nominal, high = (
+        np.where(is_closed, makers, _fill(slow, makers, limit, slowness, nearness))
+        for makers, slow, limit in zip(MAKERS_FILL, (0.60, 0.80, 1.00), (0.20, 0.25, 0.30), strict=True)
     )
+    return low, nominal, high
+
+
+@method(source="fill-handbooks", valid={key: _SPEEDS[key] for key in ("speed", "pitch_diameter")})
+def housing_fill(speed: Rpm, pitch_diameter: Mm, orientation: Orientation) -> tuple[Share, Share, Share]:
+    """First fill of the space beside a bearing as a share of it: low, nominal and high.
+
+    30 - 40 - 50 % (Neale), 30 - 50 - 62 % for an upright shaft: half of the space above, three quarters of that below.
+    Where n dm is below 50 000 mm/min up to 90 % (handbooks: slow ones may be filled), linear in log(n dm) up to
+    150 000; the nominal stays, so that grease of the bearing finds room.
+
+    speed [rpm]: speed n, any shape
+    pitch_diameter [mm]: mean diameter dm = (d + D)/2, broadcasts with speed
+    orientation: horizontal or vertical; the plain face takes its position in HOUSING_FILL
+    returns [1, 1, 1]
+
+    >>> [share.magnitude for share in housing_fill("1480 rpm", "110 mm", "vertical")]
+    [0.3, 0.5, 0.62]
+    """
+    low, nominal, high = np.moveaxis(_HOUSING_FILL[orientation], -1, 0)
+    slowness = _slowness(speed, pitch_diameter)
+    return low + 0 * slowness, nominal + 0 * slowness, high + (_SLOW_HOUSING - high) * slowness
 
 
 @method(source="fill-handbooks", valid=_SPEEDS)
@@ -216,6 +261,25 @@ def purge_quantity(*, outside: Mm, width: Mm) -> Gram:
     <Quantity(25.0, 'gram')>
     """
     return _PURGE_GRAMS * outside * width
+
+
+@method(source="common-practice", valid={"speed": (1e-3, 1e6)})
+def purge_run(speed: Rpm) -> tuple[Hour, Hour, Hour]:
+    """Time to run with the way out open after greasing, and between the steps of a purge: low, nominal, high.
+
+    10 - 20 - 30 min from 1500 rpm up, as many turns (15 000 to 45 000) below it, at most a shift of 8 h. A range of
+    common practice, from memory, and no measured end: it is over when the temperature has turned over and nothing more
+    comes out.
+
+    speed [rpm]: running speed n, any shape
+    returns [h, h, h]
+
+    >>> [round(time.to("min").magnitude) for time in purge_run("300 rpm")]
+    [50, 100, 150]
+    """
+    slow = np.maximum(1.0, _PURGE_SPEED / speed)
+    low, nominal, high = (np.minimum(time * slow, _PURGE_LONGEST) for time in PURGE_RUN)
+    return low, nominal, high
 
 
 @method(source="fill-handbooks", valid={"outside": _SIZE, "width": _SIZE})

@@ -82,8 +82,8 @@ def halving_step(reference: DegC) -> DeltaDegC:
 def worksheet_parameter(k_f: Number, speed: Rpm, pitch_diameter: Mm) -> Number:
     """Abscissa k_f n dm of the interval curve of GfT worksheet 3 and DIN 51825, in mm/min.
 
-    The curve itself is not here: no point of it is known to this program surely enough. With this figure a reader who
-    has the worksheet can read the interval there. Bigger k_f is shorter, the opposite sense of the classical K.
+    The curve is in `grease_curve`, from memory: with this figure a reader who has the worksheet can check it there.
+    Bigger k_f is shorter, the opposite sense of the classical K.
 
     k_f [1]: bearing type factor of the worksheet, any shape
     speed [rpm]: speed n, broadcasts

@@ -2,7 +2,7 @@
 
 The lines of life stand for different percentiles: the classical interval of open bearings is an L01 (1 % of the
 bearings have failed by then), the life of capped bearings an L10, Booser's a median L50. `weibull_scale` converts.
-The curve of GfT worksheet 3 against k_f n dm is not here: no point of it is known to this program surely enough.
+The curve of GfT worksheet 3 against k_f n dm is in `grease_curve`.
 """
 
 from __future__ import annotations

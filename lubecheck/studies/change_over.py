@@ -8,6 +8,7 @@ from dataclasses import dataclass
 from lubecheck.data import compatibility
 from lubecheck.data.compatibility import Meeting
 from lubecheck.data.lubricant import Lubricant
+from lubecheck.model.amounts import purge_run, run_words
 from lubecheck.model.entries import Case
 from lubecheck.model.glance import Glance
 from lubecheck.model.kernel import Outcome
@@ -93,7 +94,7 @@ def change_over(
         interval_h=hours,
         interval_weeks=weeks_of(hours, per_day),
         stages=stages,
-        steps=_grease_steps(meeting, is_clean, is_closed),
+        steps=_grease_steps(meeting, is_clean, is_closed, run_words(*purge_run(case)[::2])),
         watch=_watch(meeting, way_between),
     )
 
@@ -142,7 +143,7 @@ def _oil(meeting: Meeting, hours: float | None, per_day: float) -> ChangeOver:
     return ChangeOver(way, None, None, left, None, hours, weeks_of(hours, per_day), stages, tuple(steps), watch)
 
 
-def _grease_steps(meeting: Meeting, is_clean: bool, is_closed: bool) -> tuple[str, ...]:
+def _grease_steps(meeting: Meeting, is_clean: bool, is_closed: bool, run: str) -> tuple[str, ...]:
     steps = [
         "Isolate and lock out the machine; wipe nipples and lines, empty the gun and load it with the new grease only"
     ]
@@ -155,7 +156,8 @@ def _grease_steps(meeting: Meeting, is_clean: bool, is_closed: bool) -> tuple[st
     else:
         steps += ["Open the relief and clear it of hard grease",
                   "Push the new grease through in small portions while the shaft turns, where the site allows it, "
-                  "until clean new grease comes out",
+                  f"until clean new grease comes out; between the portions run for {run} with the relief open (common "
+                  "practice)",
                   "Then regrease at the shortened interval until 95 % of the old is gone"]  # fmt: skip
     steps.append("Change the label of the nipple, the lubrication plan and the store's list on the same day")
     return tuple(steps)

@@ -231,14 +231,20 @@ def _oil(case: Case) -> Iterator[Change]:
                 yield Change(f"cool the oil to {inlet} at the inlet", "inlet", REBUILD, (("oil.inlet", inlet),))
 
 
-def _streams(case: Case, before: Glances) -> Iterator[Change]:
-    """Oil that circulates through a cooler in place of a bath that is too hot."""
-    oil, bearing, around = case.oil, case.bearing, case.surroundings
-    if oil.supply not in (None, "bath") or bearing.sealed_sides == 2 or not _fails(before, *BATH_HEAT):
-        return
+def usual_inlet(case: Case) -> float:
+    """Return the inlet temperature in degC of oil that comes from a cooler in the warmest air of a case."""
+    around = case.surroundings
     air = max(one for one in (around.ambient, around.ambient_highest, *(around.months or ()),
                               *(duty.ambient for duty in case.duty)) if one is not None)  # fmt: skip
-    inlet = f"{max(WARM_INLET, math.ceil(air + COOLER_MARGIN)):g} degC"
+    return max(WARM_INLET, math.ceil(air + COOLER_MARGIN))
+
+
+def _streams(case: Case, before: Glances) -> Iterator[Change]:
+    """Oil that circulates through a cooler in place of a bath that is too hot."""
+    oil, bearing = case.oil, case.bearing
+    if oil.supply not in (None, "bath") or bearing.sealed_sides == 2 or not _fails(before, *BATH_HEAT):
+        return
+    inlet = f"{usual_inlet(case):g} degC"
     wetting = float(oil_life.guide_flow.plain(outside=bearing.outside, width=bearing.width))
     for flow in dict.fromkeys(float(f"{max(times * wetting, LEAST_STREAM):.2g}") for times in STREAMS):
         edits: list[Edit] = [("oil.supply", "circulating"), ("oil.flow", f"{flow:g} {_unit('oil', 'flow')}"),

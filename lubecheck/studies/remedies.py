@@ -17,9 +17,10 @@ from lubecheck.data import air
 from lubecheck.model.check import check as judge_case
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
-from lubecheck.model.limits import STATES, UNKNOWN, WITHIN
+from lubecheck.model.limits import NEAR, STATES, UNKNOWN, WITHIN
+from lubecheck.model.plan_entries import STREAMS
 from lubecheck.model.points import Codes, Flags
-from lubecheck.model.result import LimitAfter, Remedy, Result
+from lubecheck.model.result import Limit, LimitAfter, Remedy, Result
 
 if TYPE_CHECKING:
     from lubecheck.model.glance import Glances
@@ -31,20 +32,35 @@ CHUNK = 2000  # cases a kernel call
 # Limits that one group of changes alone can move.
 ONE_GROUP = {"cold_start": "lubricant", "speed": "bearing", "static_load": "bearing", "minimum_load": "bearing"}
 _FAILING = ("near", "beyond")
+HEAT_LIMITS = ("temperature", "rings", "flash_point", "film", "interval")  # that heat may bring near or beyond
 
 
-def check(case: Case, *, warm_up: bool = False, air_properties: Air = air.properties) -> Result:
+def check(
+    case: Case, *, warm_up: bool = False, air_properties: Air = air.properties, hold: float | str | None = None
+) -> Result:
     """Judge one bearing position, and where a limit is near or beyond look for what brings it back.
 
     Every limit comes with its use, the demand over what is allowed; the verdict is the worst state, and what could not
     be judged is never called good. With `warm_up` the way to the steady state is followed and judged as well.
+
+    hold: temperature in degC, or "limit" for the highest that the case allows: what draught, oil, area or fill alone
+    holds it. Where heat brings a limit near or beyond, that is told unasked.
     """
     if case.measured:
         from lubecheck.studies.calibrate import calibrated  # here, so that a check without one does not load it
 
         case = calibrated(case, air_properties=air_properties)
     result = judge_case(case, air_properties=air_properties)
-    if any(limit.state in _FAILING for limit in result.limits):
+    is_failing = any(limit.state in _FAILING for limit in result.limits)
+    if hold is not None or case.oil.supply in STREAMS or (
+        is_failing and any(_is_used_up(limit) for limit in result.limits)
+    ):  # fmt: skip
+        from lubecheck.studies import needs  # here, so that the check of a cool case does not load it
+
+        temperature = None if isinstance(hold, str) else hold
+        found = needs.find(case, temperature, is_asked=hold is not None, air_properties=air_properties)
+        result = dataclasses.replace(result, needs=found)
+    if is_failing:
         result = dataclasses.replace(result, remedies=find(case, air_properties=air_properties))
     if warm_up or case.grease.given is not None:
         from lubecheck.studies import warmup  # here, as few ask for it
@@ -55,6 +71,11 @@ def check(case: Case, *, warm_up: bool = False, air_properties: Air = air.proper
         if warm_up:
             result = warmup.judged(case, result, air_properties=air_properties)
     return result
+
+
+def _is_used_up(limit: Limit) -> bool:
+    """Tell a limit that heat may have brought near or beyond, at the usual reading of what was not said."""
+    return limit.name in HEAT_LIMITS and limit.state in _FAILING and (limit.use is None or limit.use > NEAR)
 
 
 def find(case: Case, *, air_properties: Air = air.properties) -> tuple[Remedy, ...]:

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import dataclasses
 import io
 import re
 
@@ -13,13 +14,14 @@ import lubecheck
 from lubecheck.faces.display import in_system
 from lubecheck.faces.terminal import STYLES, print_result
 from lubecheck.model.reader import read_case
+from lubecheck.model.result import Remedy
 from lubecheck.sources import cite
 
 
-def printed(text_or_path, *, width=100, system="si", **options) -> str:
+def printed(text_or_path, *, width=100, system="si", losses=False, hold=None, **options) -> str:
     case = read_case(text_or_path) if isinstance(text_or_path, str) else lubecheck.load_case(text_or_path)
     console = Console(file=io.StringIO(), width=width, _environ={}, **options)
-    print_result(lubecheck.check(case), console, system)
+    print_result(lubecheck.check(case, hold=hold), console, system, losses=losses)
     return console.file.getvalue()
 
 
@@ -124,13 +126,53 @@ def test_figures_in_texts_are_shown_in_inch_units_and_nothing_else_is_touched(te
     assert in_system(text, "si") == text
 
 
-def test_inch_output_has_no_house_unit_left_in_its_texts():
-    for path in EXAMPLES.glob("*.toml"):
-        text = " ".join(printed(path, width=300, system="inch").split())
-        head = text.split("What would bring it back")[0]
-        assert not re.search(r"[0-9] (mm|N|g|cm\^3|m/s|mm\^2)(?![\w/^*])", head), path
-        assert " in " in head
-        assert "delta_degF" in head
+# Every unit of the trade that has an inch form. What has none stays: W, W/K, W/m^2, h, rpm, mm^2/s (cSt), n dm in
+# mm/min, g/h of a feeder, kg/m^3, rad/s^2, MPa, ppm, and the um of filters and ISO 4406.
+SI = (r"[0-9] (mm|cm|m|km|mm\^2|cm\^2|m\^2|cm\^3|dm\^3|m\^3|ml|l|mg|g|kg|t|N|kN|N\*mm|N\*m|degC|delta_degC|K|m/s|mm/s"
+      r"|l/min|l/h|km/h)(?![\w/^*])")  # fmt: skip
+
+
+@pytest.mark.parametrize("path", [*sorted(EXAMPLES.glob("*.toml")), *sorted((EXAMPLES / "swap").glob("*.toml"))],
+                         ids=lambda path: path.stem)  # fmt: skip
+def test_inch_output_has_no_unit_left_that_has_an_inch_form(path):
+    text = " ".join(printed(path, width=300, system="inch", losses=True, hold="limit").split())
+    found = re.search(SI, text)
+    assert found is None, text[max(0, found.start() - 60) : found.end() + 20]
+    assert " in " in text
+    assert "degF" in text
+    assert re.search(SI, " ".join(printed(path, width=300).split()))
+
+
+def test_a_designation_that_ends_like_a_unit_is_left_alone():
+    change = "bigger bearing: 6409 N (120 x 29 mm), ratings estimated; and bigger bearing: 22318 K (190 x 64 mm)"
+    remedy = Remedy(change, 0.5, "within", "P is 900 N, 20 K less", "film", 5, (), ())
+    result = dataclasses.replace(lubecheck.check(read_case(BASE)), remedies=(remedy,))
+    console = Console(file=io.StringIO(), width=300, _environ={})
+    print_result(result, console, "inch")
+    said = console.file.getvalue()
+    assert "bigger bearing: 6409 N (4.72 x 1.14 in), ratings" in said
+    assert "bigger bearing: 22318 K (7.48 x 2.52 in)" in said
+    assert "P is 202 lbf, 36.0 delta_degF less" in said
+
+
+@pytest.mark.parametrize("arguments", [("plan", "examples/oil_bath_pump.toml", "examples/regreased_fan.toml"),
+                                       ("life", "examples/oil_bath_pump.toml"),
+                                       ("circuit", "examples/gearbox/circuit.toml"),
+                                       ("swap", "examples/swap/slow_fan.toml", "--to", "lithium-complex-pao-220-2-ep"),
+                                       ("bearings", "6309", "22218-2RS"),
+                                       ("fluids", "lithium-complex-150-2")])  # fmt: skip
+def test_the_other_commands_leave_none_either(arguments):
+    from typer.testing import CliRunner
+
+    from lubecheck.faces.cli import app
+
+    said = " ".join(CliRunner().invoke(app, [*arguments, "--units", "inch"], env={"COLUMNS": "300"}).stdout.split())
+    assert said
+    found = re.search(SI, said)
+    assert found is None, said[max(0, found.start() - 60) : found.end() + 20]
+
+
+def test_a_tapered_bore_is_no_temperature():
     assert "22218 K spherical roller" in printed(
         BASE.replace('"6309"', '"22218 K"').replace('dynamic_rating = "53 kN"\n', "").replace(
             'static_rating = "31.5 kN"\n', "").replace('mass = "0.83 kg"\n', "").replace('cage = "steel"\n', ""),

@@ -116,3 +116,23 @@ def test_history_adds_up_and_an_open_relief_lets_it_out():
 def test_the_one_minute_way_to_weigh_a_stroke_is_told_until_it_is_known():
     assert any("ten strokes" in note for note in result_of().notes)
     assert not any("ten strokes" in note for note in result_of(grease__stroke='"1.2 g"').notes)
+
+
+def test_an_upright_shaft_gets_more_beside_its_bearing_and_the_same_in_it():
+    level, upright = (result_of(surroundings__orientation=f'"{lies}"', grease__fill=None, grease__housing_fill=None)
+                      for lies in ("horizontal", "vertical"))  # fmt: skip
+    assert upright.plan.first_fill_g == level.plan.first_fill_g
+    density = level.plan.first_fill_g / (level.grease.fill_share.m * level.grease.free_volume.m_as("cm^3"))
+    assert level.plan.housing_fill_g == pytest.approx(0.4 * 60 * density)
+    assert upright.plan.housing_fill_g == pytest.approx(0.5 * 60 * density)
+    assert any(item.value.startswith("50 %") for item in upright.assumed if item.name == "[grease] housing_fill")
+    assert any("three quarters below" in note for note in upright.notes)
+
+
+def test_a_slow_closed_bearing_is_counted_as_its_maker_fills_it():
+    text = with_key(with_key(BASE.replace('"6309"', '"6309-2Z"'), "grease", "fill", None), "grease", "interval", None)
+    result = lubecheck.check(read_case(with_key(text, "duty", "speed", '"60 rpm"')))
+    figures = result.amounts.figures["bearing_fill"]
+    assert figures.low < figures.value < figures.high
+    assert figures.value / figures.high == pytest.approx(0.30 / 0.35)
+    assert figures.value / result.amounts.figures["allowed_most"].value == pytest.approx(0.30)  # slow: 100 % allowed

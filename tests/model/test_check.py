@@ -173,6 +173,12 @@ REMOVALS = {
     "flooded": (OIL, {("oil", "level"): '"40 mm"'}),
     "hot water": (OIL, {("housing", "shaft_temperature"): '"180 degC"'}),
     "wet oil": (OIL, {("surroundings", "water"): '"wet"'}),
+    # wet surroundings put water into oil that nobody tested: what was not said of them may be wet as well
+    "wet oil, little life left": (OIL, {("surroundings", "water"): '"wet"', ("limits", "life"): '"15000 h"'}),
+    "large sump": (OIL, {("oil", "volume"): '"6 l"', ("oil", "interval"): '"9 month"'}),
+    "large tank": (CIRCULATING.replace("bath -/17/14", "circulating -/17/14"), {("oil", "volume"): '"40 l"'}),
+    "upright": (BASE, {("surroundings", "orientation"): '"vertical"', ("housing", "void"): '"12 cm^3"',
+                       ("grease", "housing_fill"): '"100 %"', ("grease", "fill"): '"60 %"'}),
     "circulating": (CIRCULATING.replace("bath -/17/14", "circulating -/17/14"), {}),
     "hot inlet": (CIRCULATING.replace("bath -/17/14", "circulating -/17/14"), {("oil", "inlet"): '"95 degC"'}),
     "seldom": (BASE, {("grease", "hours_per_day"): '"2 h"', ("grease", "interval"): '"5000 h"'}),

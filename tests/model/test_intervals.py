@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import dataclasses
 import math
 
 import numpy as np
@@ -145,9 +146,38 @@ def test_the_lines_stand_side_by_side_with_their_percentiles_and_one_governs():
         by_name["classical"].hours, rel=1e-4
     )
     assert "times apart" in result.interval_spread
-    # k_f n dm by hand: 1.0 x 1480 x 72.5 = 107 300; the curve is not read.
-    assert by_name["GfT worksheet 3"].hours is None
-    assert "1.07e+05" in by_name["GfT worksheet 3"].note
+    # k_f n dm by hand: 1.0 x 1480 x 72.5 = 107 300; the curve is remembered, and only stands beside the others
+    curve = by_name["GfT worksheet 3"]
+    assert "1.07e+05" in curve.note
+    raw = float(curve.note.split(": ")[1].split()[0])
+    assert 17_000 < raw < 30_000
+    assert raw * math.prod(dict(curve.factors).values()) == pytest.approx(curve.hours, rel=1e-3)
+    assert curve.failed == 0.01
+    assert "L10 to L01" in dict(curve.factors)
+    assert "never governs" in curve.note
+
+
+def test_the_remembered_curve_follows_the_plain_answers_and_never_moves_the_verdict():
+    plain, harsh = (lubecheck.check(case_of(**answers)) for answers in (
+        {}, {"surroundings__dust": '"dusty"', "surroundings__orientation": '"vertical"'}))  # fmt: skip
+    lines = [result.interval_lines[2] for result in (plain, harsh)]
+    # dust 0.4, upright 0.5: reliability handbooks; the temperature moves a little with the friction of an upright shaft
+    assert lines[1].hours / lines[0].hours == pytest.approx(0.2, rel=0.1)
+    for result in (plain, harsh):
+        assert result.limit("interval").allowed == pytest.approx(result.interval_lines[0].hours)
+    (safer,) = [item for item in lubecheck.check(case_of(limits__grease_reliability='"90 %"')).interval_lines
+                if item.name == "GfT worksheet 3"]  # fmt: skip
+    # L10 over L01 with the slope 2.3: 2.8 times (handbooks)
+    assert safer.hours / lines[0].hours == pytest.approx(2.78, rel=0.01)
+
+
+def test_beyond_the_right_end_of_the_curve_nothing_is_read():
+    text = with_key(BASE, "duty", "speed", '"2900 rpm"').replace('"6309"', '"22222"')
+    for key in ("dynamic_rating", "static_rating", "mass"):
+        text = with_key(text, "bearing", key, None)
+    curve = lubecheck.check(read_case(text)).interval_lines[2]
+    assert curve.hours is None  # k_f n dm about 8 x 2900 x 155 = 3.6e6
+    assert "the curve ends at 2e+06" in curve.note
 
 
 def test_a_closed_bearing_is_judged_by_the_life_of_its_grease():
@@ -215,6 +245,40 @@ def test_circulating_oil_is_judged_by_oxidation_alone():
 def test_water_in_the_air_shortens_an_oil_change():
     dry, wet = (lubecheck.check(oil_case(water=word)).limit("interval").allowed for word in ("dry", "damp"))
     assert wet == pytest.approx(dry / 2)
+
+
+def test_a_large_charge_serves_longer_and_a_small_or_unsaid_one_as_the_rule_says():
+    def bath(volume):
+        case = oil_case()
+        charge = None if volume is None else 1000 * volume
+        return lubecheck.check(dataclasses.replace(case, oil=dataclasses.replace(case.oil, volume=charge)))
+
+    results = {volume: bath(volume) for volume in (None, 0.05, 0.3, 0.6, 1.2, 9.0)}
+    hours = {volume: result.limit("interval").allowed for volume, result in results.items()}
+    watts = results[None].operating.friction_power.m_as("W")
+    temperature = results[None].operating.temperature.m_as("degC")
+    by_hand = 8766 * 0.25 ** (max(temperature - 50, 0) / 50)  # 12 months to 50 degC, 3 at 100: handbooks
+    for volume, allowed in hours.items():
+        factor = 1.0 if volume is None else min(2.0, max(1.0, volume * 1000 / watts / 10))  # 5 to 10 l/kW: handbooks
+        assert allowed == pytest.approx(factor * by_hand, rel=1e-6), volume
+    assert hours[9.0] == pytest.approx(2 * hours[None])
+    assert "a small charge" in results[0.05].limit("interval").note
+    assert "a large charge" in results[9.0].limit("interval").note
+    assert ("volume", 2.0) in results[9.0].interval_lines[0].factors
+
+
+@pytest.mark.parametrize(("litres", "factor"), [(5, 1.0), (10, 1.0), (15, 1.5), (60, 2.0)])
+def test_circulating_oil_serves_longer_the_more_seldom_it_turns_over_but_never_over_four_years(litres, factor):
+    case = oil_case("circulating", ambient="75 degC")
+    hot = dataclasses.replace(case, oil=dataclasses.replace(case.oil, inlet=85.0, volume=1000.0 * litres))
+    result = lubecheck.check(hot)
+    temperature = result.operating.temperature.m_as("degC")
+    assert 80 < temperature < 100
+    # Whitby: 4 years up to 70 degC, halved each 10 K; ordinary tanks hold 5 to 10 min of the flow of 1 l/min
+    by_hand = 4 * 8766 * 2 ** ((70 - temperature) / 10)
+    assert result.limit("interval").allowed == pytest.approx(min(4 * 8766, factor * by_hand), rel=1e-6)
+    cool = lubecheck.check(dataclasses.replace(case, oil=dataclasses.replace(case.oil, volume=1000.0 * litres)))
+    assert cool.limit("interval").allowed <= 4 * 8766 * (1 + 1e-9)
 
 
 def test_an_oil_hotter_than_the_rules_go_is_unknown():

@@ -102,7 +102,20 @@ def test_overdue_and_unknown_dates_are_due_at_once_and_said():
 def test_a_neglected_filling_is_purged():
     row = schedule([result_of(grease__last_done='"2024-01-01"')], START)[0]
     assert row.purge_g == pytest.approx(25.0)
-    assert any("clean grease comes" in note for note in row.notes)
+    (note,) = [note for note in row.notes if "clean grease comes" in note]
+    assert "running 10 to 30 min between the steps (common practice)" in note  # 1480 rpm
+
+
+@pytest.mark.parametrize(
+    ("speed", "said"), [("1480 rpm", "10 to 30 min"), ("2960 rpm", "10 to 30 min"), ("500 rpm", "30 to 90 min"),
+                        ("100 rpm", "2.5 to 7.5 h"), ("5 rpm", "a shift of 8 h")]
+)  # fmt: skip
+def test_the_steps_say_how_long_to_run_with_the_plug_open(speed, said):
+    text = with_key(with_key(BASE, "housing", "relief", '"open"'), "duty", "speed", f'"{speed}"')
+    steps = lubecheck.check(read_case(text)).plan.steps
+    assert any(f"Run for {said} at running speed with the plug open" in step for step in steps)
+    closed = lubecheck.check(read_case(with_key(text, "housing", "relief", '"closed"'))).plan.steps
+    assert not any("plug open" in step for step in closed)
 
 
 def test_staggering_spreads_positions_of_one_rhythm_earlier():

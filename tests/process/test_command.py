@@ -152,6 +152,26 @@ def test_check_starts_light(example, options):
     assert not roots & {"CoolProp", "scipy", "pint", "pandas", "pydantic", "dask", "xarray", "mpmath", "unittest"}
 
 
+def test_the_check_of_a_cool_case_loads_no_search():
+    assert not {"lubecheck.studies.needs", "lubecheck.studies.changes"} & imported_by(
+        "check", "examples/new_motor.toml"
+    )
+    assert "lubecheck.studies.needs" in imported_by("check", "examples/overfilled_motor.toml")
+
+
+def test_a_temperature_to_hold_is_asked_for_by_an_option():
+    done = run("check", "examples/oil_bath_pump.toml", "--hold", "62 degC")
+    assert done.returncode == 0, done.stderr
+    assert "What alone would hold 62 degC" in done.stdout
+    needs = json.loads(run("check", "examples/oil_bath_pump.toml", "--hold", "62 degC", "--json").stdout)["needs"]
+    assert {"means", "now", "needed", "unit", "note"} <= set(needs[0])
+    assert "oil flow" in {need["means"] for need in needs}
+    assert "What alone would hold" not in run("check", "examples/oil_bath_pump.toml").stdout
+    refused = run("check", "examples/oil_bath_pump.toml", "--hold", "62 mm")
+    assert refused.returncode == 2
+    assert "--hold" in refused.stderr
+
+
 def test_exact_fluids_asks_coolprop():
     assert "CoolProp" in imported_by("check", "examples/new_motor.toml", "--exact-fluids")
 

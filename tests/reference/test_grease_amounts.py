@@ -97,6 +97,33 @@ def test_fill_of_a_slow_bearing_may_be_whole():
     assert upper == pytest.approx(1.0)
 
 
+def test_a_closed_bearing_is_filled_by_its_maker_whatever_its_speed():
+    # handbooks, memory: 25 to 35 % of the free space
+    for speed in (5.0, 500.0, 1500.0, 4400.0):
+        found = grease_amount.first_fill.plain(speed=speed, speed_limit=4500.0, pitch_diameter=100.0, sealing=1)
+        assert [float(share) for share in found] == [0.25, 0.30, 0.35]
+
+
+def test_the_space_beside_a_bearing_is_filled_by_orientation_and_speed():
+    # Neale: 30 to 50 %; upright half above and three quarters below (memory): 62 % of both; slow ones 90 to 100 %
+    level = [float(x) for x in grease_amount.housing_fill.plain(1500.0, 100.0, 0)]
+    assert level == pytest.approx([0.30, 0.40, 0.50])
+    upright = [float(x) for x in grease_amount.housing_fill.plain(1500.0, 100.0, 1)]
+    assert upright[2] == pytest.approx((0.5 + 0.75) / 2, abs=0.006)
+    assert level[1] < upright[1] < upright[2]
+    assert float(grease_amount.housing_fill.plain(50.0, 100.0, 0)[2]) == pytest.approx(0.90)
+
+
 def test_grease_of_ordinary_density_weighs_900_grams_a_litre():
     assert grease_amount.grease_mass("1 l", "0.9 g/cm^3").to("g").magnitude == pytest.approx(900.0)
     assert grease_amount.GREASE_DENSITY == 900.0
+
+
+def test_the_time_with_the_way_out_open_is_that_of_common_practice():
+    # Motor makers' sheets, memory: 10 to 30 min at 4 and 2 poles; at 300 rpm the same turns take five times as long
+    for speed, minutes in ((1480.0, (10.1, 20.3, 30.4)), (2960.0, (10, 20, 30)), (300.0, (50, 100, 150))):
+        found = np.array(grease_amount.purge_run.plain(speed)) * 60
+        assert found == pytest.approx(np.array(minutes), rel=0.01)
+    assert grease_amount.purge_run.plain(1.0) == (8.0, 8.0, 8.0)
+    slower = np.array(grease_amount.purge_run.plain(np.geomspace(1.0, 1e5, 500)))
+    assert np.all(np.diff(slower, axis=1) <= 0)
