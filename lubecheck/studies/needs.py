@@ -29,8 +29,8 @@ from lubecheck.units import Array
 
 OF_HEAT = ("temperature", "rings", "flash_point")  # heat is what decides these
 MAY_BE_OF_HEAT = ("film", "interval")
-PLACES = 25  # at which a means is looked at first
-PARTS, ROUNDS = 12, 6  # the gap is divided into parts again and again: 3e6 in all
+PLACES = 17  # at which a means is looked at first
+PARTS, ROUNDS = 12, 4  # the gap is divided into parts again and again: 2e4 in all
 DIGITS = 5  # of a figure, rounded to the side that holds
 
 
