@@ -71,7 +71,8 @@ def band(low: float, high: float, lost: float = 0.0) -> str:
     """Say that the band of uncertain inputs crosses the limit, where it does, or which share of it has no number."""
     if lost >= 0.005:
         return f"without a use in {100 * lost:.0f} % of the band"
-    return f"the band {low:.2f} to {high:.2f} crosses the limit" if low <= 1.0 < high else ""
+    top = f"to {high:.2f}" if math.isfinite(high) else "and without end"
+    return f"the band {low:.2f} {top} crosses the limit" if low <= 1.0 < high else ""
 
 
 def basis(name: str, case: Case, outcome: Outcome) -> str:
