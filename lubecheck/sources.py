@@ -90,6 +90,7 @@ SOURCES: Mapping[str, Source] = {
         "charts of grease compatibility, handbooks (they contradict each other)", "memory"
     ),
     "seal-handbooks": Source("resistance of elastomers to oils, seal handbooks", "memory"),
+    "astm-d1478": Source("ASTM D1478 / IP 186, low-temperature torque of ball bearing grease", "memory"),
     "astm-d7155": Source("ASTM D7155, evaluating compatibility of mixtures of turbine lubricating oils", "memory"),
     "astm-d6185": Source("ASTM D6185, evaluating compatibility of mixtures of lubricating greases", "memory"),
     "common-practice": Source("common practice", "seen"),

@@ -10,10 +10,10 @@ import numpy as np
 
 from lubecheck.data.bearing_series import Series
 from lubecheck.data.families import FAMILIES, Family
-from lubecheck.physics import ratings
+from lubecheck.physics import grease_amount, ratings
 
 _LEAST_PITCH, _GREATEST_PITCH = 20.0, 300.0  # mm, the sizes that the growth of a shape was fitted to
-STEEL_DENSITY = 7.85e-3  # g/mm^3, bearing steel; brass cages make up a few per cent more
+STEEL = grease_amount.STEEL_DENSITY / 1000  # g/mm^3; brass cages make up a few per cent more
 
 
 @dataclass(frozen=True, slots=True)
@@ -57,8 +57,8 @@ def estimate(
         dynamic_rating=dynamic,
         static_rating=static,
         f0_load=float(ratings.static_factor.plain(np.asarray(gamma))),
-        mass=STEEL_DENSITY * (1 - family.free_share) * math.pi / 4 * (outside**2 - bore**2) * width,
-        elements_mass=STEEL_DENSITY * volume * count * rows,
+        mass=STEEL * (1 - family.free_share) * math.pi / 4 * (outside**2 - bore**2) * width,
+        elements_mass=STEEL * volume * count * rows,
     )
 
 

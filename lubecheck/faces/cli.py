@@ -148,6 +148,7 @@ def plan(
     from lubecheck.model.reader import load_case
     from lubecheck.model.schedule import schedule
     from lubecheck.studies.calibrate import calibrated
+    from lubecheck.studies.warmup import waited
 
     if to is not None:
         face.maker(to)  # a bad name is refused before anything is worked out
@@ -161,7 +162,8 @@ def plan(
             faults += refused.faults
     if faults:
         raise CaseError(faults)
-    results = [judge(calibrated(case)) for case in read]
+    fitted = [calibrated(case) for case in read]
+    results = [waited(case, judge(case)) for case in fitted]
     first = date.today() if start is None else start.date()
     rows = schedule(results, first, None if route is None else route.value, is_staggered=stagger)
     if to is not None:

@@ -44,14 +44,14 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     _plan(result, console, system)
     _remedies(result, console, system)
     print_needs(result.needs, console, system)
-    bullets("Notes", result.notes, console, system)
-    _operating(result, console, system)
-    _heat(result, console)
-    _interval_lines(result, console, system)
     if result.warm_up is not None:
         from lubecheck.faces.warmup import print_warm_up  # only where it is asked for
 
         print_warm_up(result.warm_up, console, system)
+    bullets("Notes", result.notes, console, system)
+    _operating(result, console, system)
+    _heat(result, console)
+    _interval_lines(result, console, system)
     print_damage(result.damage, console, system)
     if losses:
         print_losses(result.losses, console, system)
@@ -82,7 +82,9 @@ def _meaning(result: Result) -> str:
     also = f" Not judged: {', '.join(unknown)}." if unknown else ""
     return {
         "within": "Every limit has room.",
-        "near": "No limit is passed, but little room is left: watch the governing one.",
+        "near": "An alarm may sound on the way, and no limit of the bearing is passed: watch it."
+        if (result.limit(result.governing).use or 0.0) > 1
+        else "No limit is passed, but little room is left: watch the governing one.",
         "beyond": f"Do not run it like this: a limit is passed.{also}",
         "unknown": f"Not good until it is judged: see what to state below.{also}",
     }[result.verdict]

@@ -55,20 +55,23 @@ def _chart(courses: list[Course], console: Console, system: str) -> list[Text]:
 
 
 def _crossings(courses: list[Course], system: str) -> list[str]:
-    """Say of each set-point which courses pass it, which come near, and which could not be judged."""
+    """Say of each set-point which courses pass it, when and for how long, and which may with the band."""
     lines = []
     for i, one in enumerate(courses[0].crossings if courses else ()):
-        met = {course.name: course.crossings[i] for course in courses}
-        passed = [f"{name} (after {number(c.at_h)} h)" for name, c in met.items() if c.at_h is not None]
-        near = [name for name, c in met.items() if c.state == "near"]
-        unknown = [name for name, c in met.items() if c.state == "unknown"]
-        reached = [name for name, c in met.items()
-                   if c.at_h is None and c.state != "unknown" and (c.use_high or 0.0) >= 1]  # fmt: skip
-        parts = [f"passed by {', '.join(passed)}" if passed else "", f"near in {', '.join(near)}" if near else "",
-                 f"not known of {', '.join(unknown)}" if unknown else "",
-                 f"within the band of {', '.join(reached)}" if reached else ""]  # fmt: skip
-        lines.append(f"{one.name} at {figure(one.set_point, 'degC', system)}: "
-                     + ("; ".join(part for part in parts if part) or "no course comes near it"))  # fmt: skip
+        parts = []
+        for course in courses:
+            crossing, peak = course.crossings[i], course.figures.figures["peak"]
+            band = (f"{amount(peak.value, 'degC', system)} ({amount(peak.low, 'degC', system)} to "
+                    f"{figure(peak.high, 'degC', system)})")  # fmt: skip
+            if crossing.at_h is not None:
+                lasts = "for good" if crossing.for_h is None else f"for {number(crossing.for_h)} h"
+                parts.append(f"passed in {course.name} after {number(crossing.at_h)} h {lasts}, peak {band}")
+            elif crossing.state == "unknown":
+                parts.append(f"not known of {course.name}")
+            elif crossing.state == "near" or (crossing.use_high or 0.0) >= 1:
+                parts.append(f"may be passed in {course.name}, peak {band}")
+        at = figure(one.set_point, "degC", system)
+        lines.append(f"{one.name} at {at}: {'; '.join(parts) or 'no course comes near it'}")
     return lines
 
 
@@ -83,9 +86,11 @@ def _cold(warm_up: WarmUp, system: str) -> list[str]:
         f"({amount(cold['running'].low, 'N*mm', system)} to {amount(cold['running'].high, 'N*mm', system)})"
     ]
     if cold["breakaway"].value is not None:
-        parts.append(f"{figure(cold['breakaway'].value, 'N*mm', system)} to make the grease yield")
+        parts.append(f"to break away at most {figure(cold['breakaway'].value, 'N*mm', system)}")
     parts.append(
         "what the drive has is not stated ([limits] start_torque)" if drive is None
         else f"the drive has {figure(drive, 'N*mm', system)} for it"
     )  # fmt: skip
+    if cold["starts_from"].value is not None:
+        parts.append(f"enough from {figure(cold['starts_from'].value, 'degC', system)} on")
     return ["; ".join(parts)]

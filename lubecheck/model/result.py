@@ -369,6 +369,7 @@ class Crossing:
     set_point: float  # degC
     state: str
     at_h: float | None  # when it is passed at the usual reading of all inputs; None: not
+    for_h: float | None  # how long it stays passed; None: not passed, or for good
     use: float | None  # rise of the peak over the ambient, as a share of what the set-point leaves
     use_low: float | None
     use_high: float | None
@@ -394,7 +395,8 @@ class ColdTorque(Figures):
     temperature = Declared("degC", "temperature of the start, the coldest that is stated")
     viscosity = Declared("mm^2/s", "kinematic viscosity of the (base) oil there")
     running = Declared("N*mm", "friction torque at running speed before anything has warmed")
-    breakaway = Declared("N*mm", "torque that makes grease at rest yield; none for oil")
+    breakaway = Declared("N*mm", "most that grease at rest may take to break away; none for oil")
+    starts_from = Declared("degC", "temperature from which on the drive has enough; none where it always or never has")
     drive = Declared("N*mm", "what the drive has for this bearing, as stated")
 
 

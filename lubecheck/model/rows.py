@@ -6,6 +6,8 @@ import math
 from collections.abc import Mapping
 from typing import Any
 
+import numpy as np
+
 from lubecheck.data import coolants
 from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
@@ -488,8 +490,7 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
     if plan.given is not None:
         # What the bearing has no room for went into the space beside it.
         found = fill_found(plan, fill, volume, grams_per_cm3)
-        fill, over = min(found, 1.0), max(0.0, found - 1.0) * volume
-        housing_fill = min(1.0, housing_fill + (over / room if room else 0.0))
+        fill, housing_fill = (float(share) for share in placed(found, volume, housing_fill, room))
     relief = case.housing.relief or reading.get("[housing] relief")
     interval = case.grease.interval if case.is_grease else case.oil.interval
     mass = math.nan if plan.regrease_amount is None else volume_of(plan.regrease_amount, volume, grams_per_cm3)
@@ -507,6 +508,17 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
         "level": _level(case, reading),
         "is_circulating": float(not case.is_grease and case.oil.supply == "circulating"),
     }
+
+
+def placed(found: Any, free_volume: Any, housing_fill: Any, room: Any) -> tuple[Any, Any]:
+    """Return the fills of bearing and housing: what the bearing has no room for goes into the space beside it.
+
+    found: grease there is, as a share of the bearing's free volume; floats or arrays
+    """
+    over = np.maximum(0.0, found - 1.0) * free_volume
+    with np.errstate(all="ignore"):
+        beside = np.where(np.asarray(room) > 0, np.divide(over, room), 0.0)
+    return np.minimum(found, 1.0), np.minimum(1.0, housing_fill + beside)
 
 
 def fill_found(plan: GreasePlan, before: float, free_volume: float, grams_per_cm3: float) -> float:

@@ -13,11 +13,11 @@ import numpy as np
 from lubecheck.method import method
 from lubecheck.physics.churning import PARAMETERS
 from lubecheck.physics.friction import Factor
-from lubecheck.units import Array, Cm3, Gram, JPerK, Mm, Mm2, NMm, Number, Pa, PerSecond, Rpm, Share
+from lubecheck.physics.grease_amount import STEEL_DENSITY
+from lubecheck.units import Array, Cm3, DegC, Gram, JPerK, Mm, Mm2, NMm, Number, Pa, PerSecond, Rpm, Share
 
 STEEL_HEAT = 470.0  # J/(kg*K), steel and cast iron at 20 to 100 degC: 450 to 540, handbooks, from memory
 GREASE_HEAT = 2000.0  # J/(kg*K), of grease and oil at 50 degC: 1700 to 2200, handbooks, from memory
-STEEL_DENSITY = 7.85e-3  # g/mm^3
 IRON_DENSITY = 7.2e-3  # g/mm^3, grey cast iron
 # A housing weighs its outer area times a wall. 10 mm with feet and ribs: estimate from ordinary castings, 6 to 18 mm;
 # a motor's end shield is bolted to a frame that warms with it.
@@ -26,6 +26,10 @@ SHAFT_SECTION = 4.0  # bores of shaft that warm with the inner ring: estimate, 2
 # A machine takes this long to come to the temperatures that are stated of its shaft, frame and oil, e-folding.
 # Motors of 10 to 100 kW settle in 2 to 4 h, three to four such times: common practice.
 MACHINE_TIME = Factor(0.8, 0.3, 1.5, "common-practice", "h in which a machine warms, e-folding")
+
+LOW_TORQUE = 1000.0  # N mm, and
+LOW_TORQUE_SIZE = 33.5  # mm, of the 6204 that ASTM D1478 / IP 186 starts at the lower temperature limit; from memory
+ROOM = 25.0  # degC, at which yield stress is stated
 
 FRESH = PARAMETERS["fresh grease"]
 CHANNELLING = PARAMETERS["channelling"]
@@ -71,7 +75,7 @@ def shaft_mass(bore: Mm) -> Gram:
     >>> shaft_mass("45 mm").to("kg").round(2)
     <Quantity(2.25, 'kilogram')>
     """
-    return math.pi / 4 * SHAFT_SECTION * STEEL_DENSITY * bore**3
+    return math.pi / 4 * SHAFT_SECTION * STEEL_DENSITY / 1000 * bore**3
 
 
 @method(source="own-estimate", valid={"bore": (1.0, 1e4), "outside": (1.0, 1e4), "width": (0.1, 1e4)})
@@ -88,7 +92,7 @@ def bearing_mass(*, bore: Mm, outside: Mm, width: Mm, free_volume: Cm3) -> Gram:
     <Quantity(837.0, 'gram')>
     """
     envelope = math.pi / 4 * (outside**2 - bore**2) * width
-    return np.maximum(envelope - free_volume * 1000, 0.0) * STEEL_DENSITY
+    return np.maximum(envelope / 1000 - free_volume, 0.0) * STEEL_DENSITY
 
 
 @method(source="own-estimate", valid={"revolutions": (0.0, 1e15), "channelling": (1.0, 1e12)})
@@ -131,19 +135,44 @@ def fresh_torque(torque: NMm, *, fresh: Share, factor: Number) -> NMm:
 
 
 @method(source="palacios", valid={"volume": (0.0, 1e9), "yield_stress": (0.0, 1e6)})
-def breakaway_torque(volume: Cm3, *, rate: PerSecond, speed: Rpm, yield_stress: Pa) -> NMm:
-    """Torque that makes grease at rest yield: V tau_y (rate / omega).
+def yield_torque(volume: Cm3, *, rate: PerSecond, speed: Rpm, yield_stress: Pa) -> NMm:
+    """Torque that makes grease at rest yield at room temperature: V tau_y (rate / omega).
 
-    The shear of `churning.shear_rate` over the turning it comes with, at vanishing speed. An estimate: grease that was
-    cold for long is stiffer, up to about twice.
+    The shear of `churning.shear_rate` over the turning it comes with, at vanishing speed.
 
     volume [cm^3]: grease between the rings, any shape
     rate [1/s]: shear rate at the speed, broadcasts
     speed [rpm]: speed that the rate is for, broadcasts
-    yield_stress [Pa]: yield stress at the temperature, broadcasts
+    yield_stress [Pa]: yield stress at 25 degC, broadcasts
     returns [N*mm]
 
-    >>> breakaway_torque("16 cm^3", rate="584 1/s", speed="1480 rpm", yield_stress="400 Pa").round(1)
+    >>> yield_torque("16 cm^3", rate="584 1/s", speed="1480 rpm", yield_stress="400 Pa").round(1)
     <Quantity(24.1, 'newton * millimeter')>
     """
     return volume * 1e-6 * yield_stress * rate / (speed * (math.pi / 30)) * 1000
+
+
+@method(source="astm-d1478", valid={"temperature": (-80.0, 100.0), "lowest": (-100.0, 20.0)})
+def breakaway_torque(*, temperature: DegC, lowest: DegC, pitch_diameter: Mm, at_room: NMm) -> NMm:
+    """Most torque that a grease at rest may take to break away in the cold, of one that just meets its lower limit.
+
+    The lower temperature limit of a grease is where a 6204 bearing, 33.5 mm mean diameter, starts with at most
+    1000 N mm (from memory); another size takes it by the cube of its mean diameter. Between that and the torque at
+    25 degC the logarithm runs straight. Greases in use mostly stay below, by up to a third: an upper bound.
+
+    temperature [degC]: of the start, any shape; above 25 degC the torque at 25 degC holds
+    lowest [degC]: lower temperature limit of the grease, broadcasts
+    pitch_diameter [mm]: mean diameter dm, broadcasts
+    at_room [N*mm]: torque at 25 degC, broadcasts; `yield_torque`
+    returns [N*mm]
+
+    >>> breakaway_torque(
+    ...     temperature="-30 degC", lowest="-30 degC", pitch_diameter="33.5 mm", at_room="10 N*mm"
+    ... ).round(0)
+    <Quantity(1000.0, 'newton * millimeter')>
+    """
+    least = np.maximum(at_room, 1e-9)
+    most = np.maximum(LOW_TORQUE * (pitch_diameter / LOW_TORQUE_SIZE) ** 3, least)
+    share = np.maximum(ROOM - temperature, 0.0) / (ROOM - lowest)
+    torque: Array = least * np.exp(np.log(most / least) * share)
+    return torque

@@ -15,19 +15,25 @@ import numpy as np
 
 from lubecheck.data import air
 from lubecheck.model import check as checking
-from lubecheck.model.balance import balance_of
+from lubecheck.model.balance import USUAL_STILL, balance_of
 from lubecheck.model.check import Triple, Variants
 from lubecheck.model.entries import Case
+from lubecheck.model.entry import Amount
 from lubecheck.model.equilibrium import Air, Equilibrium, solve
-from lubecheck.model.points import Points, join
-from lubecheck.model.rows import given_volume
+from lubecheck.model.points import Flags, Points, join
+from lubecheck.model.rows import given_volume, placed
 from lubecheck.model.transient import Course, History, follow
 from lubecheck.physics import churning, warm_up
 from lubecheck.units import Array
 
-USUAL_STILL = 11.0  # W/(m^2*K): makes an area of a conductance where only that is known
 FIRST_START, START, AFTER_GREASING, COLD_START = "first start", "start", "after greasing", "cold start"
 COURSES = (FIRST_START, START, AFTER_GREASING, COLD_START)
+MEANINGS = {
+    FIRST_START: "the first fill is fresh and churns until it has found its place; the machine starts cold",
+    START: "a start from the ambient, the lubricant run in; the machine starts cold",
+    AFTER_GREASING: "one regreasing of a position that runs steadily",
+    COLD_START: "a start from the coldest temperature that is stated, in air that stays so cold",
+}
 
 # What is uncertain about the way and not about its ends: a field of Course, its low and high end over the nominal.
 _OWN = (
@@ -50,6 +56,8 @@ class Run:
     points: Points
     history: History
     ends: Sequence[int]  # rows at an end of an uncertain input, low and high in turn
+    dose: float  # g of one regreasing, planned or proposed
+    is_too_hot: Flags  # rows in which there is no state below the top of the search
 
     @property
     def known(self) -> Array:
@@ -89,6 +97,8 @@ def runs_of(
         ways[COLD_START] = _start(checking.variants_of(cold, air_properties, at_ends=True), cold, is_fresh=False)
     spread = {name: _with_own_ends(case, way) for name, way in ways.items()}
     history = follow(_together(list(spread.values())), air_properties)
+    planned, proposed = variants.outcome.points.regrease_mass[0], variants.outcome.proposed_regrease[0]
+    dose = float(proposed if np.isnan(planned) else planned)
     runs, first = {}, 0
     for name, way in spread.items():
         rows = slice(first, first + len(way.points))
@@ -96,14 +106,15 @@ def runs_of(
         before_own = len(ways[name].points)
         inputs = range(2 + len(variants.facts), before_own)
         ends = [*inputs, *range(before_own, len(way.points))]
-        runs[name] = Run(name, way.points, _only_found(part, way.points, air_properties), ends)
+        end = solve(way.points, air_properties)
+        runs[name] = Run(name, way.points, _only_found(part, end), ends, dose, end.is_too_hot)
         first = rows.stop
     return runs
 
 
-def _only_found(history: History, points: Points, air_properties: Air) -> History:
+def _only_found(history: History, end: Equilibrium) -> History:
     """Return a history in which rows that have no equilibrium to go to are not numbers."""
-    lost = np.where(solve(points, air_properties).is_found, 1.0, np.nan)
+    lost = np.where(end.is_found, 1.0, np.nan)
     return History(history.time, *(getattr(history, name) * lost for name in ("inner", "lubricant", "outer", "torque")))
 
 
@@ -167,16 +178,21 @@ def _regreased(variants: Variants, case: Case, air_properties: Air) -> Course:
     points, _ = _rows(variants)
     per_cm3 = points.density / 1000
     if case.grease.given is not None:
-        grams = given_volume(case.grease, float(points.free_volume[0]), float(per_cm3[0]))
-        dose = np.full(len(points), grams)
-        before = np.maximum(points.fill - dose / points.free_volume, 0.0)
+        volume = given_volume(case.grease, float(points.free_volume[0]), float(per_cm3[0]))
+        dose = np.full(len(points), volume)
+        nothing = dataclasses.replace(case.grease, given=Amount(0.0, "mass", "g"))
+        earlier = checking.variants_of(dataclasses.replace(case, grease=nothing), air_properties, at_ends=True)
+        before, _ = _rows(earlier)
         after = points
     else:
         planned = np.where(np.isnan(points.regrease_mass), variants.outcome.proposed_regrease[0], points.regrease_mass)
         dose = planned / per_cm3
-        before = points.fill
-        after = points.changed(fill=np.minimum(1.0, points.fill + dose / points.free_volume))
-    steady = solve(points.changed(fill=before), air_properties)
+        before = points
+        fill, beside = placed(
+            points.fill + dose / points.free_volume, points.free_volume, points.housing_fill, points.void
+        )
+        after = points.changed(fill=fill, housing_fill=beside)
+    steady = solve(before, air_properties)
     later = solve(after, air_properties)
     most = (1.0 - churning.CLEAR_SHARE) * points.free_volume
     clearing = np.maximum(np.minimum(steady.held_volume + dose, most) - later.held_volume, 0.0)
@@ -225,13 +241,13 @@ def _together(ways: Sequence[Course]) -> Course:
 
 
 def _in_the_cold(case: Case) -> Case | None:
-    """Return the case in its coldest air, where that is stated and colder than the usual."""
+    """Return the case in the coldest air that it says of a start; none where that is not said."""
     around = case.surroundings
-    if around.coldest is None or around.coldest >= around.ambient:
+    if around.coldest is None:
         return None
-    cold = dataclasses.replace(
-        around, ambient=around.coldest, months=None, ambient_lowest=None, ambient_highest=None
-    )  # fmt: skip
+    said = [around.ambient, around.ambient_lowest, *(around.months or ()), *(duty.ambient for duty in case.duty)]
+    coldest = min(around.coldest, *(one for one in said if one is not None))
+    cold = dataclasses.replace(around, ambient=coldest, months=None, ambient_lowest=None, ambient_highest=None)
     return dataclasses.replace(
         case, surroundings=cold, duty=tuple(dataclasses.replace(duty, ambient=None) for duty in case.duty)
     )
@@ -243,7 +259,8 @@ def _band(figure: Array, ends: Sequence[int]) -> Triple:
     ends: where the figure stands with an input at its low and at its high end, in turn
     """
     value = figure[0]
-    change = figure[list(ends)].reshape(-1, 2) - value
+    with np.errstate(invalid="ignore"):  # what is without end has no band
+        change = figure[list(ends)].reshape(-1, 2) - value
     up = np.maximum(change.max(axis=1, initial=0.0), 0.0)
     down = np.minimum(change.min(axis=1, initial=0.0), 0.0)
     low = value - np.sqrt((down**2).sum())

@@ -65,9 +65,7 @@ def check(
     if warm_up or case.grease.given is not None:
         from lubecheck.studies import warmup  # here, as few ask for it
 
-        if case.grease.given is not None:
-            said = warmup.waiting(case, result, air_properties=air_properties)
-            result = dataclasses.replace(result, notes=(*result.notes, said) if said else result.notes)
+        result = warmup.waited(case, result, air_properties=air_properties)
         if warm_up:
             result = warmup.judged(case, result, air_properties=air_properties)
     return result

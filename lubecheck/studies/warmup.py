@@ -7,7 +7,9 @@ start takes.
 from __future__ import annotations
 
 import dataclasses
-from collections.abc import Callable, Iterator, Mapping
+import math
+from collections.abc import Iterator, Mapping
+from datetime import date, timedelta
 
 import numpy as np
 
@@ -15,27 +17,34 @@ from lubecheck.data import air
 from lubecheck.model import wording
 from lubecheck.model.check import governing
 from lubecheck.model.entries import Case
+from lubecheck.model.entry import Amount
 from lubecheck.model.equilibrium import Air
-from lubecheck.model.glance import state_of_readings
-from lubecheck.model.limits import BEYOND, STATES, UNKNOWN
-from lubecheck.model.result import ColdTorque, Course, CourseFigures, Crossing, Limit, Result, WarmUp
+from lubecheck.model.limits import BEYOND, NEAR_CODE, STATES, UNKNOWN
+from lubecheck.model.result import (
+    Course,
+    CourseFigures,
+    Crossing,
+    Limit,
+    LimitAfter,
+    Remedy,
+    Result,
+    WarmUp,
+)
 from lubecheck.model.rows import seasons
-from lubecheck.physics import churning, viscosity, warm_up
+from lubecheck.physics import warm_up
 from lubecheck.studies.calibrate import calibrated
-from lubecheck.studies.courses import AFTER_GREASING, COLD_START, FIRST_START, START, Run, runs_of
+from lubecheck.studies.changes import Change, apply
+from lubecheck.studies.courses import AFTER_GREASING, MEANINGS, Run, runs_of
+from lubecheck.studies.warmup_limits import cold_run, cold_torque, finite, limits_of, state_of, use_of
 from lubecheck.units import Array
 
 SETTLED = 1.0  # K: so close to the end counts as steady
 KEPT = 0.05  # K: a curve is kept up to where it stays so close to its end
 SAMPLES = 60  # points of a curve that are kept
 FIELD_HOURS = 24.0  # until a greased bearing is back: field notes of 2016
+DOSE_SHARES = (0.75, 0.5, 0.35, 0.25, 0.15)
+_FAILING = (STATES[NEAR_CODE], STATES[BEYOND])
 CONCERN = 28.0  # K of rise after greasing: field notes of 2016
-MEANINGS = {
-    FIRST_START: "the first fill is fresh and churns until it has found its place; the machine starts cold",
-    START: "a start from the ambient, the lubricant run in; the machine starts cold",
-    AFTER_GREASING: "one regreasing of a position that runs steadily",
-    COLD_START: "a start from the coldest temperature that is stated, in air that stays so cold",
-}
 
 
 def judged(case: Case, result: Result, *, air_properties: Air = air.properties) -> Result:
@@ -46,18 +55,76 @@ def judged(case: Case, result: Result, *, air_properties: Air = air.properties) 
     """
     case = calibrated(case, air_properties=air_properties)
     runs = runs_of(case, air_properties)
-    new = {limit.name: limit for limit in _limits(case, runs)}
-    limits = tuple(new.pop(limit.name, limit) for limit in result.limits) + tuple(new.values())
-    verdict = max((limit.state for limit in limits), key=STATES.index)
-    cold = _cold_run(case, runs)
+    new = {limit.name: limit for limit in limits_of(case, result.limits, runs)}
+    is_short = any(limit.state in _FAILING for limit in new.values())
+    remedies = tuple(_remedy_on_the_way(case, remedy, new, air_properties) for remedy in result.remedies)
+    cold = cold_run(runs)
     found = WarmUp(
         courses=tuple(_course(case, run) for run in runs.values()),
-        cold=None if cold is None else _cold_torque(case, cold),
-        notes=tuple(_notes(case, runs)),
+        cold=None if cold is None else cold_torque(case, cold),
+        notes=(*_notes(case, runs), *(_smaller_dose(case, runs, air_properties) if is_short else ())),
     )
+    limits = tuple(new.pop(limit.name, limit) for limit in result.limits) + tuple(new.values())
+    verdict = max((limit.state for limit in limits), key=STATES.index)
     return dataclasses.replace(
-        result, limits=limits, verdict=verdict, governing=governing(limits, verdict), warm_up=found
+        result,
+        limits=limits,
+        verdict=verdict,
+        governing=governing(limits, verdict),
+        warm_up=found,
+        remedies=tuple(sorted(remedies, key=lambda remedy: STATES.index(remedy.verdict_after)))
+        if is_short
+        else remedies,
     )
+
+
+def _remedy_on_the_way(case: Case, remedy: Remedy, before: Mapping[str, Limit], air_properties: Air) -> Remedy:
+    """Return a remedy of the steady state with what it does to the limits of the way there."""
+    changed = apply(case, Change(remedy.change, "", remedy.effort, remedy.edits))
+    after = {limit.name: limit for limit in limits_of(changed, (), runs_of(changed, air_properties))}
+    limits = [limit for limit in remedy.limits if limit.name not in after]
+    limits += [LimitAfter(name, before[name].state, before[name].use, limit.state, limit.use)
+               for name, limit in after.items() if name in before]  # fmt: skip
+    verdict = max((remedy.verdict_after, *(limit.state for limit in after.values())), key=STATES.index)
+    open_still = [f"{name.replace('_', ' ')} {limit.state} on the way"
+                  for name, limit in after.items() if limit.state in _FAILING]  # fmt: skip
+    note = wording.join(remedy.note, *open_still)
+    return dataclasses.replace(remedy, verdict_after=verdict, note=note, limits=tuple(limits))
+
+
+def _smaller_dose(case: Case, runs: Mapping[str, Run], air_properties: Air) -> Iterator[str]:
+    """Say which part of the dose, a day apart from the next, stays within on the way; nothing where none does."""
+    run = runs.get(AFTER_GREASING)
+    others = {name: other for name, other in runs.items() if name != AFTER_GREASING}
+    if (
+        run is None
+        or case.grease.given is not None
+        or _is_short(case, others)
+        or not _is_short(case, {AFTER_GREASING: run})
+    ):
+        return
+    for share in DOSE_SHARES:
+        grams = share * run.dose
+        part = dataclasses.replace(case.grease, regrease_amount=Amount(grams, "mass", "g"))
+        less = dataclasses.replace(case, grease=part)
+        if not _is_short(less, runs_of(less, air_properties, wanted=(AFTER_GREASING,))):
+            yield (
+                f"after greasing: {grams:.1f} g at a time, a day of running apart, stay within on the way; "
+                f"{run.dose:.1f} g at once do not"
+            )
+            return
+
+
+def _is_short(case: Case, runs: Mapping[str, Run]) -> bool:
+    return bool(runs) and any(
+        limit.state in _FAILING for limit in limits_of(case, (), runs) if limit.name != "start_torque"
+    )
+
+
+def waited(case: Case, result: Result, *, air_properties: Air = air.properties) -> Result:
+    """Return a result of a case that says what was given, with how long to wait for it among the notes."""
+    said = waiting(case, result, air_properties=air_properties) if case.grease.given is not None else ""
+    return dataclasses.replace(result, notes=(*result.notes, said)) if said else result
 
 
 def waiting(case: Case, result: Result, *, air_properties: Air = air.properties) -> str:
@@ -72,10 +139,18 @@ def waiting(case: Case, result: Result, *, air_properties: Air = air.properties)
     peak, low, high = run.band(run.peaks)
     by_field = "" if shortest <= FIELD_HOURS <= longest else f"; field notes say about {FIELD_HOURS:.0f} h"
     way = ", once the relief is open" if opens else ""
+    per_day = float(run.points.hours_per_day[0])
+    until = ""
+    if case.grease.given_on is not None:
+        days = math.ceil(hours / per_day)
+        until = (
+            f", about until {date.fromisoformat(case.grease.given_on) + timedelta(days=days)} at {per_day:g} h a day"
+        )
     return (
         f"after the fact{way}: by the warm-up the housing peaks at {peak:.0f} degC "
-        f"({low:.0f} to {high:.0f}) and is within 1 K of its steady {run.history.outer[-1, 0]:.0f} degC after "
-        f"{hours:.0f} running hours ({shortest:.0f} to {longest:.0f}){by_field}: wait so long, then judge it"
+        f"({low:.0f} to {high:.0f} degC) and is within 1 K of its steady {run.history.outer[-1, 0]:.0f} degC after "
+        f"{hours:.0f} running hours ({shortest:.0f} to {longest:.0f}){until}{by_field}. Wait so long; if it is still "
+        "hotter then, it is not the fresh grease: look for what else it is"
     )
 
 
@@ -128,112 +203,13 @@ def _kept(run: Run) -> list[int]:
 
 def _crossing(name: str, set_point: float, run: Run) -> Crossing:
     over = np.flatnonzero(run.history.outer[:, 0] >= set_point)
-    uses = _use(run, run.peaks, set_point)
-    use, low, high = (_finite(value) for value in run.band(uses))
-    at = float(run.history.time[over[0], 0]) if len(over) else None
-    return Crossing(name, set_point, STATES[_state(uses)], at, use, low, high)
-
-
-def _use(run: Run, peak: Array, top: Array | float) -> Array:
-    """Return the rise over the ambient as a share of what a top temperature leaves: the use of a temperature limit.
-
-    Beside a measured temperature that nothing explains it is not known, unless it is beyond.
-    """
-    room = top - run.ambient
-    use: Array = np.where(room > 0, (peak - run.ambient) / room, np.inf)
-    is_doubted = (run.points.is_doubted > 0) & ~(use > 1.0)
-    return np.where(np.isnan(peak) | np.isnan(room) | is_doubted, np.nan, use)
-
-
-def _state(use: Array) -> int:
-    """Return the state of a use that stands for the usual reading first and the worst one next."""
-    return int(state_of_readings(use[:1], use[1:2])[0])
-
-
-def _limits(case: Case, runs: Mapping[str, Run]) -> Iterator[Limit]:
-    yield _hottest("peak_temperature", "common-practice", runs, lambda run: (run.bearing_peaks, run.points.highest))
-    if not np.isnan(next(iter(runs.values())).points.set_point[0]):
-        yield _hottest("set_point", "user", runs, lambda run: (run.peaks, run.points.set_point))
-    if case.limits.start_torque is not None:
-        yield _torque(case.limits.start_torque, _cold_run(case, runs))
-
-
-def _hottest(name: str, basis: str, runs: Mapping[str, Run], of: Callable[[Run], tuple[Array, Array]]) -> Limit:
-    """Judge the peak of the course that comes nearest to what is allowed, or past it."""
-    uses = {key: _use(run, *of(run)) for key, run in runs.items()}
-    worst = max(runs, key=lambda key: (_state(uses[key]), float(np.nan_to_num(uses[key][0], nan=-1.0))))
-    run, use, state = runs[worst], uses[worst], _state(uses[worst])
-    peak, top = of(run)
-    _, low, high = run.band(use)
-    return Limit(
-        name=name,
-        state=STATES[state],
-        use=_finite(use[0]),
-        demand=_finite(peak[0]),
-        allowed=_finite(top[0]),
-        unit="degC",
-        basis=basis,
-        note=wording.join(
-            "hangs on what was not said" if state == UNKNOWN and np.isfinite(use[0]) else "",
-            "could not be followed" if np.isnan(use[0]) else f"{worst}: {MEANINGS[worst]}",
-            wording.band(low, high),
-        ),
-        use_low=_finite(low),
-        use_high=_finite(high),
-    )
-
-
-def _cold_run(case: Case, runs: Mapping[str, Run]) -> Run | None:
-    """Return the start in the cold; without a coldest temperature there is none that could be judged."""
-    return None if case.surroundings.coldest is None else runs.get(COLD_START, runs[START])
-
-
-def _breakaway(run: Run) -> Array:
-    """Torque at which grease at rest yields, in every row; 0 for oil."""
-    p = run.points
-    volume = np.minimum(np.nan_to_num(p.fill), churning.CLEAR_SHARE) * p.free_volume * (p.is_grease > 0)
-    return warm_up.breakaway_torque.plain(
-        volume,
-        rate=churning.shear_rate.plain(p.speed, bore=p.bore, outside=p.outside),
-        speed=p.speed,
-        yield_stress=p.yield_stress * churning.softening.plain(run.ambient),
-    )
-
-
-def _cold_torque(case: Case, run: Run) -> ColdTorque:
-    p = run.points
-    made: ColdTorque = ColdTorque.of(
-        {
-            "temperature": float(run.ambient[0]),
-            "viscosity": float(
-                viscosity.viscosity_from_constants.plain(run.ambient[0], a=p.walther_a[0], b=p.walther_b[0])
-            ),
-            "running": run.band(run.history.torque[0]),
-            "breakaway": float(_breakaway(run)[0]) if case.is_grease else None,
-            "drive": case.limits.start_torque,
-        }
-    )
-    return made
-
-
-def _torque(drive: float, run: Run | None) -> Limit:
-    """Judge the torque of a cold start against what the drive has for this bearing."""
-    demand = None if run is None else np.maximum(run.history.torque[0], _breakaway(run))
-    use = None if demand is None else demand / drive
-    note = "[surroundings] coldest is not said" if run is None else "at running speed, before anything has warmed"
-    band = (None, None) if run is None or use is None else tuple(_finite(end) for end in run.band(use)[1:])
-    return Limit(
-        name="start_torque",
-        state=STATES[UNKNOWN if use is None else _state(use)],
-        use=None if use is None else _finite(use[0]),
-        demand=None if demand is None else _finite(demand[0]),
-        allowed=drive,
-        unit="N*mm",
-        basis="palmgren",
-        note=note,
-        use_low=band[0],
-        use_high=band[1],
-    )
+    uses = use_of(run, run.peaks, set_point)
+    use, low, high = (finite(value) for value in run.band(uses))
+    time = run.history.time[:, 0]
+    at = float(time[over[0]]) if len(over) else None
+    # Over it at the end: for good.
+    lasts = float(time[over[-1] + 1] - time[over[0]]) if len(over) and over[-1] + 1 < len(time) else None
+    return Crossing(name, set_point, STATES[state_of(uses)], at, lasts, use, low, high)
 
 
 def _notes(case: Case, runs: Mapping[str, Run]) -> Iterator[str]:
@@ -256,11 +232,7 @@ def _notes(case: Case, runs: Mapping[str, Run]) -> Iterator[str]:
         f"in {turns.nominal:.0f} revolutions ({turns.low:.0f} to {turns.high:.0f}); "
     )
     yield (
-        f"estimates of the way: {grease if case.is_grease else ''}a wall of {wall.nominal:g} mm ({wall.low:g} to "
-        f"{wall.high:g}) where the housing's mass is not stated; a machine that warms in {machine.nominal:g} h "
+        f"estimates of the way: {grease if case.is_grease else ''}a wall of {wall.low:g} to {wall.high:g} mm, usually "
+        f"{wall.nominal:g} mm, where the housing's mass is not stated; a machine that warms in {machine.nominal:g} h "
         f"({machine.low:g} to {machine.high:g}), e-folding"
     )
-
-
-def _finite(value: float | None) -> float | None:
-    return None if value is None or not np.isfinite(value) else float(value)

@@ -88,3 +88,8 @@ def test_a_workbook_writer_is_loaded_only_when_a_workbook_is_asked_for():
     roots = {name.partition(".")[0] for name in done.stderr.split()}
     assert "lubecheck" in roots
     assert not roots & {"openpyxl", "icalendar", "CoolProp", "scipy", "pint", "pandas"}
+
+
+def test_what_was_given_is_told_with_how_long_to_wait():
+    done = run("plan", "examples/regreased_fan.toml", "--from", "2026-12-01")
+    assert "by the warm-up" in " ".join(done.stdout.split())
