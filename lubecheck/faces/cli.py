@@ -88,13 +88,13 @@ def check(
         bool, typer.Option("--warmup", help="Follow starts, regreasing and a cold start too, and judge their peaks.")
     ] = False,
     hold: Annotated[
-        str,
+        str | None,
         typer.Option(
             metavar="TEMPERATURE",
             help="Tell what draught, housing area, oil flow or fill alone holds a temperature such as '70 degC', or "
             "'limit' for the highest that the case allows. Told unasked where heat brings a limit near or beyond.",
         ),
-    ] = "",
+    ] = None,
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
@@ -105,7 +105,7 @@ def check(
         load_case(case, own=own_lubricants(lubricants)),
         warm_up=warmup,
         air_properties=air.exact if exact_fluids else air.properties,
-        hold=read_hold(hold) if hold else None,
+        hold=None if hold is None else read_hold(hold),
     )
     if json:
         from lubecheck.faces.record import to_json
@@ -132,7 +132,11 @@ def plan(
         datetime | None, typer.Option("--from", formats=["%Y-%m-%d"], help="Day the plan begins; today if not given.")
     ] = None,
     route: Annotated[
-        Route | None, typer.Option(help="Fit intervals to the rhythm of a route: rounded down, never up.")
+        Route | None,
+        typer.Option(
+            help="Fit intervals to the rhythm of a route, rounded down, never up: weekly is 7 days, monthly 28, "
+            "quarterly 91, so that each round falls on the same weekday."
+        ),
     ] = None,
     stagger: Annotated[bool, typer.Option("--stagger", help="Spread first due dates, by moving some earlier.")] = False,
     units: UnitsOption = Units.SI,

@@ -23,6 +23,9 @@ from lubecheck.model.schedule import PlanRow
 
 SCHEMA = "lubecheck/plan/1"
 COLUMNS = tuple(field.name for field in dataclasses.fields(PlanRow))
+GRAMS = tuple(
+    name for name in COLUMNS if name.endswith(("_g", "_g_per_year")) and name != "stroke_g"
+)  # to 0.1 g in files; a stroke was weighed finer
 _FORMULA_MARKS = ("=", "+", "-", "@", "\t", "\r")  # a text that begins so would be run by a spreadsheet
 _BY_NAME = ".csv, .xlsx, .ics or .md"
 
@@ -58,14 +61,14 @@ def maker(path: Path) -> Callable[[Sequence[PlanRow], Path, datetime.date], None
     return lambda rows, to, start: write_whole(to, found(rows, start))
 
 
-def _plain(value: Any) -> Any:
-    """Return a value as a cell: numbers and dates as they are, texts joined and safe for a spreadsheet."""
+def _plain(value: Any, name: str = "") -> Any:
+    """Return a value as a cell: grams as they are weighed, dates as they are, texts joined and safe for a spreadsheet."""
     if isinstance(value, tuple):
         value = "\n".join(value)
     if isinstance(value, str):
         value = "".join(c if c.isprintable() or c == "\n" else " " for c in value.replace("\r\n", "\n"))
         return f"'{value}" if value.startswith(_FORMULA_MARKS) else value
-    return round(value, 4) if isinstance(value, float) else value
+    return round(value, 1 if name in GRAMS else 4) if isinstance(value, float) else value
 
 
 def to_csv(rows: Sequence[PlanRow], start: datetime.date | None = None) -> bytes:
@@ -74,7 +77,7 @@ def to_csv(rows: Sequence[PlanRow], start: datetime.date | None = None) -> bytes
     writer = csv.writer(text)
     writer.writerow(COLUMNS)
     for row in rows:
-        writer.writerow(["" if (cell := _plain(getattr(row, name))) is None else cell for name in COLUMNS])
+        writer.writerow(["" if (cell := _plain(getattr(row, name), name)) is None else cell for name in COLUMNS])
     return text.getvalue().encode("utf-8")
 
 
@@ -92,7 +95,7 @@ def to_xlsx(rows: Sequence[PlanRow], start: datetime.date) -> bytes:
         cell.font = Font(bold=True)
         cell.alignment = Alignment(wrap_text=True, vertical="top")
     for row in rows:
-        sheet.append([_plain(getattr(row, name)) for name in COLUMNS])
+        sheet.append([_plain(getattr(row, name), name) for name in COLUMNS])
         for cell in sheet[sheet.max_row]:
             cell.alignment = Alignment(wrap_text=True, vertical="top")
             if isinstance(cell.value, datetime.date):

@@ -237,7 +237,8 @@ def _plan(result: Result, console: Console, system: str) -> None:
     console.print(Text("\nFor the maintenance plan", style="bold"))
     if result.verdict in ("beyond", "unknown"):
         open_limits = [_words(limit.name) for limit in result.limits if limit.state == result.verdict]
-        console.print(Text(f"  Only once this is settled: {', '.join(open_limits)}", style=STYLES[result.verdict]))
+        settled = Text(f"Only once this is settled: {', '.join(open_limits)}", style=STYLES[result.verdict])
+        console.print(Padding(settled, (0, 0, 0, 2)))
     console.print(
         Padding(
             Text((" | " if is_plain(console) else " · ").join(plan_parts(plan, system)), style="bold"), (0, 0, 0, 2)
@@ -258,6 +259,8 @@ def plan_parts(plan: PlanLine, system: str) -> list[str]:
     if plan.first_fill_g is not None:
         strokes = _strokes(plan.first_fill_strokes, plan.stroke_g, system)
         parts.append(f"first fill {figure(plan.first_fill_g, 'g', system)}{strokes}{proposed['fill']}")
+        if plan.housing_fill_g is not None:
+            parts.append(f"into the housing {figure(plan.housing_fill_g, 'g', system)}")
     if plan.regrease_g is not None:
         strokes = _strokes(plan.regrease_strokes, plan.stroke_g, system)
         parts.append(f"regrease with {figure(plan.regrease_g, 'g', system)}{strokes}{proposed['regrease_amount']}")

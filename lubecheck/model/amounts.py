@@ -6,7 +6,9 @@ import math
 
 import numpy as np
 
+from lubecheck.model import limits
 from lubecheck.model.entries import Case
+from lubecheck.model.entry import Amount
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.result import Amounts, PlanLine
 from lubecheck.model.rows import REGREASE_RULES, volume_of
@@ -44,9 +46,30 @@ def housing_fill(case: Case, outcome: Outcome) -> Triple | tuple[None, None, Non
         )
     )
     # A fill that is beyond is not repeated on the plan, neither in the bearing nor beside it.
-    planned = case.grease.housing_fill if outcome.judged["fill"].use[0] <= 1 else None
+    planned = case.grease.housing_fill if first_fill_use(case, outcome) <= 1 else None
     nominal = nominal if planned is None else planned
     return min(low, nominal) * full, nominal * full, max(high, nominal) * full
+
+
+def stated_fill(case: Case, outcome: Outcome) -> float:
+    """Return the fill that a case states, as a share of the free volume, without what was given on top; else NaN."""
+    stated, points = case.grease.fill, outcome.points
+    if not isinstance(stated, Amount):
+        return math.nan
+    volume = float(points.free_volume[0])
+    return volume_of(stated, volume, float(points.density[0]) / 1000) / volume
+
+
+def first_fill_use(case: Case, outcome: Outcome) -> float:
+    """Return the use of the fill limit at the fill a position begins with: what was given later is no plan."""
+    if case.grease.given is None or isinstance(case.grease.fill, str):
+        return float(outcome.judged["fill"].use[0])
+    points = outcome.points.take(slice(0, int(np.count_nonzero(outcome.points.case == 0))))
+    begun, beside = stated_fill(case, outcome), case.grease.housing_fill
+    begun = float(points.proposed_fill[0]) if math.isnan(begun) else begun
+    beside = tuple(grease_amount.HOUSING_FILL.values())[lies(case)][1] if beside is None else beside
+    first = points.changed(fill=begun, housing_fill=beside)
+    return float(limits.reduce(first, limits.fill(first)).use[0])
 
 
 def purge_run(case: Case) -> Triple:

@@ -4,10 +4,19 @@ from __future__ import annotations
 
 import math
 
-from lubecheck.model.amounts import CONTINUOUS_BELOW_DAYS, feed, housing_fill, purge_run, run_words
+from lubecheck.model.amounts import (
+    CONTINUOUS_BELOW_DAYS,
+    feed,
+    first_fill_use,
+    housing_fill,
+    purge_run,
+    run_words,
+    stated_fill,
+)
 from lubecheck.model.entries import Case
 from lubecheck.model.kernel import Outcome
 from lubecheck.model.limits import room_for_grease
+from lubecheck.model.plan_entries import STREAMS
 from lubecheck.model.result import PlanLine
 from lubecheck.model.rows import volume_of
 from lubecheck.units import YEAR_H
@@ -59,9 +68,8 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
     hours_per_day = float(points.hours_per_day[0])
     proposed = []
 
-    def chosen(limit: str, planned: float, proposal: float) -> float | None:
-        judged = outcome.judged[limit]
-        if math.isnan(planned) or judged.use[0] > 1:
+    def chosen(limit: str, planned: float, proposal: float, use: float) -> float | None:
+        if math.isnan(planned) or use > 1:
             proposed.append(limit)
             return _finite(proposal)
         return _finite(planned)
@@ -70,15 +78,17 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
     if case.is_grease:
         density = float(points.density[0]) / 1000
         grams = points.free_volume[0] * density
-        stated = math.nan if case.grease.fill is None or isinstance(case.grease.fill, str) else points.fill[0]
-        fill = chosen("fill", stated * grams, points.proposed_fill[0] * grams)
-        regrease = chosen("regrease_amount", points.regrease_mass[0], outcome.proposed_regrease[0])
+        first = first_fill_use(case, outcome)
+        fill = chosen("fill", stated_fill(case, outcome) * grams, points.proposed_fill[0] * grams, first)
+        dose_use = outcome.judged["regrease_amount"].use[0]
+        regrease = chosen("regrease_amount", points.regrease_mass[0], outcome.proposed_regrease[0], dose_use)
         if regrease is not None and room_for_grease(points)[0] < regrease:
             regrease = None  # no dose is right until there is a way out
         if case.grease.stroke is not None:
             stroke = volume_of(case.grease.stroke, 1.0, density) * density
     if outcome.judged["interval"].applies[0]:
-        interval = chosen("interval", points.interval[0], outcome.proposed_interval[0])
+        allowed_use = outcome.judged["interval"].use[0]
+        interval = chosen("interval", points.interval[0], outcome.proposed_interval[0], allowed_use)
     feeding = None
     if regrease is not None and interval is not None and interval < CONTINUOUS_BELOW_DAYS * hours_per_day:
         feeding = feed(case)[1]
@@ -113,6 +123,14 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
 
 def _steps(case: Case, *, is_sealed: bool, feeding: float | None, has_room: bool) -> tuple[str, ...]:
     """Return what to do, in order."""
+    if not case.is_grease and case.oil.supply in STREAMS:
+        return _circuit_steps(case)
+    if not case.is_grease and case.oil.supply == "mist":
+        return (
+            "Isolate and lock out the machine; shut off the air to the mist generator",
+            "Drain and wipe out its reservoir, refill with the same oil, clean strainer and nozzles",
+            "Start the mist before the machine; check the pressure and the mist at every bearing's vent",
+        )
     if not case.is_grease:
         return (
             "Isolate and lock out the machine; let the oil cool to hand warm",
@@ -141,6 +159,19 @@ def _steps(case: Case, *, is_sealed: bool, feeding: float | None, has_room: bool
         relief,
         "Grease slowly while the shaft turns where that is safe and the site allows it, else at standstill",
         _run_in(case),
+    )
+
+
+def _circuit_steps(case: Case) -> tuple[str, ...]:
+    """Return how the oil of a circuit is changed: tank, filter, flush, then flow, return and sight glass."""
+    flow = "" if case.oil.flow is None else f" of {case.oil.flow:.3g} l/min"
+    return (
+        "Isolate and lock out the machine; stop the pump; let the oil cool to hand warm",
+        "Drain the tank and the low points of the lines, wipe the tank out, clean the strainer and put in a new filter",
+        "Fill a little of the same oil, flush through the filter until it runs clean, and drain it while it is warm",
+        "Fill the tank through a filter with the same oil to the mark of its sight glass, and vent pump and filter",
+        f"Start the pump before the machine; check the flow{flow} to the bearing, that the return runs free, and the "
+        "sight glass and the filter's pressure drop once it is warm",
     )
 
 

@@ -89,7 +89,7 @@ def _row(result: Result, start: datetime.date, round_days: int | None, route: st
     if planned is not None and planned < 1:
         notes.append("due more often than daily: use an automatic feeder or oil")
     last = None if plan.last_done is None else datetime.date.fromisoformat(plan.last_done)
-    due, said = _due(plan, interval_h, planned, last, start, round_days)
+    due, said = _due(plan, interval_h, days, last, start, round_days)
     if action == NO_ROOM:
         due, said = start, ["to be done before it runs on; the interval counts from the new filling"]
     notes += said
@@ -166,7 +166,10 @@ def _due(
     start: datetime.date,
     round_days: int | None,
 ) -> tuple[datetime.date | None, list[str]]:
-    """Return when the position is due next, the earlier of calendar and hour meter, and what is to be said of it."""
+    """Return when the position is due next, the earlier of calendar and hour meter, and what is to be said of it.
+
+    A route comes every so many days from the start: due on its last round that the position's own interval reaches.
+    """
     if days is None or days < 1 or interval_h is None:
         return None, []
     left: list[int] = []

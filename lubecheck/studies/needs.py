@@ -27,7 +27,7 @@ from lubecheck.studies.changes import Change, Edit, apply
 from lubecheck.studies.means import Means, means_of
 from lubecheck.units import Array
 
-OF_HEAT = ("temperature", "rings", "flash_point")  # heat is what decides these
+OF_HEAT = ("temperature", "rings", "flash_point", "set_point")  # heat is what decides these
 MAY_BE_OF_HEAT = ("film", "interval")
 PLACES = 17  # at which a means is looked at first
 PARTS, ROUNDS = 12, 4  # the gap is divided into parts again and again: 2e4 in all
