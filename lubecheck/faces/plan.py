@@ -62,7 +62,7 @@ def maker(path: Path) -> Callable[[Sequence[PlanRow], Path, datetime.date], None
 
 
 def _plain(value: Any, name: str = "") -> Any:
-    """Return a value as a cell: grams as they are weighed, dates as they are, texts joined and safe for a spreadsheet."""
+    """Return a value as a cell: grams as they are weighed, texts joined and safe for a spreadsheet."""
     if isinstance(value, tuple):
         value = "\n".join(value)
     if isinstance(value, str):

@@ -71,7 +71,8 @@ def _heading(result: Result, console: Console, system: str) -> None:
     style = STYLES[result.verdict]
     verdict.append(f" {result.verdict.upper()} ", style=f"bold reverse {style}".strip())
     verdict.append(f"  governed by {_words(result.governing)}, ")
-    verdict.append("which could not be judged" if governing.state == "unknown" else f"use {_use(governing)} of 1")
+    use = "past any use" if governing.use is None else f"use {_use(governing)} of 1"
+    verdict.append("which could not be judged" if governing.state == "unknown" else use)
     console.print(verdict)
     console.print(Text(_meaning(result), style="italic"))
 

@@ -211,12 +211,14 @@ def _limit(variants: Variants, name: str) -> Limit:
         doubt = wording.doubt(hinges, float(uses[1]), is_open=state != NEAR_CODE)
     doubt = calibration_words.doubt(variants.case, name) if np.isnan(uses[0]) and not doubt else doubt
     _, low, high = variants.band(uses)
+    # No interval at all is allowed where a closed bearing is planned to be regreased: what its grease lasts is a note.
+    is_never = name == "interval" and judged.allowed[0] == 0
     return Limit(
         name=name,
         state=STATES[state],
         use=_finite(uses[0]),
         demand=_finite(judged.demand[0]),
-        allowed=_finite(judged.allowed[0]),
+        allowed=None if is_never else _finite(judged.allowed[0]),
         unit=unit,
         basis=wording.basis(name, variants.case, variants.outcome) or basis,
         note=wording.join(

@@ -77,7 +77,7 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
         proposed = _proposed(p, allowed)
         wanted = np.where(is_sealed, p.life_target[p.starts], proposed)
         interval = np.where(np.isnan(planned), wanted, planned)
-        allowed = np.where(is_sealed & ~np.isnan(planned), 0.0, allowed)
+        allowed_plan = np.where(is_sealed & ~np.isnan(planned), 0.0, allowed)
         is_oil_kept = (p.is_bath[p.starts] > 0) | (p.is_circulating[p.starts] > 0)
         has_interval = is_grease | is_oil_kept | ~np.isnan(planned)
         everywhere = np.ones(p.cases, dtype=bool)
@@ -91,7 +91,7 @@ def judge(points: Points, air_properties: Air = air.properties) -> Outcome:
             "cold_start": limits.reduce(p, limits.cold_start(p)),
             "fill": limits.reduce(p, limits.fill(p)),
             "oil_level": limits.reduce(p, limits.oil_level(p)),
-            "interval": limits.of_positions(p, interval, allowed, has_interval),
+            "interval": limits.of_positions(p, interval, allowed_plan, has_interval),
             "regrease_amount": limits.reduce(p, limits.regrease(p)),
             "speed": limits.reduce(p, limits.rotational_speed(p)),
             "acceleration": limits.reduce(p, limits.acceleration(p)),

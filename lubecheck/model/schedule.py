@@ -69,7 +69,7 @@ def _row(result: Result, start: datetime.date, round_days: int | None, route: st
     interval_h, days = plan.interval_h, plan.calendar_days
     action = _action(result)
     if action == "replace the bearing":
-        interval_h = result.limit("interval").allowed
+        interval_h = next((line.hours for line in result.interval_lines if line.governs), None)
         days = calendar_days_of(interval_h, plan.hours_per_day)
         notes.append("closed bearing: the interval is the life of its grease, counted from when it was fitted")
     if interval_h is None and plan.feed_g_per_h is None:

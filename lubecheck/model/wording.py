@@ -167,9 +167,12 @@ def _interval(case: Case, outcome: Outcome, row: int) -> str:
         wet = "shortened by water" if points.water_share[0] < 1 else ""
         return join(by + ("" if case.oil.interval else ", proposed"), wet, charge_words(case, outcome))
     if points.is_sealed[0]:
-        if case.grease.interval is not None:
-            return "closed on both sides: do not regrease"
         level = percentile(float(points.grease_failed[0]))
+        if case.grease.interval is not None:
+            hours = float(outcome.allowed_interval[0])
+            lasts = f"the grease sealed in it lasts {_spaced(hours)} h ({level}): replace the bearing by then"
+            out = "closed on both sides: do not regrease, and take [grease] interval out of the case"
+            return join(out, lasts if math.isfinite(hours) else _uncounted(outcome))
         if uncounted := _uncounted(outcome):
             return join(uncounted, "closed on both sides: do not regrease")
         return f"closed on both sides: life of its grease ({level}) against the wanted life; do not regrease"
@@ -305,7 +308,8 @@ def _what_ends(case: Case, outcome: Outcome) -> str:
     lubricant = "grease" if case.is_grease else "oil"
     allowed = float(outcome.allowed_interval[0])
     if points.is_sealed[0]:
-        hours = f", good for {_spaced(allowed)} h (L10)" if math.isfinite(allowed) else ""
+        level = percentile(float(points.grease_failed[0]))
+        hours = f", good for {_spaced(allowed)} h ({level})" if math.isfinite(allowed) else ""
         return f"the {lubricant} sealed in it{hours}, or its seals"
     if math.isfinite(allowed):
         return f"the {lubricant}, if it is not renewed within {_spaced(allowed)} h; then its seals"

@@ -280,7 +280,7 @@ def _surroundings(case: Case) -> Iterator[Change]:
         circuit = setting.partition(" -/")[0] if " -/" in setting else ""
         alike = [one for one in fatigue.SETTINGS if (one.partition(" -/")[0] if " -/" in one else "") == circuit]
         for cleaner in alike[: alike.index(setting)]:
-            verb = "filter the oil" if circuit else "keep the grease, the gun and the seals cleaner"
+            verb = "keep the grease, the gun and the seals cleaner" if case.is_grease else "filter the oil"
             yield Change(f"{verb}: cleanliness {cleaner}", "cleanliness", TEST,
                          (("cleanliness.setting", cleaner),))  # fmt: skip
 

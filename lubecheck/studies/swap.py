@@ -213,7 +213,7 @@ def _sides(case: Case, new: Lubricant, meeting: Meeting, between: Path | None, *
         sides.append(Side("compatibility", _STATE_OF[meeting.state], meeting.reason, worst.source))
         if between is not None:
             uses = [("film", between.film_use), ("temperature", between.temperature_use)]
-            text = ", ".join(f"{name} {'no end' if use is None else f'{use:.2f}'} of 1" for name, use in uses)
+            text = ", ".join(f"{name} {'past any use' if use is None else f'{use:.2f} of 1'}" for name, use in uses)
             dip = "worse than before and after" if between.dips else "not worse than the worse of before and after"
             sides.append(Side("mixture", between.state, f"greatest uses on the way: {text}; {dip}", "astm-d7152"))
     if case.bearing.seal == "contact seals" and new.base_oil != case.lubricant.base_oil:
