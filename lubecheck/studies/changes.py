@@ -20,7 +20,7 @@ from lubecheck.errors import InputError
 from lubecheck.model.entries import TABLES, Case
 from lubecheck.model.entry import Amount, entries
 from lubecheck.model.glance import Glances
-from lubecheck.model.limits import BEYOND, NEAR_CODE
+from lubecheck.model.limits import BEYOND, NEAR, NEAR_CODE
 from lubecheck.model.reader import read_value
 from lubecheck.model.rows import running_hours
 from lubecheck.physics import clearance, fatigue, grease_life, oil_life
@@ -31,7 +31,7 @@ from lubecheck.units import KINDS, UnreadableText
 Edit = tuple[str, "str | Mapping[str, str] | None"]
 
 SETTING, SWAP, TEST, REBUILD, REPLACE = range(1, 6)  # effort: a setting or dose, a swap, one to test, works, a new part
-INTERVAL_SHARES = (0.75, 0.5, 0.35, 0.25, 0.15, 0.1, 0.05)
+INTERVAL_SHARES = (0.95, 0.9, 0.85, 0.8, 0.7, 0.6, 0.5, 0.35, 0.25, 0.15, 0.1, 0.05)
 DRAUGHTS = (1.0, 2.0, 3.0, 5.0)  # m/s: a vent, a fan cover taken off, a fan
 SHIELDS = (10.0, 20.0, 30.0)  # K off the shaft's temperature: flinger disc, heat shield, cooling disc; estimate
 FLOWS = (1.5, 2.0, 3.0)  # times the oil flow
@@ -41,6 +41,8 @@ STREAMS = (10.0, 30.0, 100.0)  # times the flow that wets a bearing, so that the
 LEAST_STREAM = 0.05  # l/min that a valve can still be set to: estimate
 WARM_INLET = 40.0  # degC, of oil that comes from a cooler: common practice, 40 to 50
 COOLER_MARGIN = 10.0  # K that a cooler leaves between oil and air: common practice, 8 to 15
+COIL_FLOWS = (2.0, 5.0, 10.0)  # l/min of water through a cooling coil or jacket: common practice, 2 to 10
+COIL_INLET = 30.0  # degC, of a plant's cooling water in summer: common practice, 20 to 32
 TANK_MINUTES = 10.0  # of the flow that the tank holds: common practice, 5 to 10
 # Limits that a bath fails when it is too hot.
 BATH_HEAT = ("temperature", "set_point", "rings", "flash_point", "film", "interval")
@@ -55,6 +57,8 @@ class Change:
     effort: int
     edits: tuple[Edit, ...]
     warning: str = ""
+    grade: str = ""  # what it is a step of, where it is one of several: only the mildest step that cures is offered
+    step: int = 0  # its place among them, the mildest first
 
 
 def apply(case: Case, *changes: Change) -> Case:
@@ -112,7 +116,7 @@ def possible(case: Case, before: Glances) -> list[Change]:
     """Return the single changes that make sense at a position; `before` is its outcome as it stands."""
     found = [*_surroundings(case), *_heat(case), *_lubricants(case), *_classes(case, before), *_bearings(case)]
     found += [*_grease(case, before), *_intervals(case, before)] if case.is_grease else [
-        *_oil(case), *_streams(case, before), *_intervals(case, before)]  # fmt: skip
+        *_oil(case), *_coils(case, before), *_streams(case, before), *_intervals(case, before)]  # fmt: skip
     return [change for change in found if _is_sound(case, change)]
 
 
@@ -171,9 +175,10 @@ def _grease(case: Case, before: Glances) -> Iterator[Change]:
         return
     proposed = round(float(before.outcome.points.proposed_fill[0]) * 100)
     least = round(100 * float(before.outcome.points.proposed_fill[0]) * 0.85)
-    for share in sorted({proposed, least}, reverse=True):
+    for step, share in enumerate(sorted({proposed, least}, reverse=True)):
         yield Change(f"clean the bearing and fill it anew to {share} % of its free volume, the housing to 30 %", "fill",
-                     SWAP, (("grease.fill", f"{share} %"), ("grease.housing_fill", "30 %")))  # fmt: skip
+                     SWAP, (("grease.fill", f"{share} %"), ("grease.housing_fill", "30 %")), grade="fill",
+                     step=step)  # fmt: skip
     if case.housing.relief != "open":
         yield Change("open a way out for surplus grease (relief or drain plug)", "relief", SETTING,
                      (("housing.relief", "open"),))  # fmt: skip
@@ -199,6 +204,8 @@ def _intervals(case: Case, before: Glances) -> Iterator[Change]:
         return
     wanted = {share * now for share in INTERVAL_SHARES}
     wanted |= {float(hours) for hours in outcome.proposed_interval[:2] if 0 < hours < now}
+    # The longest that is within, at the usual reading of what was not said and at its worst.
+    wanted |= {NEAR * float(hours) for hours in outcome.allowed_interval[:2] if 0 < NEAR * hours < now}
     texts: dict[str, None] = {}
     for hours in sorted(wanted, reverse=True):
         weeks = math.floor(hours / (7 * per_day) + 1e-9)
@@ -206,8 +213,13 @@ def _intervals(case: Case, before: Glances) -> Iterator[Change]:
         if hours >= 1 and running_hours(_amount(table, text), per_day) < now:
             texts[text] = None
     verb = "regrease" if case.is_grease else "change the oil"
-    for text in texts:
-        yield Change(f"{verb} every {text}", "interval", SETTING, ((f"{table}.interval", text),))
+    for step, text in enumerate(texts):
+        yield Change(f"{verb} every {_plural(text)}", "interval", SETTING, ((f"{table}.interval", text),),
+                     grade="interval", step=step)  # fmt: skip
+
+
+def _plural(time: str) -> str:
+    return f"{time}s" if time.endswith("week") and not time.startswith("1 ") else time
 
 
 def _amount(table: str, text: str) -> Amount:
@@ -221,14 +233,16 @@ def _oil(case: Case) -> Iterator[Change]:
         yield Change("set the oil level to the middle of the lowest element at rest", "supply", SETTING,
                      (("oil.level", "0 mm"),))  # fmt: skip
     if oil.flow is not None and oil.supply == "circulating":
-        for times in FLOWS:
+        for step, times in enumerate(FLOWS):
             flow = f"{oil.flow * times:.4g} {_unit('oil', 'flow')}"
-            yield Change(f"oil flow {flow} ({times:g} times)", "flow", REBUILD, (("oil.flow", flow),))
+            yield Change(f"oil flow {flow} ({times:g} times)", "flow", REBUILD, (("oil.flow", flow),), grade="flow",
+                         step=step)  # fmt: skip
     if oil.inlet is not None and oil.supply == "circulating":
-        for less in COOLED:
+        for step, less in enumerate(COOLED):
             if oil.inlet - less > case.surroundings.ambient:
                 inlet = f"{oil.inlet - less:g} degC"
-                yield Change(f"cool the oil to {inlet} at the inlet", "inlet", REBUILD, (("oil.inlet", inlet),))
+                yield Change(f"cool the oil to {inlet} at the inlet", "inlet", REBUILD, (("oil.inlet", inlet),),
+                             grade="inlet", step=step)  # fmt: skip
 
 
 def usual_inlet(case: Case) -> float:
@@ -246,7 +260,8 @@ def _streams(case: Case, before: Glances) -> Iterator[Change]:
         return
     inlet = f"{usual_inlet(case):g} degC"
     wetting = float(oil_life.guide_flow.plain(outside=bearing.outside, width=bearing.width))
-    for flow in dict.fromkeys(float(f"{max(times * wetting, LEAST_STREAM):.2g}") for times in STREAMS):
+    flows = dict.fromkeys(float(f"{max(times * wetting, LEAST_STREAM):.2g}") for times in STREAMS)
+    for step, flow in enumerate(flows):
         edits: list[Edit] = [("oil.supply", "circulating"), ("oil.flow", f"{flow:g} {_unit('oil', 'flow')}"),
                              ("oil.inlet", inlet)]  # fmt: skip
         edits += [("oil.level", None)] if oil.level is not None else []
@@ -254,7 +269,25 @@ def _streams(case: Case, before: Glances) -> Iterator[Change]:
         edits += [("oil.volume", tank)] if oil.volume is not None else []  # no longer that of the bath
         yield Change(
             f"circulate the oil in place of the bath: {flow:g} l/min, {inlet} at the inlet", "supply", REPLACE,
-            tuple(edits), f"takes a pump, a cooler, a tank of about {tank} and a wide, free drain",
+            tuple(edits), f"takes a pump, a cooler, a tank of about {tank} and a wide, free drain", "stream", step,
+        )  # fmt: skip
+
+
+def _coils(case: Case, before: Glances) -> Iterator[Change]:
+    """Water in a coil or jacket that cools a bath that is too hot."""
+    housing = case.housing
+    is_bath = case.oil.supply in (None, "bath") and case.bearing.sealed_sides < 2
+    if not is_bath or housing.coolant is not None or housing.conductance is not None or not _fails(before, *BATH_HEAT):
+        return
+    for step, flow in enumerate(COIL_FLOWS):
+        edits: tuple[Edit, ...] = (
+            ("housing.coolant", "water"),
+            ("housing.coolant_flow", f"{flow:g} {_unit('housing', 'coolant_flow')}"),
+            ("housing.coolant_inlet", f"{COIL_INLET:g} degC"),
+        )
+        yield Change(
+            f"cool the bath by a coil or jacket with {flow:g} l/min of water at {COIL_INLET:g} degC", "coolant",
+            REBUILD, edits, "mind leaks: water in the oil ruins it; shut the water off at standstill", "coil", step,
         )  # fmt: skip
 
 
@@ -268,43 +301,46 @@ def _surroundings(case: Case) -> Iterator[Change]:
         words = [answer.word for answer in answers]
         word = getattr(around, key)
         if case.is_grease and word is not None:
-            for better in words[: words.index(word)]:
+            for step, better in enumerate(reversed(words[: words.index(word)])):
                 yield Change(
                     f"keep {key} out with a cover or a better seal: {key} {better}",
                     key,
                     TEST,
                     ((f"surroundings.{key}", better),),
+                    grade=key,
+                    step=step,
                 )
     setting = case.cleanliness.setting
     if setting is not None:
         circuit = setting.partition(" -/")[0] if " -/" in setting else ""
         alike = [one for one in fatigue.SETTINGS if (one.partition(" -/")[0] if " -/" in one else "") == circuit]
-        for cleaner in alike[: alike.index(setting)]:
+        for step, cleaner in enumerate(reversed(alike[: alike.index(setting)])):
             verb = "keep the grease, the gun and the seals cleaner" if case.is_grease else "filter the oil"
             yield Change(f"{verb}: cleanliness {cleaner}", "cleanliness", TEST,
-                         (("cleanliness.setting", cleaner),))  # fmt: skip
+                         (("cleanliness.setting", cleaner),), grade="cleanliness", step=step)  # fmt: skip
 
 
 def _heat(case: Case) -> Iterator[Change]:
     housing, around = case.housing, case.surroundings
     if housing.conductance is None:
-        for speed in DRAUGHTS:
+        for step, speed in enumerate(DRAUGHTS):
             blown: list[Edit] = [("surroundings.draught", f"{speed:g} m/s")] if (around.draught or 0.0) < speed else []
             blown += [(f"duty[{i}].draught", f"{speed:g} m/s") for i, duty in enumerate(case.duty, start=1)
                       if duty.draught is not None and duty.draught < speed]  # fmt: skip
             if blown:
-                yield Change(f"draught of {speed:g} m/s at the housing", "cooling", REBUILD, tuple(blown))
+                yield Change(f"draught of {speed:g} m/s at the housing", "cooling", REBUILD, tuple(blown),
+                             grade="draught", step=step)  # fmt: skip
     else:
-        for times in MORE_COOLING:
+        for step, times in enumerate(MORE_COOLING):
             text = f"{housing.conductance * times:.4g} {_unit('housing', 'conductance')}"
             yield Change(f"cool the housing better: {text} ({times:g} times)", "cooling", REBUILD,
-                         (("housing.conductance", text),))  # fmt: skip
+                         (("housing.conductance", text),), grade="conductance", step=step)  # fmt: skip
     if housing.machine_heat:
-        for share in (0.5, 0.25):
+        for step, share in enumerate((0.5, 0.25)):
             text = f"{housing.machine_heat * share:.4g} W"
             yield Change(f"shield against the machine's heat: {text} left", "shield", REBUILD,
-                         (("housing.machine_heat", text),))  # fmt: skip
-    for less in SHIELDS:
+                         (("housing.machine_heat", text),), grade="machine heat", step=step)  # fmt: skip
+    for step, less in enumerate(SHIELDS):
         edits: list[Edit | None] = []
         if housing.shaft_temperature is not None:
             edits.append(_shielded("housing", housing.shaft_temperature, less, around.ambient))
@@ -314,7 +350,7 @@ def _heat(case: Case) -> Iterator[Change]:
         kept = tuple(edit for edit in edits if edit is not None)
         if kept:
             yield Change(f"shield against heat along the shaft (disc, shield): {less:g} K less", "shield", REBUILD,
-                         kept)  # fmt: skip
+                         kept, grade="shaft heat", step=step)  # fmt: skip
 
 
 def _shielded(table: str, now: float, less: float, ambient: float) -> Edit | None:

@@ -9,7 +9,7 @@ from __future__ import annotations
 import dataclasses
 import math
 from collections.abc import Sequence
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
 
@@ -97,17 +97,33 @@ def find(case: Case, *, air_properties: Air = air.properties) -> tuple[Remedy, .
         for first in range(0, len(pairs), CHUNK):
             chunk = pairs[first : first + CHUNK]
             found += _cures(chunk, before, _judged(case, chunk, air_properties))
-    found.sort(key=lambda cure: cure[0])
     kept: list[Remedy] = []
     counts: dict[tuple[str, ...], int] = {}
-    for _, groups, remedy in found:
+    for cure in sorted(_mildest(found), key=lambda cure: cure.rank):
+        groups = tuple(change.group for change in cure.changes)
         counts[groups] = counts.get(groups, 0) + 1
         if counts[groups] <= MOST_OF_A_KIND and len(kept) < MOST:
-            kept.append(remedy)
+            kept.append(cure.remedy)
     return tuple(kept)
 
 
-Cure = tuple[tuple[int, int, float], tuple[str, ...], Remedy]
+class Cure(NamedTuple):
+    """Changes that cure, and the remedy they make."""
+
+    rank: tuple[int, int, float]
+    changes: tuple[Change, ...]
+    remedy: Remedy
+
+
+def _mildest(found: Sequence[Cure]) -> list[Cure]:
+    """Return of the cures that differ in the steps of graded changes only the one with the fewest."""
+    mildest: dict[tuple[str, ...], tuple[tuple[int, int], Cure]] = {}
+    for cure in found:
+        kind = tuple(change.grade or change.words for change in cure.changes)
+        steps = (cure.rank[0], sum(change.step for change in cure.changes))
+        if kind not in mildest or steps < mildest[kind][0]:
+            mildest[kind] = (steps, cure)
+    return [cure for _, cure in mildest.values()]
 
 
 def _judged(case: Case, tries: Sequence[tuple[Change, ...]], air_properties: Air) -> Glances | None:
@@ -118,14 +134,14 @@ def _judged(case: Case, tries: Sequence[tuple[Change, ...]], air_properties: Air
 
 
 def _cures(tries: Sequence[tuple[Change, ...]], before: Glances, after: Glances | None) -> list[Cure]:
-    """Return the tries that cure, with their rank and groups."""
+    """Return the tries that cure, with their rank."""
     found: list[Cure] = []
     if after is None:
         return found
     for i in np.flatnonzero(_is_cured(before, after)).tolist():
         changes, verdict = tries[i], int(after.verdicts[i])
         rank = (int(verdict != WITHIN), sum(change.effort for change in changes), after.greatest_use(i))
-        found.append((rank, tuple(change.group for change in changes), _remedy(changes, before, after, i)))
+        found.append(Cure(rank, changes, _remedy(changes, before, after, i)))
     return found
 
 

@@ -148,3 +148,17 @@ def test_a_failure_leaves_the_old_file_and_nothing_beside_it(tmp_path, monkeypat
 def test_a_folder_that_is_not_there_is_refused(tmp_path):
     with pytest.raises(InputError, match="No such file"):
         files.write_whole(tmp_path / "none" / "plan.csv", b"x")
+
+
+def test_grams_in_files_are_those_of_a_scale_and_still_numbers():
+    text = with_key(with_key(BASE, "grease", "fill", '"15.2671 g"'), "grease", "stroke", '"1.234 g"')
+    made = schedule([lubecheck.check(read_case(text))], START, "quarterly")
+    (line,) = csv.DictReader(io.StringIO(plan.to_csv(made, START).decode("utf-8"), newline=""), strict=True)
+    sheet = openpyxl.load_workbook(io.BytesIO(plan.to_xlsx(made, START))).worksheets[0]
+    cells = dict(zip((cell.value.replace(" ", "_") for cell in sheet[1]), sheet[2], strict=True))
+    for name in ("first_fill_g", "housing_fill_g", "amount_g", "grease_g_per_year", "rounding_g_per_year"):
+        shown = float(line[name])
+        assert shown == round(shown, 1) == pytest.approx(getattr(made[0], name), abs=0.05)
+        assert cells[name].value == pytest.approx(shown)
+    assert line["first_fill_g"] == "15.3"
+    assert line["stroke_g"] == "1.234"

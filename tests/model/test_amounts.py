@@ -136,3 +136,14 @@ def test_a_slow_closed_bearing_is_counted_as_its_maker_fills_it():
     assert figures.low < figures.value < figures.high
     assert figures.value / figures.high == pytest.approx(0.30 / 0.35)
     assert figures.value / result.amounts.figures["allowed_most"].value == pytest.approx(0.30)  # slow: 100 % allowed
+
+
+@pytest.mark.parametrize("given", ["4 g", "14 g", "60 g"])
+def test_the_first_fill_of_the_plan_is_the_stated_one_whatever_was_pumped_in_after(given):
+    result = result_of(grease__given=f'"{given}"')
+    assert result.plan.first_fill_g == pytest.approx(15.0)
+    assert result.grease.first_fill.m_as("g") == pytest.approx(15.0)
+    assert "fill" not in result.plan.is_proposed
+    assert result.plan.housing_fill_g == pytest.approx(result_of().plan.housing_fill_g)
+    packed = result_of(grease__given=f'"{given}"', grease__fill='"100 %"', housing__void='"0 cm^3"')
+    assert "fill" in packed.plan.is_proposed  # a stated fill that is itself too much is not repeated

@@ -50,6 +50,10 @@ def test_rounding_never_lengthens_and_no_date_is_later_than_allowed(hours, per_d
         left = max(0.0, (row.interval_h - ran) / per_day)
         assert (row.next_due - START).days <= left
         assert (row.next_due - last).days <= row.interval_days or row.next_due == START
+        if not is_staggered:  # nor needlessly early: the next round would be too late
+            rhythm = ROUTES[route] if route and row.interval_days >= ROUTES[route] else 1
+            later = row.next_due + datetime.timedelta(days=rhythm)
+            assert (later - last).days > row.interval_days or (later - START).days > left
 
 
 @settings(max_examples=200, deadline=None)
@@ -157,3 +161,44 @@ def test_strokes_grams_ounces_and_volume_agree():
     assert row.amount_oz == pytest.approx(row.amount_g / 28.349523125)
     assert row.amount_cm3 == pytest.approx(row.amount_g / 0.9, rel=0.03)
     assert not math.isnan(row.amount_cm3)
+
+
+def test_a_route_comes_back_on_its_last_round_that_the_position_s_own_interval_reaches():
+    result = result_of(grease__interval='"7 week"', grease__last_done='"2026-11-27"')
+    (row,) = schedule([result], START, "monthly")
+    # Rounds on 1 and 29 December and 26 January; 49 days after 27 November is 15 January.
+    assert (row.next_due, row.planned_days) == (datetime.date(2026, 12, 29), 28)
+    ran = result_of(grease__interval='"7 week"', grease__hours_run='"96 h"')
+    assert schedule([ran], START, "monthly")[0].next_due == datetime.date(2026, 12, 29)
+
+
+@pytest.mark.parametrize(
+    ("oil", "there", "absent"),
+    [
+        ({"supply": "circulating", "flow": "0.1 l/min", "inlet": "48 degC"},
+         ("tank", "new filter", "flush", "flow of 0.1 l/min", "return", "sight glass"), "lowest rolling element"),
+        ({"supply": "mist"}, ("mist generator",), "lowest rolling element"),
+        ({"supply": "bath", "level": "0 mm"}, ("lowest rolling element",), "filter"),
+    ],
+)  # fmt: skip
+def test_the_oil_is_changed_as_its_supply_needs(oil, there, absent):
+    text = (EXAMPLES / "oil_bath_pump.toml").read_text(encoding="utf-8")
+    text = with_key(with_key(text, "oil", "level", None), "cleanliness", "setting", '"normal"')
+    for key, value in oil.items():
+        text = with_key(text, "oil", key, f'"{value}"')
+    steps = " ".join(lubecheck.check(read_case(text)).plan.steps)
+    assert all(word in steps for word in there)
+    assert absent not in steps
+
+
+def test_a_closed_bearing_with_a_planned_interval_is_told_the_life_of_its_grease():
+    result = lubecheck.check(read_case(BASE.replace('"6309"', '"6309-2RS"')))
+    (booser,) = [line for line in result.interval_lines if line.governs]
+    limit = result.limit("interval")
+    assert (limit.state, limit.use, limit.allowed) == ("beyond", None, None)
+    assert "take [grease] interval out" in limit.note
+    hours = f"{booser.hours:,.0f}".replace(",", " ")
+    assert f"the grease sealed in it lasts {hours} h (L10): replace the bearing by then" in limit.note
+    row = schedule([result], START)[0]
+    assert row.interval_h == pytest.approx(booser.hours)
+    assert row.planned_days == math.floor(booser.hours / 24)

@@ -170,6 +170,9 @@ def test_a_temperature_to_hold_is_asked_for_by_an_option():
     refused = run("check", "examples/oil_bath_pump.toml", "--hold", "62 mm")
     assert refused.returncode == 2
     assert "--hold" in refused.stderr
+    empty = run("check", "examples/oil_bath_pump.toml", "--hold", "")
+    assert (empty.returncode, empty.stdout) == (2, "")
+    assert "--hold" in empty.stderr
 
 
 def test_exact_fluids_asks_coolprop():

@@ -93,3 +93,8 @@ def test_a_workbook_writer_is_loaded_only_when_a_workbook_is_asked_for():
 def test_what_was_given_is_told_with_how_long_to_wait():
     done = run("plan", "examples/regreased_fan.toml", "--from", "2026-12-01")
     assert "by the warm-up" in " ".join(done.stdout.split())
+
+
+def test_the_help_says_how_long_the_rounds_of_a_route_are():
+    told = " ".join(run("plan", "--help").stdout.replace("\u2502", " ").split())
+    assert "weekly is 7 days, monthly 28, quarterly 91" in told

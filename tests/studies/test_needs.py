@@ -192,3 +192,16 @@ def test_what_is_no_temperature_is_refused():
         read_hold("70")
     assert read_hold("140 degF") == pytest.approx(60.0)
     assert read_hold("limit") == "limit"
+
+
+@pytest.mark.parametrize("key", ["alarm", "trip"])
+def test_a_stated_set_point_is_one_of_the_limits_that_are_held(key):
+    text = with_key(BASE, "limits", key, '"62 degC"')
+    assert lubecheck.check(read_case(text)).limit("set_point").state in ("near", "beyond")
+    found = lubecheck.check(read_case(text), hold="limit").needs
+    assert "set point" in found.question
+    held = [need for need in found.found if need.needed is not None]
+    assert held
+    for need in held:
+        fresh = plain_check(read_case(edited(text, need.edits)))
+        assert fresh.limit("set_point").use == pytest.approx(0.85, abs=1e-3), need

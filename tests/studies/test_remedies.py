@@ -153,3 +153,28 @@ def test_changes_never_touch_what_is_required():
     case = load_case(EXAMPLES / "overfilled_motor.toml")
     for change in changes.possible(case, glances([case])):
         assert not any(key.startswith(("limits", "duty[1].radial")) for key, _ in change.edits)
+
+
+@pytest.mark.parametrize("weeks", [60, 80, 104, 200])
+def test_one_interval_is_offered_and_it_is_the_longest_that_is_within(weeks):
+    text = with_key(BASE, "grease", "interval", f'"{weeks} week"')
+    (remedy,) = [one for one in lubecheck.check(read_case(text)).remedies if one.edits[0][0] == "grease.interval"]
+    offered = int(remedy.edits[0][1].split()[0])
+    assert remedy.change == f"regrease every {offered} weeks"
+    longer = with_key(BASE, "grease", "interval", f'"{offered + 1} week"')
+    assert plain_check(read_case(longer)).limit("interval").state != "within"
+
+
+def test_of_a_graded_change_only_the_mildest_step_that_cures_is_offered(failing):
+    for text, result in failing:
+        case = read_case(text)
+        single = {one.words: one for one in changes.possible(case, glances([case]))}
+        kinds = [
+            tuple(single[word].grade or word for word in remedy.change.split("; and ")) for remedy in result.remedies
+        ]
+        assert len(kinds) == len(set(kinds)), result.remedies
+        for remedy in result.remedies:
+            one = single.get(remedy.change)
+            if one is not None and one.grade:
+                milder = [other for other in single.values() if other.grade == one.grade and other.step < one.step]
+                assert all(plain_check(changes.apply(case, other)).verdict != remedy.verdict_after for other in milder)

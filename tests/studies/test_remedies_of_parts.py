@@ -165,3 +165,38 @@ def test_no_stream_is_offered_for_grease_for_a_cool_bath_or_where_oil_circulates
     cool = hot_bath(("surroundings", "ambient", '"20 degC"'), ("housing", "shaft_temperature", '"40 degC"'))
     stream = edited(hot_bath(), of_group(hot_bath(), STREAM)[0].edits)
     assert [of_group(text, STREAM) for text in (fitted("m6"), cool, stream)] == [[], [], []]
+
+
+COIL = "cool the bath by a coil"
+
+
+@pytest.mark.parametrize("text", BATHS)
+def test_a_coil_in_a_hot_bath_gives_the_verdict_that_it_promises(text):
+    before = plain_check(read_case(text))
+    coils = of_group(text, COIL)
+    uses = [plain_check(read_case(edited(text, one.edits))).limit("temperature").use for one in coils]
+    assert uses == sorted(uses, reverse=True)
+    assert uses[0] < before.limit("temperature").use
+    assert {key for key, _ in coils[0].edits} == {
+        "housing.coolant", "housing.coolant_flow", "housing.coolant_inlet"
+    }  # fmt: skip
+
+
+def test_a_coil_is_offered_before_oil_that_circulates_and_only_to_a_hot_bath_without_one():
+    assert assert_kept(hot_bath(), COIL) == 1
+    words = [one.change for one in lubecheck.check(read_case(hot_bath())).remedies]
+    first = [next(i for i, word in enumerate(words) if start in word) for start in (COIL, STREAM)]
+    assert first == sorted(first)
+    cool = hot_bath(("surroundings", "ambient", '"20 degC"'), ("housing", "shaft_temperature", '"40 degC"'))
+    has_one = edited(hot_bath(), of_group(hot_bath(), COIL)[0].edits)
+    stream = edited(hot_bath(), of_group(hot_bath(), STREAM)[0].edits)
+    assert [of_group(text, COIL) for text in (fitted("m6"), cool, has_one, stream)] == [[], [], [], []]
+
+
+def test_oil_is_filtered_and_only_grease_asks_for_a_clean_gun():
+    stream = with_key(edited(hot_bath(), of_group(hot_bath(), STREAM)[0].edits), "cleanliness", "setting", '"slight"')
+    assert {one.words for one in of_group(stream, "filter the oil")} == {
+        "filter the oil: cleanliness normal", "filter the oil: cleanliness high"
+    }  # fmt: skip
+    assert of_group(stream, "keep the grease") == []
+    assert of_group(with_key(BASE, "cleanliness", "setting", '"slight"'), "keep the grease")
