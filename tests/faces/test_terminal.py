@@ -178,3 +178,26 @@ def test_a_tapered_bore_is_no_temperature():
             'static_rating = "31.5 kN"\n', "").replace('mass = "0.83 kg"\n', "").replace('cage = "steel"\n', ""),
         system="inch",
     )  # fmt: skip
+
+
+def test_the_plan_line_has_the_housing_s_fill_as_the_plan_has():
+    text = " ".join(printed(EXAMPLES / "new_motor.toml", width=200).split())
+    grams = lubecheck.check(lubecheck.load_case(EXAMPLES / "new_motor.toml")).plan.housing_fill_g
+    assert f"into the housing {grams:.1f} g" in text
+
+
+def test_what_is_to_be_settled_first_keeps_its_indent_where_it_wraps():
+    hot = with_key(with_key(BASE, "surroundings", "ambient", '"95 degC"'), "limits", "life", '"200000 h"')
+    hot = with_key(with_key(hot, "duty", "radial_load", '"30 kN"'), "limits", "trip", '"90 degC"')
+    lines = printed(hot, width=60).splitlines()
+    start = next(i for i, line in enumerate(lines) if "Only once this is settled" in line)
+    settled = lines[start : next(i for i in range(start, len(lines)) if "polyurea" in lines[i])]
+    assert len(settled) > 1
+    assert all(line.startswith("  ") and line[2] != " " for line in settled)
+
+
+def test_a_use_without_end_is_said_in_words_in_the_verdict_line():
+    text = printed(BASE.replace('"6309"', '"6309-2RS"'))
+    assert "governed by interval, past any use\n" in "\n".join(line.rstrip() for line in text.splitlines())
+    assert "no end of 1" not in text
+    assert "good for 0 h" not in text
