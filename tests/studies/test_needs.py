@@ -196,7 +196,7 @@ def test_what_is_no_temperature_is_refused():
 
 @pytest.mark.parametrize("key", ["alarm", "trip"])
 def test_a_stated_set_point_is_one_of_the_limits_that_are_held(key):
-    text = with_key(BASE, "limits", key, '"62 degC"')
+    text = with_key(BASE, "limits", key, '"53 degC"')
     assert lubecheck.check(read_case(text)).limit("set_point").state in ("near", "beyond")
     found = lubecheck.check(read_case(text), hold="limit").needs
     assert "set point" in found.question
