@@ -32,14 +32,8 @@ CHUNK = 2000  # cases a kernel call
 # Limits that one group of changes alone can move.
 ONE_GROUP = {"cold_start": "lubricant", "speed": "bearing", "static_load": "bearing", "minimum_load": "bearing"}
 _FAILING = ("near", "beyond")
-HEAT_LIMITS = (
-    "temperature",
-    "rings",
-    "set_point",
-    "flash_point",
-    "film",
-    "interval",
-)  # that heat may bring near or beyond
+# Limits that heat may bring near or beyond.
+HEAT_LIMITS = ("temperature", "rings", "set_point", "flash_point", "film", "interval")
 
 
 def check(
