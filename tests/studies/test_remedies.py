@@ -166,7 +166,7 @@ def test_one_interval_is_offered_and_it_is_the_longest_that_is_within(weeks):
 
 
 def test_of_a_graded_change_only_the_mildest_step_that_cures_is_offered(failing):
-    for text, result in failing:
+    for text, result in failing[:60]:
         case = read_case(text)
         single = {one.words: one for one in changes.possible(case, glances([case]))}
         kinds = [
@@ -175,6 +175,6 @@ def test_of_a_graded_change_only_the_mildest_step_that_cures_is_offered(failing)
         assert len(kinds) == len(set(kinds)), result.remedies
         for remedy in result.remedies:
             one = single.get(remedy.change)
-            if one is not None and one.grade:
+            if one is not None and one.grade and remedy.verdict_after == "within":
                 milder = [other for other in single.values() if other.grade == one.grade and other.step < one.step]
-                assert all(plain_check(changes.apply(case, other)).verdict != remedy.verdict_after for other in milder)
+                assert all(plain_check(changes.apply(case, other)).verdict != "within" for other in milder)
