@@ -74,6 +74,18 @@ def _heading(result: Result, console: Console, system: str) -> None:
     verdict.append("which could not be judged" if governing.state == "unknown" else f"use {_use(governing)} of 1")
     console.print(verdict)
     console.print(Text(_meaning(result), style="italic"))
+    _stop(result, console, system)
+
+
+def _stop(result: Result, console: Console, system: str, indent: int = 0) -> None:
+    """Print what was read over a limit, where something was: it comes before anything else that is to be done."""
+    if result.calibration is not None and result.calibration.stop:
+        text = Text(in_system(_capital(result.calibration.stop), system), style=f"bold {STYLES['beyond']}")
+        console.print(Padding(text, (0, 0, 0, indent)))
+
+
+def _capital(text: str) -> str:
+    return text[:1].upper() + text[1:]
 
 
 def _meaning(result: Result) -> str:
@@ -235,6 +247,7 @@ def _heat(result: Result, console: Console) -> None:
 def _plan(result: Result, console: Console, system: str) -> None:
     plan = result.plan
     console.print(Text("\nFor the maintenance plan", style="bold"))
+    _stop(result, console, system, indent=2)
     if result.verdict in ("beyond", "unknown"):
         open_limits = [_words(limit.name) for limit in result.limits if limit.state == result.verdict]
         console.print(Text(f"  Only once this is settled: {', '.join(open_limits)}", style=STYLES[result.verdict]))

@@ -3,7 +3,9 @@
 from __future__ import annotations
 
 import dataclasses
+import math
 from collections.abc import Iterator
+from typing import Any
 
 from lubecheck.errors import shown
 from lubecheck.model.duty_entries import Duty, ShaftForces
@@ -56,6 +58,31 @@ def at_state(case: Case, one: Measured) -> Case:
         measured=(),
         calibration=None,
     )
+
+
+def heat_of(case: Case) -> tuple[Any, ...]:
+    """Return all that a case says and that its temperature hangs on: another one is another machine than was read."""
+    grease, oil = case.grease, case.oil
+    return (
+        case.bearing, case.lubricant, case.duty, case.surroundings, case.housing,
+        grease.fill, grease.housing_fill, grease.given, grease.regreasings,
+        oil.supply, oil.level, oil.flow, oil.inlet, oil.contact,
+    )  # fmt: skip
+
+
+def highest_read(case: Case) -> tuple[float, float]:
+    """Return the highest temperature that was read on housing or outer ring, and anywhere; NaN where none was.
+
+    After a change of what heat hangs on, a reading that is explained speaks through its calibration alone. One that
+    nothing explains stays until it is read again: its cause may still be there.
+    """
+    if not case.measured:
+        return math.nan, math.nan
+    found = case.calibration
+    if found is not None and found.is_explained and found.heat_of != heat_of(case):
+        return math.nan, math.nan
+    outer = [one.temperature for one in case.measured if one.place in (None, "housing", "outer ring")]
+    return max(outer, default=math.nan), max((one.temperature for one in case.measured), default=math.nan)
 
 
 def faults(case: Case, *, is_list: bool) -> Iterator[Problem]:
