@@ -42,8 +42,10 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     _limits(result, console, system)
     _calibration(result, console, system)
     _plan(result, console, system)
-    _remedies(result, console, system)
-    print_needs(result.needs, console, system)
+    if result.calibration is None or result.calibration.is_explained or not result.calibration.stop:
+        # Nobody knows what a change does to what nothing explains.
+        _remedies(result, console, system)
+        print_needs(result.needs, console, system)
     if result.warm_up is not None:
         from lubecheck.faces.warmup import print_warm_up  # only where it is asked for
 

@@ -60,7 +60,7 @@ class Explained:
     """What was looked at for a reading that is not explained."""
 
     likely: tuple[Explanation, ...] = ()  # the least surprising first
-    unlikely: int = 0  # that would give the reading, but far outside of what is usual
+    unlikely: tuple[Explanation, ...] = ()  # they give the reading too, but far outside of what is usual
     ruled_out: tuple[str, ...] = ()  # causes that do not give it however far they go
     is_hot: bool = False
 

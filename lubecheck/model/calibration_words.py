@@ -85,19 +85,18 @@ def unexplained(found: Calibration) -> str:
     figures = max((point.figures.figures for point in found.points), key=lambda one: abs(one["residual"].value or 0.0))
     least, most = found.admissible
     if not math.isfinite(found.value):
-        needed = "a balance of heat, which was not found"
+        needed = "it would take a balance of heat, which was not found"
     elif found.column == COOLING:
         is_end = not 1.001 / WIDEST_COOLING < found.value < WIDEST_COOLING / 1.001
         beyond = ("under " if found.value < 1 else "over ") if is_end else ""
-        needed = (
-            f"cooling {beyond}{found.value:.2g} times the estimate, where {least:.2g} to {most:.2g} can be believed"
-        )
+        believed = f"{least:.2g} to {most:.2g} can be believed"
+        needed = f"it would take cooling {beyond}{found.value:.2g} times the estimate, where {believed}"
     else:
-        needed = f"no fill from {least * 100:.0f} to {most * 100:.0f} %"
+        needed = f"no fill gives that, from {least * 100:.0f} to {most * 100:.0f} %"
     measured, computed = (figures[name].value for name in ("measured", "before"))
     beside = "no equilibrium" if computed is None else f"{computed:.1f} degC"
     return (
-        f"Not calibrated: {measured or 0.0:.1f} degC was measured where {beside} is computed, and it would take "
+        f"Not calibrated: {measured or 0.0:.1f} degC was measured where {beside} is computed, and "
         f"{needed}. So what the temperature moves is not judged"
     )
 
@@ -207,8 +206,9 @@ def _notes(case: Case, found: Calibration) -> tuple[str, ...]:
 def _looked_at(explained: Explained) -> list[str]:
     said = []
     if explained.unlikely:
-        causes = "1 cause is" if explained.unlikely == 1 else f"{explained.unlikely} causes are"
-        said.append(f"{causes} not listed: each would have to be over {LIKELY:g} times outside of what is usual")
+        count = len(explained.unlikely)
+        causes = "1 cause is" if count == 1 else f"{count} causes are"
+        said.append(f"{causes} not listed: each would lie over {LIKELY:g} half widths outside of its usual range")
     if explained.ruled_out:
         said.append(f"ruled out: {', '.join(explained.ruled_out)}, which cannot give it alone however far they go")
     if not explained.likely:

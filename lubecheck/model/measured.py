@@ -19,6 +19,7 @@ SETTLED_AFTER_START = 4.0  # h: common practice, the temperature is level 3 to 4
 SETTLED_AFTER_GREASING = 24.0  # h: common practice, the rise after greasing is gone after about a day
 READING_ERROR = 2.0  # K: common practice, 1 to 3 K of a contact thermometer or a resistance sensor at the outer ring
 _UNITS = {"mass": "g", "volume": "cm^3", "share": ""}
+_AS_WRITTEN = ("running_time", "draught", "shaft_temperature", "fill")  # told back in the user's own unit
 _STATE = ("speed", "radial_load", "axial_load")
 _FORCES = tuple(key for key, _ in entries(ShaftForces))
 
@@ -87,10 +88,13 @@ def highest_read(case: Case) -> tuple[float, float]:
 
 def faults(case: Case, *, is_list: bool) -> Iterator[Problem]:
     """Yield what a measurement lacks, or says beside what excludes it."""
+    texts = dict(case.given)
     for i, one in enumerate(case.measured):
         here: tuple[str | int, ...] = ("measured", i) if is_list else ("measured",)
+        name = f"measured[{i + 1}]" if is_list else "measured"
         for key, given, expected in _faults(case, one):
-            yield (*here, key), given, expected
+            written = texts.get(f"{name}.{key}") if key in _AS_WRITTEN else None
+            yield (*here, key), given if written is None else shown(written), expected
 
 
 def _faults(case: Case, one: Measured) -> Iterator[tuple[str, str, str]]:

@@ -235,7 +235,10 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
 
         at, band = usual, (lowest, nominal[0], highest)
         if is_split:  # what sets one apart is looked for from where the others put the cooling, or the fill
-            at, band = unknown.put(usual, np.repeat(x[:1], count)), (after - sensors.error, after, after + sensors.error)
+            at, band = (
+                unknown.put(usual, np.repeat(x[:1], count)),
+                (after - sensors.error, after, after + sensors.error),
+            )
         return dataclasses.replace(made, explained=explanations(case, at, sensors, band, air_properties))
     names = (USUAL, WORST, *(fact.name for fact in facts))
     of_inputs = values[len(said) :].reshape(-1, 2)

@@ -80,10 +80,10 @@ def explanations(
     ends = (float(low[worst]), float(nominal[worst]), float(high[worst]))
     found += _misread(case, worst, row, ends, is_hot)
     found += _not_settled(case, one, row, ends, is_hot)
-    likely = (item for item in found if item.surprise <= LIKELY)
+    found.sort(key=lambda item: item.surprise)
     return Explained(
-        likely=tuple(sorted(likely, key=lambda item: item.surprise)),
-        unlikely=sum(item.surprise > LIKELY for item in found),
+        likely=tuple(item for item in found if item.surprise <= LIKELY),
+        unlikely=tuple(item for item in found if item.surprise > LIKELY),
         ruled_out=tuple(one.cause for one in tries if one.cause not in reached),
         is_hot=is_hot,
     )
