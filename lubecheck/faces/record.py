@@ -108,6 +108,7 @@ def _calibration(found: Calibrated | None) -> dict[str, Any] | None:
         "measurements": [{"place": point.place, **(figures(point.figures) or {})} for point in found.measurements],
         "explanations": [dataclasses.asdict(item) for item in found.explanations],
         "notes": list(found.notes),
+        "stop": found.stop,
     }
 
 

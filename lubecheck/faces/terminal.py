@@ -42,8 +42,10 @@ def print_result(result: Result, console: Console, system: str = "si", *, losses
     _limits(result, console, system)
     _calibration(result, console, system)
     _plan(result, console, system)
-    _remedies(result, console, system)
-    print_needs(result.needs, console, system)
+    if result.calibration is None or result.calibration.is_explained or not result.calibration.stop:
+        # Nobody knows what a change does to what nothing explains.
+        _remedies(result, console, system)
+        print_needs(result.needs, console, system)
     if result.warm_up is not None:
         from lubecheck.faces.warmup import print_warm_up  # only where it is asked for
 
@@ -75,6 +77,18 @@ def _heading(result: Result, console: Console, system: str) -> None:
     verdict.append("which could not be judged" if governing.state == "unknown" else use)
     console.print(verdict)
     console.print(Text(_meaning(result), style="italic"))
+    _stop(result, console, system)
+
+
+def _stop(result: Result, console: Console, system: str, indent: int = 0) -> None:
+    """Print what was read over a limit, where something was: it comes before anything else that is to be done."""
+    if result.calibration is not None and result.calibration.stop:
+        text = Text(in_system(_capital(result.calibration.stop), system), style=f"bold {STYLES['beyond']}")
+        console.print(Padding(text, (0, 0, 0, indent)))
+
+
+def _capital(text: str) -> str:
+    return text[:1].upper() + text[1:]
 
 
 def _meaning(result: Result) -> str:
@@ -236,6 +250,7 @@ def _heat(result: Result, console: Console) -> None:
 def _plan(result: Result, console: Console, system: str) -> None:
     plan = result.plan
     console.print(Text("\nFor the maintenance plan", style="bold"))
+    _stop(result, console, system, indent=2)
     if result.verdict in ("beyond", "unknown"):
         open_limits = [_words(limit.name) for limit in result.limits if limit.state == result.verdict]
         settled = Text(f"Only once this is settled: {', '.join(open_limits)}", style=STYLES[result.verdict])

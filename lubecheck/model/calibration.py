@@ -9,11 +9,13 @@ from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
+from typing import Any
 
 from lubecheck.model.result import Declared, Figures
 
 USUAL, WORST = "usual", "worst"  # the readings of unsaid facts; one fact alone at its worst goes by its name
 COOLING, FILL = "cooling_factor", "fill"  # the columns of points that can be the unknown
+LIKELY = 3.0  # half widths outside the usual range, from which a cause explains nothing: estimate
 WIDEST_COOLING = 30.0  # times the estimate, or one over that: searched, so that what would be needed can be told
 
 
@@ -54,6 +56,16 @@ class Explanation:
 
 
 @dataclass(frozen=True, slots=True)
+class Explained:
+    """What was looked at for a reading that is not explained."""
+
+    likely: tuple[Explanation, ...] = ()  # the least surprising first
+    unlikely: tuple[Explanation, ...] = ()  # they give the reading too, but far outside of what is usual
+    ruled_out: tuple[str, ...] = ()  # causes that do not give it however far they go
+    is_hot: bool = False
+
+
+@dataclass(frozen=True, slots=True)
 class MeasuredPoint:
     """One reading, its place, and its figures."""
 
@@ -78,7 +90,10 @@ class Calibration:
     points: tuple[MeasuredPoint, ...]
     chi_square: float | None
     error_scale: float
-    explanations: tuple[Explanation, ...] = ()
+    heat_of: tuple[Any, ...]  # what the temperature hangs on, as the case had it
+    is_split: bool = False  # the readings disagree by more than their errors
+    most_split: int = 0  # the reading that disagrees most
+    explained: Explained = Explained()
 
     def at(self, facts: Sequence[str]) -> float:
         """Return the value under a reading, told by the facts that it reads at their worst."""
@@ -97,3 +112,4 @@ class Calibrated:
     measurements: tuple[MeasuredPoint, ...]
     explanations: tuple[Explanation, ...]
     notes: tuple[str, ...]
+    stop: str  # what was read over a limit, and what that asks for; empty where nothing was

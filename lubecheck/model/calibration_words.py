@@ -5,22 +5,35 @@ from __future__ import annotations
 import math
 
 from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
-from lubecheck.model.calibration import COOLING, WIDEST_COOLING, Calibrated, Calibration, CalibrationFigures
+from lubecheck.model.calibration import (
+    COOLING,
+    LIKELY,
+    WIDEST_COOLING,
+    Calibrated,
+    Calibration,
+    CalibrationFigures,
+    Explained,
+)
 from lubecheck.model.entries import Case
-from lubecheck.model.kernel import MOVED_BY_HEAT
+from lubecheck.model.kernel import MOVED_BY_HEAT, Outcome
+from lubecheck.model.limits import FLASH_MARGIN
 from lubecheck.model.measured import (
     READING_ERROR,
     SETTLED_AFTER_GREASING,
     SETTLED_AFTER_START,
     at_state,
 )
+from lubecheck.model.points import Points
 from lubecheck.model.result import Assumed
 
 Band = tuple[float, float, float]
-LIKELY = 3.0  # half widths outside the usual range, from which a cause is not likely: estimate
+NOT_COMPUTED = (
+    "not computed here, and to be looked for: bearing damage, creep or a rubbing part, a blocked floating bearing, "
+    "misalignment; check vibration, noise and a grease or oil sample"
+)
 
 
-def told(case: Case, before: Band, after: Band) -> Calibrated | None:
+def told(case: Case, before: Band, after: Band, stop: str) -> Calibrated | None:
     """Return the calibration of a case as a result tells it, with the temperature of the operating point."""
     found = case.calibration
     if found is None:
@@ -40,7 +53,8 @@ def told(case: Case, before: Band, after: Band) -> Calibrated | None:
         }
     )
     text = _explained(found, before, after) if found.is_explained else unexplained(found)
-    return Calibrated(text, found.is_explained, figures, found.points, found.explanations, _notes(case, found))
+    likely = found.explained.likely
+    return Calibrated(text, found.is_explained, figures, found.points, likely, _notes(case, found), stop)
 
 
 def _explained(found: Calibration, before: Band, after: Band) -> str:
@@ -65,25 +79,67 @@ def said(found: Calibration) -> str:
 
 
 def unexplained(found: Calibration) -> str:
-    """Say that no admissible cooling, or fill, gives what was measured."""
+    """Say that no admissible cooling, or fill, gives what was measured, or not all of it."""
+    if found.is_split:
+        return _split(found)
     figures = max((point.figures.figures for point in found.points), key=lambda one: abs(one["residual"].value or 0.0))
     least, most = found.admissible
     if not math.isfinite(found.value):
-        needed = "a balance of heat, which was not found"
+        needed = "it would take a balance of heat, which was not found"
     elif found.column == COOLING:
         is_end = not 1.001 / WIDEST_COOLING < found.value < WIDEST_COOLING / 1.001
         beyond = ("under " if found.value < 1 else "over ") if is_end else ""
-        needed = (
-            f"cooling {beyond}{found.value:.2g} times the estimate, where {least:.2g} to {most:.2g} can be believed"
-        )
+        believed = f"{least:.2g} to {most:.2g} can be believed"
+        needed = f"it would take cooling {beyond}{found.value:.2g} times the estimate, where {believed}"
     else:
-        needed = f"no fill from {least * 100:.0f} to {most * 100:.0f} %"
+        needed = f"no fill gives that, from {least * 100:.0f} to {most * 100:.0f} %"
     measured, computed = (figures[name].value for name in ("measured", "before"))
     beside = "no equilibrium" if computed is None else f"{computed:.1f} degC"
     return (
-        f"Not calibrated: {measured or 0.0:.1f} degC was measured where {beside} is computed, and it would take "
+        f"Not calibrated: {measured or 0.0:.1f} degC was measured where {beside} is computed, and "
         f"{needed}. So what the temperature moves is not judged"
     )
+
+
+def _split(found: Calibration) -> str:
+    point = found.points[found.most_split]
+    read, computed, residual = (point.figures.figures[name].value or 0.0 for name in ("measured", "after", "residual"))
+    side = "hotter" if residual > 0 else "colder"
+    return (
+        f"Not calibrated: the {len(found.points)} readings disagree by more than their errors (chi-square "
+        f"{found.chi_square:.1f} for {len(found.points) - 1} degrees of freedom; {_residuals(found)}, read minus "
+        f"computed). Reading {found.most_split + 1} disagrees most: {read:.1f} degC was read where the best fit of all "
+        f"has {computed:.1f} degC, {abs(residual):.1f} K {side}. Check how it was taken and its state; if it is right, "
+        "something changed between the readings. So what the temperature moves is not judged"
+    )
+
+
+def over(case: Case, points: Points, name: str, row: int) -> str:
+    """Say what was read and which limit that is over; empty where it is over none."""
+    read = float((points.read_outer if name == "set_point" else points.read_highest)[row])
+    if math.isnan(read):
+        return ""
+    if name == "set_point":
+        set_points = (("trip", case.limits.trip), ("alarm", case.limits.alarm))
+        passed = [f"{key} {point:g} degC" for key, point in set_points if point is not None and read >= point]
+    else:
+        tops = {
+            "temperature": ("highest allowed", points.highest[row]),
+            "rings": ("rings stabilised to", points.stabilised_to[row]),
+            "flash_point": (f"flash point less {FLASH_MARGIN:g} K", points.flash_point[row] - FLASH_MARGIN),
+        }
+        what, top = tops.get(name, ("", math.inf))
+        passed = [f"{what} {top:g} degC"] if read > top else []
+    return f"read {read:g} degC, {passed[0]}" if passed else ""
+
+
+def stop(case: Case, outcome: Outcome) -> str:
+    """Say what was read over a limit of the first position, and what that asks for; empty where nothing was."""
+    for name in ("set_point", "temperature", "rings", "flash_point"):
+        judged = outcome.judged[name]
+        if judged.applies[0] and (said := over(case, outcome.points, name, int(judged.row[0]))):
+            return f"{said}: stop, and find the cause before {'greasing' if case.is_grease else 'changing the oil'}"
+    return ""
 
 
 def doubt(case: Case, name: str) -> str:
@@ -91,6 +147,8 @@ def doubt(case: Case, name: str) -> str:
     found = case.calibration
     if found is None or found.is_explained or name not in MOVED_BY_HEAT:
         return ""
+    if found.is_split:
+        return "not judged: the measured temperatures contradict one another"
     return "not judged: a measured temperature contradicts the computed one"
 
 
@@ -123,16 +181,14 @@ def assumed(case: Case) -> tuple[Assumed, ...]:
 
 def _notes(case: Case, found: Calibration) -> tuple[str, ...]:
     said = []
-    if found.error_scale > 1 and found.chi_square is not None:
+    if found.is_explained and found.error_scale > 1 and found.chi_square is not None:
         said.append(
             f"the residuals are larger than the reading errors: chi-square {found.chi_square:.1f} for "
             f"{len(found.points) - 1} degrees of freedom, so the errors are taken {found.error_scale:.1f} times as "
             "large; something differed between the readings that the case does not say"
         )
-    if not found.is_explained and min((one.surprise for one in found.explanations), default=LIKELY) >= LIKELY:
-        said.append(
-            "nothing alone is likely to explain it: check thermometer and state, and look for several causes together"
-        )
+    if not found.is_explained:
+        said += _looked_at(found.explained)
     times = [one.running_time for one in case.measured if one.running_time is not None]
     if case.is_grease and times and min(times) < SETTLED_AFTER_GREASING:
         said.append(
@@ -145,6 +201,21 @@ def _notes(case: Case, found: Calibration) -> tuple[str, ...]:
             "how it was at the reading, or measure again"
         )
     return tuple(said)
+
+
+def _looked_at(explained: Explained) -> list[str]:
+    said = []
+    if explained.unlikely:
+        count = len(explained.unlikely)
+        causes = "1 cause is" if count == 1 else f"{count} causes are"
+        said.append(f"{causes} not listed: each would lie over {LIKELY:g} half widths outside of its usual range")
+    if explained.ruled_out:
+        said.append(f"ruled out: {', '.join(explained.ruled_out)}, which cannot give it alone however far they go")
+    if not explained.likely:
+        said.append(
+            "nothing alone is likely to explain it: check thermometer and state, and look for several causes together"
+        )
+    return [*said, NOT_COMPUTED] if explained.is_hot else said
 
 
 def _residuals(found: Calibration) -> str:

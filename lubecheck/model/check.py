@@ -195,7 +195,7 @@ def _calibrated(variants: Variants, row: int, air_properties: Air) -> Calibrated
         return None
     plain = variants_of(dataclasses.replace(case, measured=(), calibration=None), air_properties)
     before, after = (one.row_band(one.outcome.state.temperature, row) for one in (plain, variants))
-    return calibration_words.told(case, before, after)
+    return calibration_words.told(case, before, after, calibration_words.stop(case, variants.outcome))
 
 
 def _limit(variants: Variants, name: str) -> Limit:

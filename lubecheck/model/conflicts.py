@@ -10,6 +10,7 @@ from collections.abc import Iterator, Sequence
 from lubecheck.data.lubricants import Lubricant
 from lubecheck.errors import shown
 from lubecheck.model.duty_entries import Duty
+from lubecheck.model.entries import Requirements
 from lubecheck.model.entry import entries
 from lubecheck.model.place_entries import Housing, Surroundings
 from lubecheck.model.plan_entries import STREAMS, OilPlan
@@ -63,6 +64,18 @@ def _of_seasons(around: Surroundings) -> Iterator[Problem]:
     elif low is not None and high is not None and not low <= around.ambient <= high:
         given = f"{around.ambient:g} degC"
         yield ("surroundings", "ambient"), given, f"the mean of the year, between {low:g} and {high:g} degC"
+
+
+def of_set_points(limits: Requirements, around: Surroundings | None) -> Iterator[Problem]:
+    """Return set-points of the sensor that would never warn, or always."""
+    alarm, trip = limits.alarm, limits.trip
+    if alarm is not None and trip is not None and alarm > trip:
+        expected = f"at most [limits] trip, {trip:g} degC: an alarm has to come before the machine is stopped"
+        yield ("limits", "alarm"), f"{alarm:g} degC", expected
+    for key, point in (("alarm", alarm), ("trip", trip)):
+        if around is not None and point is not None and point <= around.ambient:
+            expected = f"above [surroundings] ambient, {around.ambient:g} degC: a machine at rest is as warm as that"
+            yield ("limits", key), f"{point:g} degC", expected
 
 
 def of_stream(oil: OilPlan) -> Iterator[Problem]:

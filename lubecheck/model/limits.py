@@ -23,6 +23,7 @@ WITHIN, NEAR_CODE, UNKNOWN, BEYOND = range(4)
 COLD_REFERENCE = 20.0  # degC from which a lower temperature limit counts down
 ELEMENT_SHARE = 0.3  # rolling element diameter over D - d: estimate, 0.25 to 0.33
 FLASH_MARGIN = 50.0  # K that oil stays below its flash point: common practice, 30 to 60
+JUST_OVER = float(np.nextafter(1.0, 2.0))  # use of what has just reached a set-point: it has switched
 REGREASE_RANGE = (0.4, 2.0)  # of the side rule: from the weekly rule of thumb to twice the usual dose, estimate
 
 
@@ -91,16 +92,33 @@ def _rise_over(points: Points, state: Equilibrium, hottest: Array, top: Array) -
     return np.where(state.is_too_hot, np.inf, use)
 
 
+def _or_read(points: Points, computed: Use, read: Array, is_over: Flags) -> Use:
+    """Return a limit of temperature as a reading leaves it: one that is over is beyond, whatever is computed.
+
+    A reading is evidence of its own and needs no model; one that is not over says nothing of other states.
+    """
+    if not is_over.any():
+        return computed
+    room = computed.allowed - points.ambient
+    use = np.where(room > 0, np.fmax((read - points.ambient) / room, JUST_OVER), np.inf)
+    return Use(
+        np.where(is_over, np.fmax(read, computed.demand), computed.demand), computed.allowed,
+        np.where(is_over, np.fmax(use, computed.use), computed.use), computed.applies,
+    )  # fmt: skip
+
+
 def temperature(points: Points, state: Equilibrium) -> Use:
     """Rise over the rise to the lowest top temperature of lubricant, cage, seal, rings and the user."""
     use = _rise_over(points, state, state.temperature, points.highest)
-    return Use(state.temperature, points.highest, use, np.ones(len(points), dtype=bool))
+    computed = Use(state.temperature, points.highest, use, np.ones(len(points), dtype=bool))
+    return _or_read(points, computed, points.read_highest, points.read_highest > points.highest)
 
 
 def set_point(points: Points, state: Equilibrium) -> Use:
     """Rise of the outer ring, where the sensor is, over the rise to the lower of the alarm and the trip set-point."""
     use = _rise_over(points, state, state.outer, points.set_point)
-    return Use(state.outer, points.set_point, use, ~np.isnan(points.set_point))
+    computed = Use(state.outer, points.set_point, use, ~np.isnan(points.set_point))
+    return _or_read(points, computed, points.read_outer, points.read_outer >= points.set_point)
 
 
 def cold_start(points: Points) -> Use:
@@ -202,7 +220,8 @@ def flash_point(points: Points, state: Equilibrium) -> Use:
     p = points
     hottest = np.maximum(state.temperature, np.maximum(state.inner, state.outer))
     top = p.flash_point - FLASH_MARGIN
-    return Use(hottest, top, _rise_over(p, state, hottest, top), (p.is_grease == 0) & ~np.isnan(top))
+    computed = Use(hottest, top, _rise_over(p, state, hottest, top), (p.is_grease == 0) & ~np.isnan(top))
+    return _or_read(p, computed, p.read_highest, p.read_highest > top)
 
 
 def ring_temperature(points: Points, state: Equilibrium) -> Use:
@@ -210,7 +229,8 @@ def ring_temperature(points: Points, state: Equilibrium) -> Use:
     p = points
     hottest = np.maximum(state.inner, state.outer)
     use = _rise_over(p, state, hottest, p.stabilised_to)
-    return Use(hottest, p.stabilised_to, use, np.ones(len(p), dtype=bool))
+    computed = Use(hottest, p.stabilised_to, use, np.ones(len(p), dtype=bool))
+    return _or_read(p, computed, p.read_highest, p.read_highest > p.stabilised_to)
 
 
 def minimum_load(points: Points, state: Equilibrium) -> Use:

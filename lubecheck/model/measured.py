@@ -3,7 +3,9 @@
 from __future__ import annotations
 
 import dataclasses
+import math
 from collections.abc import Iterator
+from typing import Any
 
 from lubecheck.errors import shown
 from lubecheck.model.duty_entries import Duty, ShaftForces
@@ -17,6 +19,7 @@ SETTLED_AFTER_START = 4.0  # h: common practice, the temperature is level 3 to 4
 SETTLED_AFTER_GREASING = 24.0  # h: common practice, the rise after greasing is gone after about a day
 READING_ERROR = 2.0  # K: common practice, 1 to 3 K of a contact thermometer or a resistance sensor at the outer ring
 _UNITS = {"mass": "g", "volume": "cm^3", "share": ""}
+_AS_WRITTEN = ("running_time", "draught", "shaft_temperature", "fill")  # told back in the user's own unit
 _STATE = ("speed", "radial_load", "axial_load")
 _FORCES = tuple(key for key, _ in entries(ShaftForces))
 
@@ -58,12 +61,40 @@ def at_state(case: Case, one: Measured) -> Case:
     )
 
 
+def heat_of(case: Case) -> tuple[Any, ...]:
+    """Return all that a case says and that its temperature hangs on: another one is another machine than was read."""
+    grease, oil = case.grease, case.oil
+    return (
+        case.bearing, case.lubricant, case.duty, case.surroundings, case.housing,
+        grease.fill, grease.housing_fill, grease.given, grease.regreasings,
+        oil.supply, oil.level, oil.flow, oil.inlet, oil.contact,
+    )  # fmt: skip
+
+
+def highest_read(case: Case) -> tuple[float, float]:
+    """Return the highest temperature that was read on housing or outer ring, and anywhere; NaN where none was.
+
+    After a change of what heat hangs on, a reading that is explained speaks through its calibration alone. One that
+    nothing explains stays until it is read again: its cause may still be there.
+    """
+    if not case.measured:
+        return math.nan, math.nan
+    found = case.calibration
+    if found is not None and found.is_explained and found.heat_of != heat_of(case):
+        return math.nan, math.nan
+    outer = [one.temperature for one in case.measured if one.place in (None, "housing", "outer ring")]
+    return max(outer, default=math.nan), max((one.temperature for one in case.measured), default=math.nan)
+
+
 def faults(case: Case, *, is_list: bool) -> Iterator[Problem]:
     """Yield what a measurement lacks, or says beside what excludes it."""
+    texts = dict(case.given)
     for i, one in enumerate(case.measured):
         here: tuple[str | int, ...] = ("measured", i) if is_list else ("measured",)
+        name = f"measured[{i + 1}]" if is_list else "measured"
         for key, given, expected in _faults(case, one):
-            yield (*here, key), given, expected
+            written = texts.get(f"{name}.{key}") if key in _AS_WRITTEN else None
+            yield (*here, key), given if written is None else shown(written), expected
 
 
 def _faults(case: Case, one: Measured) -> Iterator[tuple[str, str, str]]:

@@ -93,6 +93,8 @@ class Points:
     oil_conductance: Array
     machine_heat: Array
     is_doubted: Array  # a temperature was measured that nothing admissible explains
+    read_outer: Array  # degC, the highest that was read on housing or outer ring; NaN where none was
+    read_highest: Array  # degC, the highest that was read anywhere; NaN where none was
     held_temperature: Array  # degC at which the bearing is held; NaN where it is solved for
     interval_factor: Array  # dust, water, vibration, orientation, turning ring, air flow together
     inside_factor: Array  # the part of it that reaches the grease of a closed bearing

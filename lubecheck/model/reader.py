@@ -40,6 +40,7 @@ from lubecheck.units import UnreadableText
 STANDARD_INPUT = "-"
 _ANALYSED = ("measured_viscosity", "water", "iso_code")  # keys of [lubricant] that are of the oil in use
 _KIND_OF_GREASE = ("thickener", "base_oil", "nlgi")  # keys of [lubricant] that make it another one
+_MANY = ("measured", "duty")  # tables that there may be several of
 MOST_MEASURED = 100  # temperatures of one case: a year of weekly readings is 52; more is a log, not a case
 _LARGEST_FILE = 1_000_000  # bytes; a case is a page of text, so more is a slip of the hand
 
@@ -153,6 +154,9 @@ def _toml_fault(message: str, text: str, name: str) -> Fault:
     number = min(int(place[1]), len(lines)) if place else len(lines)
     content = lines[number - 1].strip() if lines else ""
     key = content.partition("=")[0].strip(" []\"'") or "(whole file)"
+    if content.startswith("[") and key in _MANY and reason.startswith(("Cannot overwrite", "Cannot declare")):
+        expected = f"several of them as [[{key}]], each one: write both as [[{key}]]"
+        return Fault(key, shown(content), expected, where=name, line=number)
     return Fault(key[:40], shown(content), f'TOML, such as key = "45 mm" ({reason})', where=name, line=number)
 
 
@@ -202,6 +206,7 @@ class _Reading:
         temperatures = self._measured(document)
         self._problems(conflicts.of_place(housing, duty, surroundings))
         self._problems(conflicts.of_stream(oil))
+        self._problems(conflicts.of_set_points(limits, surroundings))
         self._coolant(housing)
         if grease.given is not None and grease.given.kind == "strokes" and grease.stroke is None:
             self.fault(("grease", "stroke"), "nothing", 'a weighed stroke such as "1.2 g", as strokes were given',

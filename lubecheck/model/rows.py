@@ -17,6 +17,7 @@ from lubecheck.model.calibration import COOLING
 from lubecheck.model.duty_entries import Duty
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import Amount
+from lubecheck.model.measured import highest_read
 from lubecheck.model.place_entries import Housing
 from lubecheck.model.plan_entries import GreasePlan
 from lubecheck.model.points import BEYOND_SETTINGS, FACTORS
@@ -109,14 +110,16 @@ def rows_of(case: Case, reading: Mapping[str, Any], number: int = 0) -> list[dic
 def _calibration_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, float]:
     """What measured temperatures say, found under the same reading; nothing where they are not explained."""
     found = case.calibration
+    outer, highest = highest_read(case)
+    columns = {"is_doubted": 0.0, "read_outer": outer, "read_highest": highest}
     if found is None:
         if case.measured:
             raise NotCalibrated("measured temperatures have to be fitted first: studies.calibrate.calibrated")
-        return {"is_doubted": 0.0}
+        return columns
     if not found.is_explained:
-        return {"is_doubted": 1.0}
+        return columns | {"is_doubted": 1.0}
     is_asked = found.column == COOLING or case.grease.fill == "unknown"  # a fill that was made anew is known
-    return {"is_doubted": 0.0} | ({found.column: found.at(at_worst(reading))} if is_asked else {})
+    return columns | ({found.column: found.at(at_worst(reading))} if is_asked else {})
 
 
 def _propose_one_fill(case: Case, rows: list[dict[str, float]]) -> None:

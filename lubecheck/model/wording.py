@@ -103,7 +103,9 @@ def limit_note(name: str, case: Case, outcome: Outcome) -> str:
     judged = outcome.judged[name]
     row = int(judged.row[0])
     maker = _NOTES.get(name)
-    return maker(case, outcome, row) if maker else ""
+    read = calibration_words.over(case, outcome.points, name, row)
+    by_reading = f"{read}: a reading needs no model" if read else ""
+    return join(by_reading, maker(case, outcome, row) if maker else "")
 
 
 def _film(case: Case, outcome: Outcome, row: int) -> str:
@@ -235,6 +237,8 @@ def _clearance(case: Case, outcome: Outcome, row: int) -> str:
     if math.isnan(points.clearance[row]):
         return f"no clearance table for {case.bearing.family} of this bore, or class"
     left = judged.allowed[0] - judged.demand[0]
+    if math.isnan(left):
+        return f"{case.bearing.clearance}: how much is left could not be judged, as no temperature holds"
     sign = "; below zero: the bearing is preloaded, take a class with more" if left < 0 else ""
     taken = f"{points.fit_loss[row]:.3f} mm by the fits, the rest by a warmer inner ring"
     whole = f"{left:.3f} mm are left of {judged.allowed[0]:.3f} mm on the average"

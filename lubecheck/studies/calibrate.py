@@ -4,8 +4,8 @@ The one unknown is found anew under every reading of what the case leaves out an
 inputs, so that each of these passes through what was measured; that is what narrows the band of a prediction. All of
 them, and all measurements, are rows of one kernel call a step.
 
-A reading that lies outside the band which the estimate has there, its own error included, calibrates nothing: what
-would explain it is looked for in `explain`.
+A reading that lies outside the band which the estimate has there, its own error included, calibrates nothing, nor do
+readings that disagree by more than their errors (`agreement`): what would explain it is looked for in `explain`.
 """
 
 from __future__ import annotations
@@ -33,11 +33,12 @@ from lubecheck.model.calibration import (
 from lubecheck.model.check import readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import TOP_TEMPERATURE, Air, solve
-from lubecheck.model.measured import at_state, finds_fill, reading_error
+from lubecheck.model.measured import at_state, finds_fill, heat_of, reading_error
 from lubecheck.model.measured_entries import PLACES
 from lubecheck.model.points import Points, from_rows, join
 from lubecheck.model.rows import OIL_HEAT_CAPACITY, rows_of
 from lubecheck.physics import cooling
+from lubecheck.studies.agreement import agree
 from lubecheck.studies.roots import roots
 from lubecheck.units import Array
 
@@ -204,7 +205,10 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
     is_reached = count > 1 or bool(np.abs(after[0] - sensors.temperature[0]) <= sensors.error[0])
     # Each reading has to lie where the estimate can be, and so has the curve that is fitted through them.
     is_inside = [((at >= lowest) & (at <= highest)).all() for at in (sensors.temperature, after)]
-    is_explained = is_reached and all(is_inside) and bool((after < TOP_TEMPERATURE).all())
+    is_believed = is_reached and all(is_inside) and bool((after < TOP_TEMPERATURE).all())
+    residuals = sensors.temperature - after
+    is_split = is_believed and not agree(residuals, sensors.error, chi_square)
+    is_explained = is_believed and not is_split
     edges = fit.each(join([usual, usual]), np.stack([lowest, highest])).mean(axis=1)
     ends = fit.ends(usual, float(x[0]), squares if count > 1 else 0.0, scale**2) if is_explained else (x[0], x[0])
     values = unknown.value(x)
@@ -219,15 +223,23 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
         values={},
         ends={},
         draws=(),
-        points=_measured(sensors, nominal[0], after if is_explained else nominal[0]),
+        points=_measured(sensors, nominal[0], after if is_believed else nominal[0]),
         chi_square=chi_square,
         error_scale=scale,
+        heat_of=heat_of(case),
+        is_split=is_split,
+        most_split=int(np.abs(residuals / sensors.error).argmax()),
     )
     if not is_explained:
         from lubecheck.studies.explain import explanations
 
-        found = explanations(case, usual, sensors, (lowest, nominal[0], highest), air_properties)
-        return dataclasses.replace(made, explanations=found)
+        at, band = usual, (lowest, nominal[0], highest)
+        if is_split:  # what sets one apart is looked for from where the others put the cooling, or the fill
+            at, band = (
+                unknown.put(usual, np.repeat(x[:1], count)),
+                (after - sensors.error, after, after + sensors.error),
+            )
+        return dataclasses.replace(made, explained=explanations(case, at, sensors, band, air_properties))
     names = (USUAL, WORST, *(fact.name for fact in facts))
     of_inputs = values[len(said) :].reshape(-1, 2)
     table = {name: (float(pair[0]), float(pair[1])) for (name, _, _), pair in zip(inputs, of_inputs, strict=True)}

@@ -3,6 +3,7 @@
 Each is one quantity of the measured state, moved alone until the estimate gives the reading; or one way to misread a
 thermometer, which has to bring the reading into the band of the estimate. How surprising it is: by how much it lies
 outside its usual range, in half widths of that range. The usual ranges are estimates of this program from practice.
+What would have to be far outside explains nothing and is only counted; what cannot give the reading is ruled out.
 """
 
 from __future__ import annotations
@@ -15,7 +16,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from lubecheck.model.assumptions import STREAM_RANGE
-from lubecheck.model.calibration import Explanation
+from lubecheck.model.calibration import LIKELY, Explained, Explanation
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air, solve
 from lubecheck.model.measured import SETTLED_AFTER_GREASING, SETTLED_AFTER_START, at_state, finds_fill
@@ -60,7 +61,7 @@ class Try:
 
 def explanations(
     case: Case, usual: Points, sensors: Sensors, band: tuple[Array, Array, Array], air_properties: Air
-) -> tuple[Explanation, ...]:
+) -> Explained:
     """Return what would explain the reading that is farthest outside the band of the estimate.
 
     usual: the measured states at the usual reading of what the case leaves out
@@ -75,10 +76,17 @@ def explanations(
     is_hot = bool(sensors.temperature[worst] > nominal[worst])
     tries = list(_tries(state, row, is_hot, air_properties))
     found = [*_found(tries, row, sensor, air_properties)]
+    reached = {item.cause for item in found}
     ends = (float(low[worst]), float(nominal[worst]), float(high[worst]))
     found += _misread(case, worst, row, ends, is_hot)
     found += _not_settled(case, one, row, ends, is_hot)
-    return tuple(sorted(found, key=lambda item: item.surprise))
+    found.sort(key=lambda item: item.surprise)
+    return Explained(
+        likely=tuple(item for item in found if item.surprise <= LIKELY),
+        unlikely=tuple(item for item in found if item.surprise > LIKELY),
+        ruled_out=tuple(one.cause for one in tries if one.cause not in reached),
+        is_hot=is_hot,
+    )
 
 
 def _explanation(cause: str, needed: float, unit: str, usual: tuple[float, float], words: str) -> Explanation:

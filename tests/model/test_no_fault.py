@@ -103,6 +103,23 @@ def test_loads_that_the_family_has_no_rule_for_are_unknown_and_no_number(designa
     check_texts(dataclasses.asdict(result))
 
 
+@pytest.mark.parametrize("name", ["new_motor", "oil_bath_pump", "measured_fan", "pinion_shaft", "belt_fan"])
+@pytest.mark.parametrize("read", [("-20 degC",), ("100 degC",), ("110 degC",), ("172 degC",), ("390 degC",),
+                                  ("60 degC", "90 degC", "40 degC")])  # fmt: skip
+def test_no_text_beside_a_measurement_that_nothing_explains_prints_a_number_that_is_none(name, read):
+    text = (EXAMPLES / f"{name}.toml").read_text()
+    if "\n[measured]" in text:
+        text = text.rpartition("\n[measured]")[0]
+    for key, value in (("shaft_fit", '"k5"'), ("housing_fit", '"H7"')):
+        text = with_key(text, "housing", key, value)
+    text = with_key(with_key(text, "limits", "alarm", '"85 degC"'), "limits", "trip", '"95 degC"')
+    text += "".join(f'\n[[measured]]\nduty = 1\nambient = "20 degC"\ntemperature = "{one}"\n' for one in read)
+    result = lubecheck.check(read_case(text))
+    assert not result.calibration.is_explained
+    check_record(result)
+    check_texts(dataclasses.asdict(result))
+
+
 def check_record(result):
     record = json.loads(to_json(result), parse_constant=pytest.fail)
     assert record["verdict"] in ("within", "near", "beyond", "unknown")

@@ -286,6 +286,7 @@ PUMP = (EXAMPLES / "oil_bath_pump.toml").read_text()
 PINION = (EXAMPLES / "pinion_shaft.toml").read_text()
 MEASURED = '\n[measured]\ntemperature = "64 degC"\n'
 READ = BASE + MEASURED
+SET_POINTS = '\n[limits]\nalarm = "90 degC"\ntrip = "100 degC"\n'
 
 
 @pytest.mark.parametrize(
@@ -324,6 +325,13 @@ READ = BASE + MEASURED
         (PUMP + MEASURED, [("measured", "speed", '"1480 rpm"')], "measured.duty", "no radial_load, axial_load"),
         (PUMP + MEASURED, [("measured", "duty", "3")], "measured.duty", "1 to 2"),
         (PUMP + MEASURED, [("measured", "duty", "2"), ("measured", "fill", '"15 g"')], "measured.fill", "is oil"),
+        (READ, [("measured", "running_time", '"20 min"')], "measured.running_time", 'given "20 min"'),
+        (BASE + SET_POINTS, [("limits", "alarm", '"101 degC"')], "limits.alarm",
+         "given 101 degC; expected at most [limits] trip, 100 degC"),
+        (BASE + SET_POINTS, [("limits", "alarm", '"40 degC"')], "limits.alarm",
+         "above [surroundings] ambient, 40 degC"),
+        (BASE + SET_POINTS, [("limits", "alarm", None), ("limits", "trip", '"35 degC"')], "limits.trip",
+         "above [surroundings] ambient, 40 degC"),
         (PINION + MEASURED, [("measured", "radial_load", '"3 kN"')], "measured.radial_load", "by its number"),
     ],
 )  # fmt: skip
@@ -366,6 +374,21 @@ def test_a_fault_of_a_measurement_says_which(text, key, word):
     assert fault.key == key
     assert word in str(fault)
     assert fault.line
+
+
+@pytest.mark.parametrize("heads", [("[measured]", "[[measured]]"), ("[[measured]]", "[measured]"),
+                                   ("[measured]", "[measured]")])  # fmt: skip
+def test_one_measured_table_beside_several_is_told_how_to_write_both(heads):
+    text = BASE + "".join(MEASURED.replace("[measured]", head) for head in heads)
+    (fault,) = faults_of(text)
+    assert fault.key == "measured"
+    assert "write both as [[measured]]" in str(fault)
+    assert fault.line == text[: text.rindex("[measured]")].count("\n") + 1
+
+
+@pytest.mark.parametrize("alarm", ["100 degC", "90 degC"])
+def test_an_alarm_may_be_as_high_as_the_trip(alarm):
+    assert read_case(with_key(BASE + SET_POINTS, "limits", "alarm", f'"{alarm}"')).limits.trip == 100.0
 
 
 def test_a_measurement_stands_on_its_duty_point_or_on_what_it_says():
