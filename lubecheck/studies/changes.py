@@ -20,6 +20,7 @@ from lubecheck.errors import InputError
 from lubecheck.model.entries import TABLES, Case
 from lubecheck.model.entry import Amount, entries
 from lubecheck.model.glance import Glances
+from lubecheck.model.kernel import HEAT_LIMITS
 from lubecheck.model.limits import BEYOND, NEAR_CODE
 from lubecheck.model.reader import read_value
 from lubecheck.model.rows import running_hours
@@ -42,8 +43,6 @@ LEAST_STREAM = 0.05  # l/min that a valve can still be set to: estimate
 WARM_INLET = 40.0  # degC, of oil that comes from a cooler: common practice, 40 to 50
 COOLER_MARGIN = 10.0  # K that a cooler leaves between oil and air: common practice, 8 to 15
 TANK_MINUTES = 10.0  # of the flow that the tank holds: common practice, 5 to 10
-# Limits that a bath fails when it is too hot.
-BATH_HEAT = ("temperature", "set_point", "rings", "flash_point", "film", "interval")
 
 
 @dataclass(frozen=True, slots=True)
@@ -242,7 +241,7 @@ def usual_inlet(case: Case) -> float:
 def _streams(case: Case, before: Glances) -> Iterator[Change]:
     """Oil that circulates through a cooler in place of a bath that is too hot."""
     oil, bearing = case.oil, case.bearing
-    if oil.supply not in (None, "bath") or bearing.sealed_sides == 2 or not _fails(before, *BATH_HEAT):
+    if oil.supply not in (None, "bath") or bearing.sealed_sides == 2 or not _fails(before, *HEAT_LIMITS):
         return
     inlet = f"{usual_inlet(case):g} degC"
     wetting = float(oil_life.guide_flow.plain(outside=bearing.outside, width=bearing.width))
