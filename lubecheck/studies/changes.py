@@ -73,18 +73,20 @@ def _edited(case: Case, key: str, value: str | Mapping[str, str] | None) -> Case
     table, _, name = key.partition(".")
     if table == "bearing" and value is not None:
         return dataclasses.replace(case, bearing=_of_class(case.bearing, name, value))
-    number = _DUTY.fullmatch(table)
-    read: Any = None if value is None else _read("duty" if number else table, name, value)
-    if number:
-        i = int(number[1]) - 1
-        duty = (*case.duty[:i], dataclasses.replace(case.duty[i], **{name: read}), *case.duty[i + 1 :])
-        return dataclasses.replace(case, duty=duty)
+    number = _NUMBERED.fullmatch(table)
+    kind = number[1] if number else table
+    read: Any = None if value is None else _read(kind, name, value)
+    if number or kind == "measured":
+        i = int(number[2]) - 1 if number else 0
+        parts = getattr(case, kind)
+        changed_part = dataclasses.replace(parts[i], **{name: read})
+        return dataclasses.replace(case, **{kind: (*parts[:i], changed_part, *parts[i + 1 :])})
     changed: Any = dataclasses.replace(getattr(case, table), **{name: read})
     return dataclasses.replace(case, **{table: changed})
 
 
 # A change meets every other in a pair, so what its text says is read once.
-_DUTY = re.compile(r"duty\[(\d+)\]")
+_NUMBERED = re.compile(r"(duty|measured)\[(\d+)\]")
 _read = functools.lru_cache(1000)(read_value)
 
 

@@ -63,6 +63,10 @@ def check(case: Case, *, warm_up: bool = False, air_properties: Air = air.proper
         result = dataclasses.replace(result, needs=found)
     if is_failing:
         result = dataclasses.replace(result, remedies=find(case, air_properties=air_properties))
+    if case.measured and (result.remedies or result.needs.found):
+        from lubecheck.studies import beside_measured  # here, as few cases have readings
+
+        result = beside_measured.told(case, result, air_properties)
     if warm_up or case.grease.given is not None:
         from lubecheck.studies import warmup  # here, as few ask for it
 
