@@ -9,7 +9,7 @@ from __future__ import annotations
 
 import dataclasses
 from collections.abc import Iterator, Sequence
-from typing import Any
+from typing import Any, TypeVar
 
 import numpy as np
 
@@ -20,31 +20,36 @@ from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.measured import at_state
 from lubecheck.model.points import join
-from lubecheck.model.result import Result
+from lubecheck.model.result import Need, Remedy, Result
 from lubecheck.model.rows import rows_of
 from lubecheck.studies.calibrate import sensors_of, states_of, unknown_of
 from lubecheck.studies.changes import Change, Edit, apply
 
 AGAIN = "measure again after it"
 SAME = 1e-6  # K that a computed reading may move by the digits of an edit's text
+Row = TypeVar("Row", Remedy, Need)
+
 _UNITS = {"draught": "m/s", "shaft_temperature": "degC"}
 
 
 def told(case: Case, result: Result, air_properties: Air = air.properties) -> Result:
     """Return a result whose remedies and needs hold when their edits are written beside what was measured."""
-    remedies, needs = list(result.remedies), list(result.needs.found)
-    rows = _kept(case, [one.edits for one in (*remedies, *needs)], air_properties)
-    for found in (remedies, needs):
-        for i, one in enumerate(found):
-            edits, is_again = next(rows)
-            note = "; ".join(part for part in (AGAIN if is_again else "", one.note) if part)
-            found[i] = dataclasses.replace(one, edits=edits, note=note)
+    remedies, needs = result.remedies, result.needs.found
+    edits = [*(one.edits for one in remedies), *(one.edits for one in needs)]
+    rows = _kept(case, edits, air_properties)
+    changed_remedies = tuple(_with(one, *kept) for one, kept in zip(remedies, rows[: len(remedies)], strict=True))
+    changed_needs = tuple(_with(one, *kept) for one, kept in zip(needs, rows[len(remedies) :], strict=True))
     return dataclasses.replace(
-        result, remedies=tuple(remedies), needs=dataclasses.replace(result.needs, found=tuple(needs))
+        result, remedies=changed_remedies, needs=dataclasses.replace(result.needs, found=changed_needs)
     )
 
 
-def _kept(case: Case, many: Sequence[tuple[Edit, ...]], air_properties: Air) -> Iterator[tuple[tuple[Edit, ...], bool]]:
+def _with(row: Row, edits: tuple[Edit, ...], is_again: bool) -> Row:
+    note = "; ".join(part for part in (AGAIN if is_again else "", row.note) if part)
+    return dataclasses.replace(row, edits=edits, note=note)
+
+
+def _kept(case: Case, many: Sequence[tuple[Edit, ...]], air_properties: Air) -> list[tuple[tuple[Edit, ...], bool]]:
     """Return each change's edits with what keeps the readings as they were, and whether some of them is not kept."""
     kept = [(*edits, *_old_values(case, edits)) if edits else () for edits in many]
     changed = [apply(case, Change("", "", 0, edits)) for edits in kept]
@@ -53,9 +58,11 @@ def _kept(case: Case, many: Sequence[tuple[Edit, ...]], air_properties: Air) -> 
     value = made.value if made is not None and made.is_explained else float(unknown.value(unknown.nominal))
     points = join([states_of(one, readings(one)[1][0]) for one in changed] + [states_of(case, usual)])
     read = sensors.read(points.changed(**{unknown.column: value}), air_properties)
-    for edits, one, at in zip(kept, changed, read, strict=False):
-        is_same = unknown_of(one) == unknown and bool((np.abs(at - read[-1]) < SAME).all())
-        yield edits, bool(edits) and not is_same
+    is_same = (np.abs(read[:-1] - read[-1]) < SAME).all(axis=1).tolist()
+    return [
+        (edits, bool(edits) and not (same and unknown_of(one) == unknown))
+        for edits, one, same in zip(kept, changed, is_same, strict=True)
+    ]
 
 
 def _old_values(case: Case, edits: tuple[Edit, ...]) -> Iterator[Edit]:

@@ -80,7 +80,8 @@ def _edited(case: Case, key: str, value: str | Mapping[str, str] | None) -> Case
         i = int(number[2]) - 1 if number else 0
         parts = getattr(case, kind)
         changed_part = dataclasses.replace(parts[i], **{name: read})
-        return dataclasses.replace(case, **{kind: (*parts[:i], changed_part, *parts[i + 1 :])})
+        whole: Any = (*parts[:i], changed_part, *parts[i + 1 :])
+        return dataclasses.replace(case, **{kind: whole})
     changed: Any = dataclasses.replace(getattr(case, table), **{name: read})
     return dataclasses.replace(case, **{table: changed})
 
