@@ -88,13 +88,13 @@ def check(
         bool, typer.Option("--warmup", help="Follow starts, regreasing and a cold start too, and judge their peaks.")
     ] = False,
     hold: Annotated[
-        str,
+        str | None,
         typer.Option(
             metavar="TEMPERATURE",
             help="Tell what draught, housing area, oil flow or fill alone holds a temperature such as '70 degC', or "
             "'limit' for the highest that the case allows. Told unasked where heat brings a limit near or beyond.",
         ),
-    ] = "",
+    ] = None,
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
@@ -105,7 +105,7 @@ def check(
         load_case(case, own=own_lubricants(lubricants)),
         warm_up=warmup,
         air_properties=air.exact if exact_fluids else air.properties,
-        hold=hold or None,
+        hold=hold,
     )
     if json:
         from lubecheck.faces.record import to_json
