@@ -45,8 +45,15 @@ def told(case: Case, result: Result, air_properties: Air = air.properties) -> Re
 
 
 def _with(row: Row, edits: tuple[Edit, ...], is_again: bool) -> Row:
-    note = "; ".join(part for part in (AGAIN if is_again else "", row.note) if part)
-    return dataclasses.replace(row, edits=edits, note=note)
+    said = dict.fromkeys(_words(key, str(value)) for key, value in edits if key.startswith("measured"))
+    first = AGAIN if is_again else f"say in [measured] {' and '.join(said)}" if said else ""
+    return dataclasses.replace(row, edits=edits, note="; ".join(part for part in (first, row.note) if part))
+
+
+def _words(key: str, text: str) -> str:
+    """Say an old value as people write it: its edit has all digits."""
+    number, unit = text.split()
+    return f"{key.partition('.')[2]} {float(number):.4g} {unit}"
 
 
 def _kept(case: Case, many: Sequence[tuple[Edit, ...]], air_properties: Air) -> list[tuple[tuple[Edit, ...], bool]]:

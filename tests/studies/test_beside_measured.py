@@ -81,6 +81,7 @@ def test_each_need_beside_a_reading_holds_what_was_asked(solved):
 def test_the_fan_says_its_old_draught_and_the_strong_draught_keeps_its_promise():
     result = lubecheck.check(read_case(FAN))
     (draught,) = [one for one in result.remedies if one.change.startswith("draught of 3 m/s")]
+    assert draught.note.startswith("say in [measured] draught 0 m/s; uses: ")
     assert dict(draught.edits) == {"surroundings.draught": "3 m/s", "measured.draught": "0 m/s"}
     fresh = lubecheck.check(read_case(edited(FAN, draught.edits)))
     assert fresh.verdict == "within"
