@@ -94,9 +94,9 @@ def edited(text: str, edits) -> str:
             document[key] = value
             continue
         table, _, name = key.partition(".")
-        number = re.fullmatch(r"duty\[(\d+)\]", table)
+        number = re.fullmatch(r"(duty|measured)\[(\d+)\]", table)
         part = (
-            document["duty"][int(number[1]) - 1]
+            document[number[1]][int(number[2]) - 1]
             if number
             else document.setdefault(table, {})
             if value

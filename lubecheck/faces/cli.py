@@ -98,14 +98,14 @@ def check(
 ) -> None:
     """Judge one bearing position: film, temperature, fill, interval, speed, loads and life, solved together."""
     from lubecheck.data import air
-    from lubecheck.model.reader import load_case, read_hold
+    from lubecheck.model.reader import load_case
     from lubecheck.studies.remedies import check as judge
 
     result = judge(
         load_case(case, own=own_lubricants(lubricants)),
         warm_up=warmup,
         air_properties=air.exact if exact_fluids else air.properties,
-        hold=None if hold is None else read_hold(hold),
+        hold=hold,
     )
     if json:
         from lubecheck.faces.record import to_json

@@ -62,6 +62,7 @@ def of_result(result: Result) -> dict[str, Any]:
         "remedies": [dataclasses.asdict(remedy) for remedy in result.remedies],
         "needs": [dataclasses.asdict(need) for need in result.needs.found],
         "needs_for": result.needs.question,
+        "needs_note": result.needs.note,
         "warm_up": warm_up(result.warm_up),
         "notes": list(result.notes),
         "cautions": list(result.cautions),

@@ -176,10 +176,13 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
     p, found = outcome.points, outcome.lines
     bath, oxidation = _finite(found.bath[0]), _finite(found.oxidation[0])
     is_bath, is_circulating = bool(p.is_bath[0]), bool(p.is_circulating[0])
-    charge = float(intervals.charge_share(p, outcome.state.friction_power)[int(outcome.hottest[0])])
-    factors = tuple(f for f in (("water", float(p.water_share[0])), ("volume", charge)) if f[1] != 1.0)
     hot = "the bath is hotter than the rule goes"
     low, high = oil_life.OXIDATION_RANGE
+
+    def factors(rule: intervals.OilRule) -> Factors:
+        found = (("water", float(p.water_share[0])), ("volume", _charge(outcome, rule)))
+        return tuple(factor for factor in found if factor[1] != 1.0 and math.isfinite(factor[1]))
+
     return (
         IntervalLine(
             name="bath rule",
@@ -187,7 +190,7 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
             failed=None,
             applies=is_bath and bath is not None,
             governs=bool(is_bath and bath is not None and bath == found.allowed[0]),
-            factors=factors,
+            factors=factors(grease_life.bath_change_interval),
             basis="bath-handbooks",
             note=("12 months up to 50 degC, 3 at 100 degC" if bath is not None else hot)
             if is_bath
@@ -199,7 +202,7 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
             failed=None,
             applies=(is_bath or is_circulating) and oxidation is not None,
             governs=bool(oxidation is not None and oxidation == found.allowed[0]),
-            factors=factors,
+            factors=factors(oil_life.oxidation_life),
             basis="whitby",
             note=f"4 years up to 70 degC, halved each 10 K; published rates {low:g} to {high:g} times each 10 K; read "
             f"at the bearing's temperature, the hottest place of the oil, valid to {oil_life.OXIDATION_TOP:g} degC",
@@ -207,11 +210,19 @@ def _oil_lines(case: Case, outcome: Outcome) -> tuple[IntervalLine, ...]:
     )
 
 
+def _charge(outcome: Outcome, rule: intervals.OilRule) -> float:
+    """Return the factor by the size of the oil charge that a rule takes at the hottest state."""
+    found = intervals.charge_in_effect(outcome.points, outcome.state.temperature, outcome.state.friction_power, rule)
+    return float(found[int(outcome.hottest[0])])
+
+
 def charge_words(case: Case, outcome: Outcome) -> str:
     """Say how large the oil charge is beside an ordinary one, where it was stated."""
     p, row = outcome.points, int(outcome.hottest[0])
     volume = float(p.oil_volume[row])
     share = float(intervals.charge_share(p, outcome.state.friction_power)[row])
+    is_bath_rule = bool(p.is_bath[0]) and not outcome.lines.bath[0] > outcome.lines.oxidation[0]
+    taken = _charge(outcome, grease_life.bath_change_interval if is_bath_rule else oil_life.oxidation_life)
     if p.is_bath[0]:
         figure = volume / float(outcome.state.friction_power[row])
         low, high = oil_life.ORDINARY_SUMP
@@ -227,7 +238,11 @@ def charge_words(case: Case, outcome: Outcome) -> str:
     size = f"{figure:.2g} {unit}, ordinary are {low:g} to {high:g} {unit.split()[0]}"
     if figure < low:
         return f"a small charge, {size}: the rule may be too long for it, look at the oil or change it earlier"
-    return f"a large charge, {size}: x {share:.2f} (estimate)"
+    if not math.isfinite(taken):
+        return f"a large charge, {size}"
+    longest = "12 months" if is_bath_rule else "4 years"
+    cap = f", not past the {longest} that a cool oil serves" if taken < share else ""
+    return f"a large charge, {size}: x {taken:.2f} (estimate){cap}"
 
 
 def interval_note(case: Case, outcome: Outcome) -> str:

@@ -16,6 +16,8 @@ from lubecheck.model.points import Points
 from lubecheck.physics import grease_corrections, grease_curve, grease_life, oil_life
 from lubecheck.units import DAY_H, Array
 
+OilRule = Method[..., Array]  # calendar time that an oil serves at a temperature
+
 
 @dataclass(frozen=True, slots=True)
 class Lines:
@@ -41,11 +43,8 @@ def of(points: Points, temperature: Array, load_ratio: Array, power: Array) -> L
     classical = damage_sum(p, classical_rows(p, temperature, load_ratio))
     classical *= to_share(grease_life.L01, failed)
     booser = damage_sum(p, booser_rows(p, temperature, load_ratio)) * to_share(grease_life.L50, failed)
-    charge = charge_share(p, power)
-    bath = damage_sum(p, charge * _calendar(p, temperature, grease_life.bath_change_interval))
-    # A large charge ages more slowly where it is hot; no charge serves longer than a cool one.
-    coolest = _calendar(p, np.zeros(len(p)), oil_life.oxidation_life)
-    oxidation = damage_sum(p, np.minimum(charge * _calendar(p, temperature, oil_life.oxidation_life), coolest))
+    bath = damage_sum(p, _oil_rows(p, temperature, power, grease_life.bath_change_interval))
+    oxidation = damage_sum(p, _oil_rows(p, temperature, power, oil_life.oxidation_life))
     worksheet = damage_sum(p, worksheet_rows(p, temperature, load_ratio)) * to_share(grease_curve.FAILED, failed)
     parameter = grease_corrections.worksheet_parameter.plain(p.k_f, p.speed, p.pitch_diameter)
 
@@ -125,8 +124,25 @@ def worksheet_rows(points: Points, temperature: Array, load_ratio: Array) -> Arr
 LITHIUM_REFERENCE = 70.0  # degC, of the grease that Booser's equation stands for without corrections
 
 
+def _oil_rows(points: Points, temperature: Array, power: Array, rule: OilRule) -> Array:
+    """Return the running hours of each row by an oil rule, with what the size of the charge does to them."""
+    return charge_in_effect(points, temperature, power, rule) * _calendar(points, temperature, rule)
+
+
+def charge_in_effect(points: Points, temperature: Array, power: Array, rule: OilRule) -> Array:
+    """Return the factor by the size of the oil charge that a rule takes at each row's temperature.
+
+    A large charge ages more slowly where it is hot. No charge serves longer than the rule gives a cool one: the 12
+    months of a bath and the 4 years of oxidation are the longest that is published, for contamination and additives
+    too, so that the factor fades out towards the cool end.
+    """
+    coolest = _calendar(points, np.zeros(len(points)), rule)
+    found: Array = np.minimum(charge_share(points, power), coolest / _calendar(points, temperature, rule))
+    return found
+
+
 def charge_share(points: Points, power: Array) -> Array:
-    """Return what the size of the oil charge does to its change interval; 1 where it was not stated."""
+    """Return what the size of a hot oil charge does to its change interval; 1 where it was not stated."""
     p = points
     sump = oil_life.sump_share.plain(p.oil_volume, power)
     circuit = oil_life.circuit_share.plain(oil_life.dwell_time.plain(p.oil_volume, p.oil_flow))
@@ -134,7 +150,7 @@ def charge_share(points: Points, power: Array) -> Array:
     return np.where(np.isnan(share), 1.0, share)
 
 
-def _calendar(points: Points, temperature: Array, rule: Method[..., Array]) -> Array:
+def _calendar(points: Points, temperature: Array, rule: OilRule) -> Array:
     """Return the running hours in the calendar time that an oil rule allows at each row's temperature."""
     life = rule.plain(temperature) * points.water_share * points.hours_per_day / DAY_H
     return np.where(rule.outside(temperature=temperature), np.nan, life)

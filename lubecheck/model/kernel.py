@@ -19,6 +19,9 @@ from lubecheck.units import Array
 PROPOSED_SHARE = 0.8  # of the allowed interval that is proposed: leaves a fifth for what varies, so that it is `within`
 # Limits that the bearing's temperature moves: a measured one that nothing explains leaves them unknown.
 MOVED_BY_HEAT = ("film", "temperature", "set_point", "rings", "flash_point", "clearance", "interval", "fatigue_life")
+DECIDED_BY_HEAT = ("temperature", "set_point", "rings", "flash_point")
+MAY_FAIL_BY_HEAT = ("film", "interval")  # or by the oil, the load or the dirt
+HEAT_LIMITS = (*DECIDED_BY_HEAT, *MAY_FAIL_BY_HEAT)
 
 
 @dataclass(frozen=True, slots=True)

@@ -26,7 +26,7 @@ from lubecheck.model import conflicts, measured
 from lubecheck.model.cleanliness import contradictions
 from lubecheck.model.duty_entries import Duty, Shaft
 from lubecheck.model.entries import TABLES, Case, Cleanliness, Requirements
-from lubecheck.model.entry import entries
+from lubecheck.model.entry import Entry, entries
 from lubecheck.model.measured_entries import Measured
 from lubecheck.model.part_entries import BearingTable, LubricantTable
 from lubecheck.model.place_entries import Housing, Surroundings
@@ -35,7 +35,7 @@ from lubecheck.model.shaft import Problem, duty_faults, faults, opposed_faults
 from lubecheck.model.toml_lines import key_lines
 from lubecheck.model.values import value_of
 from lubecheck.physics import friction
-from lubecheck.units import UnreadableText
+from lubecheck.units import KINDS, UnreadableText, is_quantity, quantity_to_house
 
 STANDARD_INPUT = "-"
 _ANALYSED = ("measured_viscosity", "water", "iso_code")  # keys of [lubricant] that are of the oil in use
@@ -117,16 +117,27 @@ def read_life(text: str) -> float:
         raise CaseError([Fault("life", shown(text), refused.expected, nearest=refused.near)]) from None
 
 
-def read_hold(text: str) -> float | str:
-    """Return a temperature to hold in degC, or "limit" for the highest allowed. Raises CaseError for any other text."""
-    if text.strip() == "limit":
-        return "limit"
+def read_hold(value: object) -> float | None:
+    """Return a temperature to hold in degC, of a text or a quantity; None for "limit", the highest that a case allows.
+
+    Raises CaseError for anything else.
+    """
+    if isinstance(value, str) and value.strip().casefold() == "limit":
+        return None
     entry = dict(entries(Requirements))["highest_temperature"]
     try:
-        return float(value_of(text, entry))
+        return _temperature(value, entry) if is_quantity(value) else float(value_of(value, entry))
     except UnreadableText as refused:
-        expected = f'{refused.expected}, or "limit" for the highest that the case allows'
-        raise CaseError([Fault("--hold", shown(text), expected, nearest=refused.near)]) from None
+        expected = f'{entry.expected}, or "limit" for the highest that the case allows'
+        raise CaseError([Fault("hold", shown(value), expected, nearest=refused.near)]) from None
+
+
+def _temperature(value: object, entry: Entry) -> float:
+    """Return a quantity in degC; UnreadableText where it is no single temperature in the range of the entry."""
+    found = quantity_to_house(value, KINDS["temperature"])
+    if found.ndim or not entry.low <= found <= entry.high:
+        raise UnreadableText(entry.expected)
+    return float(found)
 
 
 def _whole_file(name: str, given: str, expected: str, line: int | None = None) -> CaseError:

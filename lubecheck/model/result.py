@@ -303,6 +303,7 @@ class Needs:
     question: str = ""  # what is to be held, in words; empty where nothing was asked
     found: tuple[Need, ...] = ()
     is_due: bool = False  # it was asked, or heat brings a limit near or beyond
+    note: str = ""  # what the figures rest on that was not said, or why there are none
 
 
 @dataclass(frozen=True, slots=True)

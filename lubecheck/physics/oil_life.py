@@ -25,7 +25,8 @@ ORDINARY_SUMP = (5.0, 10.0)  # cm^3 a W of friction, which is l a kW
 ORDINARY_DWELL = (LEAST_DWELL, 2 * LEAST_DWELL)  # h
 # A larger charge ages more slowly: handbooks agree and print no figure. In proportion above the ordinary range and at
 # most doubled is an estimate of this program (1 to 4 times can be true); a smaller charge is told and gains nothing,
-# and so does one that nobody stated: 1 is the cautious end.
+# and so does one that nobody stated: 1 is the cautious end. No charge is given longer than the longest that a rule
+# prints, which is for a cool oil.
 MOST_BY_CHARGE = 2.0
 
 # Share of the change interval that is left with water about: estimates of this program; only "half where water gets

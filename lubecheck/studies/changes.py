@@ -20,6 +20,7 @@ from lubecheck.errors import InputError
 from lubecheck.model.entries import TABLES, Case
 from lubecheck.model.entry import Amount, entries
 from lubecheck.model.glance import Glances
+from lubecheck.model.kernel import HEAT_LIMITS
 from lubecheck.model.limits import BEYOND, NEAR, NEAR_CODE
 from lubecheck.model.reader import read_value
 from lubecheck.model.rows import running_hours
@@ -44,8 +45,6 @@ COOLER_MARGIN = 10.0  # K that a cooler leaves between oil and air: common pract
 COIL_FLOWS = (2.0, 5.0, 10.0)  # l/min of water through a cooling coil or jacket: common practice, 2 to 10
 COIL_INLET = 30.0  # degC, of a plant's cooling water in summer: common practice, 20 to 32
 TANK_MINUTES = 10.0  # of the flow that the tank holds: common practice, 5 to 10
-# Limits that a bath fails when it is too hot.
-BATH_HEAT = ("temperature", "set_point", "rings", "flash_point", "film", "interval")
 
 
 @dataclass(frozen=True, slots=True)
@@ -78,18 +77,21 @@ def _edited(case: Case, key: str, value: str | Mapping[str, str] | None) -> Case
     table, _, name = key.partition(".")
     if table == "bearing" and value is not None:
         return dataclasses.replace(case, bearing=_of_class(case.bearing, name, value))
-    number = _DUTY.fullmatch(table)
-    read: Any = None if value is None else _read("duty" if number else table, name, value)
-    if number:
-        i = int(number[1]) - 1
-        duty = (*case.duty[:i], dataclasses.replace(case.duty[i], **{name: read}), *case.duty[i + 1 :])
-        return dataclasses.replace(case, duty=duty)
+    number = _NUMBERED.fullmatch(table)
+    kind = number[1] if number else table
+    read: Any = None if value is None else _read(kind, name, value)
+    if number or kind == "measured":
+        i = int(number[2]) - 1 if number else 0
+        parts = getattr(case, kind)
+        changed_part = dataclasses.replace(parts[i], **{name: read})
+        whole: Any = (*parts[:i], changed_part, *parts[i + 1 :])
+        return dataclasses.replace(case, **{kind: whole})
     changed: Any = dataclasses.replace(getattr(case, table), **{name: read})
     return dataclasses.replace(case, **{table: changed})
 
 
 # A change meets every other in a pair, so what its text says is read once.
-_DUTY = re.compile(r"duty\[(\d+)\]")
+_NUMBERED = re.compile(r"(duty|measured)\[(\d+)\]")
 _read = functools.lru_cache(1000)(read_value)
 
 
@@ -256,7 +258,7 @@ def usual_inlet(case: Case) -> float:
 def _streams(case: Case, before: Glances) -> Iterator[Change]:
     """Oil that circulates through a cooler in place of a bath that is too hot."""
     oil, bearing = case.oil, case.bearing
-    if oil.supply not in (None, "bath") or bearing.sealed_sides == 2 or not _fails(before, *BATH_HEAT):
+    if oil.supply not in (None, "bath") or bearing.sealed_sides == 2 or not _fails(before, *HEAT_LIMITS):
         return
     inlet = f"{usual_inlet(case):g} degC"
     wetting = float(oil_life.guide_flow.plain(outside=bearing.outside, width=bearing.width))

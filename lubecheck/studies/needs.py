@@ -18,7 +18,7 @@ from lubecheck.data import air
 from lubecheck.model.check import readings
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
-from lubecheck.model.kernel import Outcome, judge
+from lubecheck.model.kernel import DECIDED_BY_HEAT, MAY_FAIL_BY_HEAT, Outcome, judge
 from lubecheck.model.limits import BEYOND, NEAR, NEAR_CODE, STATES
 from lubecheck.model.points import from_rows
 from lubecheck.model.result import Need, Needs
@@ -27,8 +27,6 @@ from lubecheck.studies.changes import Change, Edit, apply
 from lubecheck.studies.means import Means, means_of
 from lubecheck.units import Array
 
-OF_HEAT = ("temperature", "rings", "flash_point", "set_point")  # heat is what decides these
-MAY_BE_OF_HEAT = ("film", "interval")
 PLACES = 17  # at which a means is looked at first
 PARTS, ROUNDS = 12, 4  # the gap is divided into parts again and again: 2e4 in all
 DIGITS = 5  # of a figure, rounded to the side that holds
@@ -52,14 +50,16 @@ def find(
     hold [degC]: temperature that the hottest duty point is to have
     """
     search = _Search(case, hold, air_properties)
-    means = list(means_of(case, search.now))
     is_due = is_asked or hold is not None or search.is_short
+    if search.is_blind:
+        return Needs(search.words, (), is_due, search.is_blind) if is_due else Needs()
+    means = list(means_of(case, search.now))
     if not is_due:
         means = [one for one in means if one.name == "oil flow" and one.now is not None]
     elif not search.is_short:
         means = [one for one in means if one.now is not None]  # what holds without a stream needs none
-    found = [*search.needs(means), *(search.relief() if search.is_short else ())] if search.names else []
-    return Needs(search.words if found else "", tuple(found), is_due)
+    found = [*search.needs(means), *(search.relief() if search.is_short else ())]
+    return Needs(search.words, tuple(found), is_due, search.unsaid()) if found else Needs()
 
 
 class _Search:
@@ -70,6 +70,7 @@ class _Search:
         self.now = self.outcome([case])
         self.names, self.words = self._asked()
         self.is_short = bool(self.names) and not self.holds(self.now)[0]
+        self.is_blind = self._is_blind()
 
     def outcome(self, cases: Sequence[Case]) -> Outcome:
         """Judge cases in one call, each at the usual reading of what it leaves out."""
@@ -84,14 +85,36 @@ class _Search:
         if self.hold is not None:
             return ("temperature",), f"{self.hold:g} degC"
         judged = self.now.judged
-        names = [name for name in OF_HEAT if judged[name].applies[0] and not math.isnan(judged[name].use[0])]
-        failing = [name for name in MAY_BE_OF_HEAT if judged[name].applies[0] and judged[name].use[0] > NEAR]
+        names = [name for name in DECIDED_BY_HEAT if judged[name].applies[0] and not math.isnan(judged[name].use[0])]
+        failing = [name for name in MAY_FAIL_BY_HEAT if judged[name].applies[0] and judged[name].use[0] > NEAR]
         if failing:
             points = self.now.points
             cool = judge(points.changed(held_temperature=points.ambient), self.air)
             names += [name for name in failing if cool.judged[name].use[0] <= NEAR]
-        told = [name for name in names if judged[name].use[0] > NEAR] or names
+        told = [name for name in names if judged[name].use[0] > NEAR] or names or ["what heat decides"]
         return tuple(names), f"{_listed(told)} at a use of {NEAR:g} of 1"
+
+    def _is_blind(self) -> str:
+        """Say why there can be no figures; empty where there can."""
+        made = self.case.calibration
+        if made is not None and not made.is_explained:
+            return "no figures: a measured temperature contradicts the computed one, and nothing was calibrated"
+        state = self.now.state
+        if not self.names or (self.hold is not None and not (state.is_found | state.is_too_hot).all()):
+            return "no figures: what heat decides cannot be judged at the usual reading of what was not said"
+        return ""
+
+    def unsaid(self) -> str:
+        """Name the facts that were not said and would ask for more at their worst; empty where there are none."""
+        facts, said = readings(self.case)
+        facts_said = list(zip(facts, said[2:], strict=True))
+        if not facts_said:
+            return ""
+        rows = [row for i, (_, reading) in enumerate(facts_said) for row in rows_of(self.case, reading, i)]
+        levels, now = self.level(judge(from_rows(rows), self.air)), float(self.level(self.now)[0])
+        moving = [fact for fact, level in zip(facts, levels.tolist(), strict=True) if level > now]
+        listed = ", ".join(f"{fact.name} ({fact.text})" for fact in moving)
+        return f"at the usual reading of what was not said, more at the worst: {listed}" if moving else ""
 
     def level(self, outcome: Outcome) -> Array:
         """Return what is held of each position: the temperature, or the greatest use; infinite where there is none."""
@@ -114,9 +137,9 @@ class _Search:
             found = self._gaps(means, finer)
             gaps = [new or old for new, old in zip(found, gaps, strict=True)]
         amounts: list[float | None] = []
-        for path, gap in zip(paths, gaps, strict=True):
-            if gap is None:  # it never holds, or always does
-                amounts.append(None if self.is_short or path is None else float(path[-1]))
+        for one, gap in zip(means, gaps, strict=True):
+            if gap is None:  # it never holds, or does so as far as it goes
+                amounts.append(None if self.is_short else one.worse)
             else:
                 held, other = (gap.second, gap.first) if self.is_short else (gap.first, gap.second)
                 amounts.append(_rounded(held, away_from=other))

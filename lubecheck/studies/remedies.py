@@ -17,9 +17,11 @@ from lubecheck.data import air
 from lubecheck.model.check import check as judge_case
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
+from lubecheck.model.kernel import HEAT_LIMITS
 from lubecheck.model.limits import NEAR, STATES, UNKNOWN, WITHIN
 from lubecheck.model.plan_entries import STREAMS
 from lubecheck.model.points import Codes, Flags
+from lubecheck.model.reader import read_hold
 from lubecheck.model.result import Limit, LimitAfter, Remedy, Result
 
 if TYPE_CHECKING:
@@ -32,21 +34,20 @@ CHUNK = 2000  # cases a kernel call
 # Limits that one group of changes alone can move.
 ONE_GROUP = {"cold_start": "lubricant", "speed": "bearing", "static_load": "bearing", "minimum_load": "bearing"}
 _FAILING = ("near", "beyond")
-# Limits that heat may bring near or beyond.
-HEAT_LIMITS = ("temperature", "rings", "set_point", "flash_point", "film", "interval")
 
 
-def check(
-    case: Case, *, warm_up: bool = False, air_properties: Air = air.properties, hold: float | str | None = None
-) -> Result:
+def check(case: Case, *, warm_up: bool = False, air_properties: Air = air.properties, hold: object = None) -> Result:
     """Judge one bearing position, and where a limit is near or beyond look for what brings it back.
 
     Every limit comes with its use, the demand over what is allowed; the verdict is the worst state, and what could not
     be judged is never called good. With `warm_up` the way to the steady state is followed and judged as well.
 
-    hold: temperature in degC, or "limit" for the highest that the case allows: what draught, oil, area or fill alone
-    holds it. Where heat brings a limit near or beyond, that is told unasked.
+    hold: temperature as a text ("70 degC") or a quantity, or "limit" for the highest that the case allows: what
+    draught, oil, area or fill alone holds it. Where heat brings a limit near or beyond, that is told unasked.
+
+    Raises CaseError where `hold` is anything else.
     """
+    to_hold = None if hold is None else read_hold(hold)
     if case.measured:
         from lubecheck.studies.calibrate import calibrated  # here, so that a check without one does not load it
 
@@ -58,11 +59,14 @@ def check(
     ):  # fmt: skip
         from lubecheck.studies import needs  # here, so that the check of a cool case does not load it
 
-        temperature = None if isinstance(hold, str) else hold
-        found = needs.find(case, temperature, is_asked=hold is not None, air_properties=air_properties)
+        found = needs.find(case, to_hold, is_asked=hold is not None, air_properties=air_properties)
         result = dataclasses.replace(result, needs=found)
     if is_failing:
         result = dataclasses.replace(result, remedies=find(case, air_properties=air_properties))
+    if case.measured and (result.remedies or result.needs.found):
+        from lubecheck.studies import beside_measured  # here, as few cases have readings
+
+        result = beside_measured.told(case, result, air_properties)
     if warm_up or case.grease.given is not None:
         from lubecheck.studies import warmup  # here, as few ask for it
 

@@ -249,15 +249,17 @@ def test_water_in_the_air_shortens_an_oil_change():
 
 def test_a_large_charge_serves_longer_and_a_small_or_unsaid_one_as_the_rule_says():
     def bath(volume):
-        case = oil_case()
         charge = None if volume is None else 1000 * volume
         return lubecheck.check(dataclasses.replace(case, oil=dataclasses.replace(case.oil, volume=charge)))
+
+    case = oil_case(ambient="75 degC")
 
     results = {volume: bath(volume) for volume in (None, 0.05, 0.3, 0.6, 1.2, 9.0)}
     hours = {volume: result.limit("interval").allowed for volume, result in results.items()}
     watts = results[None].operating.friction_power.m_as("W")
     temperature = results[None].operating.temperature.m_as("degC")
     by_hand = 8766 * 0.25 ** (max(temperature - 50, 0) / 50)  # 12 months to 50 degC, 3 at 100: handbooks
+    assert by_hand < 8766 / 2
     for volume, allowed in hours.items():
         factor = 1.0 if volume is None else min(2.0, max(1.0, volume * 1000 / watts / 10))  # 5 to 10 l/kW: handbooks
         assert allowed == pytest.approx(factor * by_hand, rel=1e-6), volume
@@ -279,6 +281,31 @@ def test_circulating_oil_serves_longer_the_more_seldom_it_turns_over_but_never_o
     assert result.limit("interval").allowed == pytest.approx(min(4 * 8766, factor * by_hand), rel=1e-6)
     cool = lubecheck.check(dataclasses.replace(case, oil=dataclasses.replace(case.oil, volume=1000.0 * litres)))
     assert cool.limit("interval").allowed <= 4 * 8766 * (1 + 1e-9)
+
+
+@pytest.mark.parametrize(("supply", "rule", "longest"), [("bath", 0, 8766), ("circulating", 1, 4 * 8766)])
+def test_no_charge_serves_longer_than_a_cool_one_and_the_factor_that_took_effect_is_told(supply, rule, longest):
+    def judged(ambient, litres):
+        case = oil_case(supply, ambient=f"{ambient} degC")
+        inlet = {} if supply == "bath" else {"inlet": float(ambient)}
+        oil = dataclasses.replace(case.oil, volume=1000.0 * litres, **inlet)
+        return lubecheck.check(dataclasses.replace(case, oil=oil))
+
+    factors = []
+    for ambient in (20, 40, 60, 65, 70, 75, 90):
+        plain, large = judged(ambient, 5 if supply == "circulating" else 0.05), judged(ambient, 60)
+        hours = large.interval_lines[rule].hours
+        factor = dict(large.interval_lines[rule].factors).get("volume", 1.0)
+        assert hours <= longest * (1 + 1e-9)
+        assert hours == pytest.approx(factor * plain.interval_lines[rule].hours, rel=1e-6)
+        assert large.limit("interval").allowed == pytest.approx(hours)
+        note = large.limit("interval").note
+        assert f"x {factor:.2f} (estimate)" in note
+        assert ("that a cool oil serves" in note) == (factor < 2)
+        factors.append(factor)
+    assert factors == sorted(factors)
+    assert (factors[0], factors[-1]) == (1.0, 2.0)
+    assert any(1 < factor < 2 for factor in factors)
 
 
 def test_an_oil_hotter_than_the_rules_go_is_unknown():

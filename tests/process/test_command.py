@@ -159,6 +159,13 @@ def test_the_check_of_a_cool_case_loads_no_search():
     assert "lubecheck.studies.needs" in imported_by("check", "examples/overfilled_motor.toml")
 
 
+def test_a_temperature_to_hold_that_is_none_is_refused():
+    for text in ("banana", "", "70"):
+        done = run("check", "examples/new_motor.toml", "--hold", text)
+        assert done.returncode == 2
+        assert done.stderr.startswith(f'lubecheck: hold: given "{text}"; expected a temperature')
+
+
 def test_a_temperature_to_hold_is_asked_for_by_an_option():
     done = run("check", "examples/oil_bath_pump.toml", "--hold", "62 degC")
     assert done.returncode == 0, done.stderr

@@ -4,7 +4,9 @@ from __future__ import annotations
 
 import io
 import random
+import re
 
+import pint
 import pytest
 from conftest import BASE, EXAMPLES, edited, with_key
 from rich.console import Console
@@ -108,7 +110,7 @@ def test_the_means_are_those_that_the_case_has():
 @pytest.mark.parametrize(("text", "degrees"), [(BASE, 70.0), (BASE, 60.0), (OIL, 62.0), (OIL, 80.0), (STREAM, 66.0),
                                                (STREAM, 78.0)])  # fmt: skip
 def test_a_temperature_that_is_asked_for_is_held(text, degrees):
-    result = lubecheck.check(read_case(text), hold=degrees)
+    result = lubecheck.check(read_case(text), hold=f"{degrees} degC")
     held = 0
     for need in result.needs.found:
         if need.needed is None or "even that holds it" in need.note:
@@ -187,11 +189,89 @@ def test_random_hot_cases_are_answered_with_needs_that_hold():
     assert solved > 20
 
 
-def test_what_is_no_temperature_is_refused():
-    with pytest.raises(lubecheck.CaseError, match="--hold"):
-        read_hold("70")
+NEW = (EXAMPLES / "new_motor.toml").read_text(encoding="utf-8")
+FAN = (EXAMPLES / "measured_fan.toml").read_text(encoding="utf-8")
+WARM_STREAM = with_key(STREAM, "oil", "inlet", '"120 degC"')
+
+
+def level_after(text: str, edits) -> float:
+    """Return the temperature of a case file with edits made; infinite where it has none."""
+    found = plain_check(read_case(edited(text, edits))).operating.temperature
+    return float("inf") if found is None else found.m_as("degC")
+
+
+@pytest.mark.parametrize("hold", [66, 70, 100, 160])
+@pytest.mark.parametrize("text", [NEW, OIL, WARM_STREAM, CASES["packed full"], CASES["watts"]])
+def test_what_is_not_enough_is_hotter_than_what_is_held_and_the_rest_is_not(text, hold):
+    for need in lubecheck.check(read_case(text), hold=f"{hold} degC").needs.found:
+        assert (need.needed is None) == ("enough" in need.note), need
+        if need.needed is not None:
+            assert level_after(text, need.edits) <= hold + 1e-9, need
+        elif "it runs at" in need.note:
+            assert float(re.search(r"it runs at ([0-9.]+) degC there", need.note)[1]) > hold - 0.05, need
+
+
+def test_a_means_that_stands_at_its_worse_end_already_is_told_to_hold_even_there():
+    for text, name, now in ((NEW, "draught", 0.0), (WARM_STREAM, "oil inlet", 120.0)):
+        (need,) = [one for one in lubecheck.check(read_case(text), hold="140 degC").needs.found if one.means == name]
+        assert (need.now, need.needed) == (now, now)
+        assert need.note.startswith("even that holds it")
+    found = lubecheck.check(read_case(NEW), hold="limit").needs.found
+    assert next((one.means, one.needed) for one in found) == ("draught", 0.0)
+
+
+def test_no_figures_stand_beside_a_reading_that_nothing_explains():
+    text = with_key(FAN, "measured", "temperature", '"95 degC"')
+    for hold in ("70 degC", "limit"):
+        result = lubecheck.check(read_case(text), hold=hold)
+        assert not result.calibration.is_explained
+        assert result.needs.found == ()
+        assert result.needs.is_due
+        assert "a measured temperature contradicts" in result.needs.note
+        console = Console(file=io.StringIO(), width=200, _environ={})
+        print_needs(result.needs, console, "si")
+        assert "What alone would hold" in console.file.getvalue()
+        assert "a measured temperature contradicts" in console.file.getvalue()
+        assert of_result(result)["needs_note"] == result.needs.note
+    assert lubecheck.check(read_case(FAN), hold="70 degC").needs.found
+
+
+def test_figures_at_the_usual_reading_name_what_was_not_said():
+    text = with_key(NEW, "housing", "shaft_temperature", None)
+    result = lubecheck.check(read_case(text), hold="50 degC")
+    assert result.needs.note.startswith("at the usual reading of what was not said")
+    assert "[housing] machine_heat (none)" in result.needs.note
+    both = with_key(text, "housing", "kind", None)
+    note = lubecheck.check(read_case(both), hold="50 degC").needs.note
+    assert all(name in note for name in ("[housing] machine_heat", "[housing] kind"))
+    assert "dust" not in note
+    assert "fatigue_limit" not in lubecheck.check(read_case(NEW), hold="50 degC").needs.note
+    assert lubecheck.check(read_case(NEW), hold="50 degC").needs.note == ""
+
+
+def test_a_set_point_that_is_passed_is_answered_unasked():
+    text = changed(NEW, {("limits", "trip"): '"55 degC"'})
+    result = lubecheck.check(read_case(text))
+    assert result.limit("set_point").state == "beyond"
+    solved = [need for need in result.needs.found if need.needed is not None]
+    assert solved
+    assert "set point" in result.needs.question
+    for need in solved:
+        assert plain_check(read_case(edited(text, need.edits))).limit("set_point").use == pytest.approx(0.85, abs=1e-3)
+
+
+def test_a_temperature_to_hold_is_a_text_or_a_quantity_in_any_unit():
     assert read_hold("140 degF") == pytest.approx(60.0)
-    assert read_hold("limit") == "limit"
+    assert read_hold(" 333.15 K ") == pytest.approx(60.0)
+    assert read_hold("limit") is read_hold("LIMIT") is None
+    units = pint.application_registry
+    same = [lubecheck.check(read_case(BASE), hold=one).needs
+            for one in ("60 degC", "140 degF", units.Quantity(333.15, "K"), units.Quantity(140, "degF"))]  # fmt: skip
+    for needs_found in same:
+        assert needs_found.question == "60 degC"
+        assert [one.needed for one in needs_found.found] == pytest.approx([one.needed for one in same[0].found])
+    other = pint.UnitRegistry().Quantity(60, "degC")  # of another registry
+    assert read_hold(other) == pytest.approx(60.0)
 
 
 @pytest.mark.parametrize("key", ["alarm", "trip"])
@@ -205,3 +285,17 @@ def test_a_stated_set_point_is_one_of_the_limits_that_are_held(key):
     for need in held:
         fresh = plain_check(read_case(edited(text, need.edits)))
         assert fresh.limit("set_point").use == pytest.approx(0.85, abs=1e-3), need
+
+
+@pytest.mark.parametrize(
+    "value",
+    ["70", "banana", "", "70 W", "900 degC", 70.0, 70, True, [70], float("nan"), pint.Quantity(70, "W"),
+     pint.Quantity(10, "delta_degC"), pint.Quantity(70, ""), pint.Quantity(5000, "K"),
+     pint.Quantity([60, 70], "degC"), pint.Quantity(float("nan"), "degC")],
+)  # fmt: skip
+def test_what_is_no_temperature_to_hold_is_refused_with_one_fault(value):
+    with pytest.raises(lubecheck.CaseError) as refused:
+        lubecheck.check(read_case(BASE), hold=value)
+    (fault,) = refused.value.faults
+    assert fault.key == "hold"
+    assert '"limit" for the highest' in fault.expected
