@@ -13,7 +13,7 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
 from lubecheck.errors import NotCalibrated
 from lubecheck.model.assumptions import HOUSING_AREA, SMALLEST_AREA, at_worst
-from lubecheck.model.calibration import COOLING
+from lubecheck.model.calibration import COOLING, NOTHING
 from lubecheck.model.duty_entries import Duty
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import Amount
@@ -118,7 +118,8 @@ def _calibration_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, fl
         return columns
     if not found.is_explained:
         return columns | {"is_doubted": 1.0}
-    is_asked = found.column == COOLING or case.grease.fill == "unknown"  # a fill that was made anew is known
+    # A fill that was made anew is known; one that the measurements could not tell is read as without them.
+    is_asked = found.column == COOLING or (found.tells != NOTHING and case.grease.fill == "unknown")
     return columns | ({found.column: found.at(at_worst(reading))} if is_asked else {})
 
 

@@ -5,6 +5,7 @@ from __future__ import annotations
 import dataclasses
 import functools
 import math
+import re
 
 import numpy as np
 import pytest
@@ -584,3 +585,73 @@ def test_the_example_tells_its_story():
     assert figures["after"].high - figures["after"].low < 0.65 * (figures["before"].high - figures["before"].low)
     assert (result.verdict, result.governing) == ("near", "interval")
     assert lubecheck.check(load_case(EXAMPLES / "new_motor.toml")).verdict == "within"
+
+
+# The cooling is stated, the fill is not known; void and relief are not said, so that grease clears up to 93 %.
+FLAT = (EXAMPLES / "measured_fan.toml").read_text()
+for _table, _key, _value in (
+    ("grease", "fill", '"unknown"'),
+    ("grease", "housing_fill", None),
+    ("surroundings", "draught", None),
+    ("housing", "kind", None),
+    ("housing", "conductance", '"1.3 W/K"'),
+    ("housing", "void", None),
+    ("housing", "relief", None),
+):
+    FLAT = with_key(FLAT, _table, _key, _value)
+
+
+def read_at(text: str, temperature: float, error: str = "2 K") -> str:
+    """Return the case with the reading and its error instead of its own."""
+    return with_key(with_key(text, "measured", "temperature", f'"{temperature:.3f} degC"'),
+                    "measured", "reading_error", f'"{error}"')  # fmt: skip
+
+
+@pytest.mark.parametrize(("void", "error"), [(None, "2 K"), (None, "0.3 K"), ('"25 cm^3"', "0.5 K")])
+def test_on_a_flat_stretch_a_hundredth_of_a_kelvin_never_turns_unknown_into_beyond(void, error):
+    text = FLAT if void is None else with_key(FLAT, "housing", "void", void)
+    case = read_case(text)
+    points = states_of(case, readings(case)[1][0])
+    flat, end = (float(solve(points.changed(fill=fill)).outer[0]) for fill in (0.3, 0.6))
+    assert end == pytest.approx(flat, abs=1e-6)
+    for away in np.arange(-0.05, 0.055, 0.01):
+        result = lubecheck.check(read_case(read_at(text, flat + away, error)))
+        assert result.calibration.is_explained
+        assert result.limit("fill").state == "unknown", away
+        assert result.limit("fill").demand == pytest.approx(0.5), away
+
+
+@pytest.mark.parametrize("temperature", [43.0, 44.55, 44.58, 45.5, 47.0])
+def test_a_reading_that_goes_with_any_fill_tells_none_and_is_judged_as_none(temperature):
+    plain = FLAT[: FLAT.index("\n[measured]")] + FLAT[FLAT.index("\n[cleanliness]") :]
+    without, result = (lubecheck.check(read_case(one)) for one in (plain, read_at(FLAT, temperature)))
+    assert "cannot tell the fill: any from 30 to" in result.calibration.text
+    assert result.calibration.figures.figures["fill"].value is None
+    assert "judged from 30 to 100 %" in result.limit("fill").note
+    for limit in without.limits:
+        assert result.limit(limit.name) == limit
+
+
+def test_a_reading_that_excludes_the_emptiest_fill_tells_the_fill_and_one_that_does_not_its_most():
+    text = with_key(FLAT, "housing", "void", '"25 cm^3"')
+    fine, coarse = (lubecheck.check(read_case(read_at(text, 45.1, error))) for error in ("0.2 K", "1.5 K"))
+    found = fine.calibration.figures.figures["fill"]
+    assert 0.3 < found.low < found.value < found.high < 0.75
+    assert fine.limit("fill").state == "beyond"
+    assert coarse.limit("fill").state == "unknown"
+    assert "no more than" in coarse.calibration.text
+    assert "taken as 50 %" in coarse.limit("fill").note
+
+
+@pytest.mark.parametrize("temperature", [44.8, 45.1, 45.4])
+def test_the_worst_of_a_found_fill_is_never_less_than_what_was_found(temperature):
+    result = lubecheck.check(read_case(read_at(FLAT, temperature, "0.2 K")))
+    found = result.calibration.figures.figures["fill"]
+    assert result.limit("fill").state == "beyond"
+    worst = float(re.search(r"at worst (\d+) %", result.limit("fill").note)[1]) / 100
+    assert worst >= found.high - 0.005
+
+
+def test_no_heat_of_surplus_grease_leaves_all_fills_open():
+    result = lubecheck.check(read_case(read_at(with_key(FLAT, "housing", "relief", '"open"'), 44.5)))
+    assert "any from 30 to 100 %" in result.calibration.text
