@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import math
 
-from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
+from lubecheck.model.assumptions import proposed_housing_fill
 from lubecheck.model.calibration import (
     COOLING,
     LIKELY,
@@ -106,6 +106,9 @@ def unexplained(found: Calibration) -> str:
         beyond = ("under " if found.value < 1 else "over ") if is_end else ""
         believed = f"{least:.2g} to {most:.2g} can be believed"
         needed = f"it would take cooling {beyond}{found.value:.2g} times the estimate, where {believed}"
+        if least <= found.value <= most:  # one reading of several lies outside, the fit of all does not
+            off = "that reading alone lies outside of what can be believed"
+            needed = f"{off}: all readings together give {found.value:.2g} times the estimated cooling"
     else:
         needed = f"no fill gives that, from {least * 100:.0f} to {most * 100:.0f} %"
     measured, computed = (figures[name].value for name in ("measured", "before"))
@@ -193,7 +196,9 @@ def assumed(case: Case) -> tuple[Assumed, ...]:
         if one.place is None:
             said["place"] = "on the housing or the outer ring"
         if case.is_grease and at_state(case, one).grease.fill is None:
-            said["fill"] = "as proposed, with the housing at " + f"{PROPOSED_HOUSING_FILL * 100:.0f} %"
+            stated = case.grease.housing_fill
+            share = proposed_housing_fill(case) if stated is None else stated
+            said["fill"] = f"as proposed, with the housing at {share * 100:.0f} %"
     return tuple(Assumed(f"[measured] {key}", text, "common-practice") for key, text in said.items())
 
 

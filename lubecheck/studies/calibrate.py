@@ -212,7 +212,10 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
     is_inside = [((at >= lowest) & (at <= highest)).all() for at in (sensors.temperature, after)]
     is_believed = is_reached and all(is_inside) and bool((after < TOP_TEMPERATURE).all())
     residuals = sensors.temperature - after
-    is_split = is_believed and not agree(residuals, sensors.error, chi_square)
+    # A curve that can be believed, from which readings lie too far away: they contradict one another.
+    is_split = (
+        is_inside[1] and bool((after < TOP_TEMPERATURE).all()) and not agree(residuals, sensors.error, chi_square)
+    )
     is_explained = is_believed and not is_split
     edges = fit.each(join([usual, usual]), np.stack([lowest, highest])).mean(axis=1)
     ends = fit.ends(usual, float(x[0]), squares, scale**2) if is_explained else (x[0], x[0])
@@ -233,7 +236,7 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
         values={},
         ends={},
         draws=(),
-        points=_measured(sensors, nominal[0], after if is_believed else nominal[0]),
+        points=_measured(sensors, nominal[0], after if is_believed or is_split else nominal[0]),
         chi_square=chi_square,
         error_scale=scale,
         heat_of=heat_of(case),

@@ -588,7 +588,8 @@ def test_the_example_tells_its_story():
 
 
 # The cooling is stated, the fill is not known; void and relief are not said, so that grease clears up to 93 %.
-FLAT = (EXAMPLES / "measured_fan.toml").read_text()
+FAN = (EXAMPLES / "measured_fan.toml").read_text()
+FLAT = FAN
 for _table, _key, _value in (
     ("grease", "fill", '"unknown"'),
     ("grease", "housing_fill", None),
@@ -655,3 +656,46 @@ def test_the_worst_of_a_found_fill_is_never_less_than_what_was_found(temperature
 def test_no_heat_of_surplus_grease_leaves_all_fills_open():
     result = lubecheck.check(read_case(read_at(with_key(FLAT, "housing", "relief", '"open"'), 44.5)))
     assert "any from 30 to 100 %" in result.calibration.text
+
+
+def test_a_rise_written_in_fahrenheit_is_found_as_one_in_celsius_is():
+    # 43 degC over air of 18 degC is a rise of 25 K, which a thermometer in degF shows as 45.
+    found = [found_of(with_key(FAN, "measured", "temperature", f'"{written}"'))
+             for written in ("25 degC", "45 degF")]  # fmt: skip
+    for one in found:
+        (rise,) = [item for item in one.explained.likely if item.cause == "rise read as temperature"]
+        assert rise.needed == pytest.approx(43.0)
+        assert rise.words.startswith("a rise of 25 K over the air")
+
+
+def test_readings_that_contradict_one_another_are_not_said_to_take_a_cooling_that_can_be_believed():
+    text = FAN[: FAN.index("\n[measured]")] + FAN[FAN.index("\n[cleanliness]") :]
+    state = {"ambient": 18.0, "shaft_temperature": 73.0}
+    two = lubecheck.check(read_case(measured(text, {"temperature": 48.0, **state}, {"temperature": 62.0, **state})))
+    assert not two.calibration.is_explained
+    assert "can be believed" not in two.calibration.text
+    assert "the 2 readings disagree by more than their errors" in two.calibration.text
+    assert "62.0 degC was read where the best fit of all has 55.0 degC, 7.0 K hotter" in two.calibration.text
+
+
+def test_one_reading_just_outside_is_not_said_to_take_a_cooling_that_can_be_believed():
+    (estimate,) = predicted(MOTOR, [{}])
+    for hotter in np.arange(4.0, 30.0, 0.5).tolist():
+        text = measured(MOTOR, {"temperature": estimate + hotter - 1.0}, {"temperature": estimate + hotter})
+        found = lubecheck.check(read_case(text)).calibration
+        if not found.is_explained:
+            break
+    assert "that reading alone lies outside of what can be believed" in found.text
+    factor = float(re.search(r"all readings together give ([\d.]+) times", found.text)[1])
+    admissible = found.figures.figures["admissible_factor"]
+    assert admissible.low - 0.01 <= factor <= admissible.high
+
+
+@pytest.mark.parametrize(("lies", "share"), [("horizontal", "40 %"), ("vertical", "50 %")])
+def test_the_housing_at_the_reading_is_listed_as_it_is_proposed_for_the_shaft(lies, share):
+    text = with_key(with_key(MOTOR, "surroundings", "orientation", f'"{lies}"'), "grease", "fill", None)
+    text = with_key(text, "grease", "housing_fill", None)
+    result = lubecheck.check(read_case(measured(text, {"temperature": 60.0})))
+    listed = {item.name: item.value for item in result.assumed}
+    assert listed["[measured] fill"] == f"as proposed, with the housing at {share}"
+    assert listed["[grease] housing_fill"].startswith(share)
