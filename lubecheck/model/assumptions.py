@@ -194,6 +194,11 @@ COOLANT_RANGE = (0.5, 1.5)  # duct and wall of a jacket that nobody described, e
 CONDUCTANCE_RANGE = (0.9, 1.1)  # a stated conductance: as good as a measurement, estimate
 
 
+def proposed_housing_fill(case: Case) -> float:
+    """Return the share of the space beside the bearing that is proposed to be filled; level where it is not said."""
+    return grease_amount.HOUSING_FILL[case.surroundings.orientation or "horizontal"][1]
+
+
 def uncertain(case: Case) -> Iterator[tuple[str, float, float]]:
     """Return the uncertain inputs of a case: the field of the points, and the factors at its low and high end."""
     yield "cooling_factor", *_cooling_range(case)

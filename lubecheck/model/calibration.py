@@ -16,6 +16,9 @@ from lubecheck.model.result import Declared, Figures
 USUAL, WORST = "usual", "worst"  # the readings of unsaid facts; one fact alone at its worst goes by its name
 COOLING, FILL = "cooling_factor", "fill"  # the columns of points that can be the unknown
 LIKELY = 3.0  # half widths outside the usual range, from which a cause explains nothing: estimate
+# What is told of the unknown: itself; only the most that it can be; or, within the reading errors, nothing, so that the
+# case stays as it is without the measurements.
+VALUE, MOST, NOTHING = "value", "most", "nothing"
 WIDEST_COOLING = 30.0  # times the estimate, or one over that: searched, so that what would be needed can be told
 
 
@@ -35,7 +38,9 @@ class CalibrationFigures(Figures):
     cooling_factor = Declared("1", "cooling by air over the estimate for this housing; none where the fill was sought")
     admissible_factor = Declared("1", "that factor as the estimate has it, with the range that could be believed")
     conductance = Declared("W/K", "from the housing to the air at the first measured state")
-    fill = Declared("1", "fill of the bearing, as a share of its free volume; none where the cooling was sought")
+    fill = Declared(
+        "1", "fill of the bearing, as a share of its free volume; none where the cooling was sought, or nothing told"
+    )
     chi_square = Declared("1", "sum of squares of residuals over standard errors; none of one measurement")
     error_scale = Declared("1", "times that the reading errors were taken as large, for residuals that are larger")
     before = Declared("degC", "temperature of the operating point without the measurements")
@@ -90,6 +95,7 @@ class Calibration:
     points: tuple[MeasuredPoint, ...]
     chi_square: float | None
     error_scale: float
+    tells: str  # VALUE, MOST or NOTHING
     heat_of: tuple[Any, ...]  # what the temperature hangs on, as the case had it
     is_split: bool = False  # the readings disagree by more than their errors
     most_split: int = 0  # the reading that disagrees most

@@ -4,11 +4,14 @@ from __future__ import annotations
 
 import math
 
-from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
+from lubecheck.model.assumptions import proposed_housing_fill
 from lubecheck.model.calibration import (
     COOLING,
     LIKELY,
+    MOST,
+    NOTHING,
     WIDEST_COOLING,
+    WORST,
     Calibrated,
     Calibration,
     CalibrationFigures,
@@ -45,7 +48,7 @@ def told(case: Case, before: Band, after: Band, stop: str) -> Calibrated | None:
             "cooling_factor": value if is_cooling else None,
             "admissible_factor": (1.0, *found.admissible) if is_cooling else None,
             "conductance": found.conductance,
-            "fill": None if is_cooling else value,
+            "fill": None if is_cooling or found.tells == NOTHING else value,
             "chi_square": found.chi_square,
             "error_scale": found.error_scale,
             "before": before,
@@ -58,7 +61,9 @@ def told(case: Case, before: Band, after: Band, stop: str) -> Calibrated | None:
 
 
 def _explained(found: Calibration, before: Band, after: Band) -> str:
-    return f"{said(found)}; {_residuals(found)}; temperature {_span(before)} before, {_span(after)} after"
+    fitted = f"{said(found)}; {_residuals(found)}"
+    # What told nothing has moved nothing.
+    return fitted if found.tells == NOTHING else f"{fitted}; temperature {_span(before)} before, {_span(after)} after"
 
 
 def said(found: Calibration) -> str:
@@ -71,6 +76,16 @@ def said(found: Calibration) -> str:
         return (
             f"Calibrated on {what}: cooling by air {found.value:.2f} times the estimate ({found.low:.2f} to "
             f"{found.high:.2f}{conductance})"
+        )
+    if found.tells == NOTHING:
+        return (
+            f"Not calibrated on {what}, which cannot tell the fill: any from {found.low * 100:.0f} to "
+            f"{found.high * 100:.0f} % gives what was read within the reading error. So the fill stays unknown"
+        )
+    if found.tells == MOST:
+        return (
+            f"Calibrated on {what}: the bearing is filled to no more than {found.high * 100:.0f} % of its free volume, "
+            f"by the reading error alone; from {found.low * 100:.0f} % up to there the reading cannot tell the fill"
         )
     return (
         f"Calibrated on {what}: the bearing is filled to {found.value * 100:.0f} % of its free volume "
@@ -91,6 +106,9 @@ def unexplained(found: Calibration) -> str:
         beyond = ("under " if found.value < 1 else "over ") if is_end else ""
         believed = f"{least:.2g} to {most:.2g} can be believed"
         needed = f"it would take cooling {beyond}{found.value:.2g} times the estimate, where {believed}"
+        if least <= found.value <= most:  # one reading of several lies outside, the fit of all does not
+            off = "that reading alone lies outside of what can be believed"
+            needed = f"{off}: all readings together give {found.value:.2g} times the estimated cooling"
     else:
         needed = f"no fill gives that, from {least * 100:.0f} to {most * 100:.0f} %"
     measured, computed = (figures[name].value for name in ("measured", "before"))
@@ -155,11 +173,14 @@ def doubt(case: Case, name: str) -> str:
 def found_fill(case: Case) -> str:
     """Say what a calibration found of an unknown fill; empty where it found none."""
     found = case.calibration
-    if found is None or not found.is_explained or found.column == COOLING:
+    if found is None or not found.is_explained or found.column == COOLING or found.tells == NOTHING:
         return ""
-    return (
-        f"found by the measured temperature: {found.value * 100:.0f} % (at worst {found.values['worst'] * 100:.0f} %)"
-    )
+    if found.tells == MOST:
+        return (
+            f"no lower end found by the measured temperature: taken as {found.value * 100:.0f} % (at worst "
+            f"{found.values[WORST] * 100:.0f} %)"
+        )
+    return f"found by the measured temperature: {found.value * 100:.0f} % (at worst {found.values[WORST] * 100:.0f} %)"
 
 
 def assumed(case: Case) -> tuple[Assumed, ...]:
@@ -175,7 +196,9 @@ def assumed(case: Case) -> tuple[Assumed, ...]:
         if one.place is None:
             said["place"] = "on the housing or the outer ring"
         if case.is_grease and at_state(case, one).grease.fill is None:
-            said["fill"] = "as proposed, with the housing at " + f"{PROPOSED_HOUSING_FILL * 100:.0f} %"
+            stated = case.grease.housing_fill
+            share = proposed_housing_fill(case) if stated is None else stated
+            said["fill"] = f"as proposed, with the housing at {share * 100:.0f} %"
     return tuple(Assumed(f"[measured] {key}", text, "common-practice") for key, text in said.items())
 
 
@@ -195,7 +218,7 @@ def _notes(case: Case, found: Calibration) -> tuple[str, ...]:
             f"a reading {min(times):g} h after greasing is not steady: the rise after greasing is gone after about "
             f"{SETTLED_AFTER_GREASING:g} h; if that time counts from a start it has settled"
         )
-    if found.is_explained:
+    if found.is_explained and found.tells != NOTHING:
         said.append(
             "what [measured] leaves out is read from the rest of the case: after a change there, say in [measured] "
             "how it was at the reading, or measure again"

@@ -18,7 +18,7 @@ from lubecheck.data import air
 from lubecheck.model import calibration_words, draws, interval_lines, limits, side_figures, wording
 from lubecheck.model.amounts import amounts
 from lubecheck.model.assumptions import Fact, missing, uncertain
-from lubecheck.model.calibration import FILL, Calibrated, Calibration
+from lubecheck.model.calibration import FILL, NOTHING, Calibrated, Calibration
 from lubecheck.model.entries import Case
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import Outcome, judge
@@ -172,9 +172,14 @@ def variants_of(case: Case, air_properties: Air = air.properties, *, at_ends: bo
 
 
 def _fitted(case: Case) -> Calibration | None:
-    """Return the calibration that a case stands on; none for a fill that has been made anew since."""
+    """Return the calibration that a case stands on; none for a fill that was not told, or was made anew since."""
     found = case.calibration
-    if found is None or not found.is_explained or (found.column == FILL and case.grease.fill != "unknown"):
+    if (
+        found is None
+        or not found.is_explained
+        or found.tells == NOTHING
+        or (found.column == FILL and case.grease.fill != "unknown")
+    ):
         return None
     return found
 

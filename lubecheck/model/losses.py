@@ -13,7 +13,6 @@ from collections.abc import Callable
 
 import numpy as np
 
-from lubecheck.model.assumptions import PROPOSED_HOUSING_FILL
 from lubecheck.model.equilibrium import Air
 from lubecheck.model.kernel import judge
 from lubecheck.model.points import Points, join
@@ -56,7 +55,8 @@ def _temperature(points: Points) -> Points:
 def _overfill(points: Points) -> Points:
     """A bearing filled as proposed, its housing too, where that is less than there is."""
     fill = np.where(np.isnan(points.fill), np.nan, np.fmin(points.fill, points.proposed_fill))
-    return dataclasses.replace(points, fill=fill, housing_fill=np.minimum(points.housing_fill, PROPOSED_HOUSING_FILL))
+    housing_fill = np.minimum(points.housing_fill, points.proposed_housing_fill)
+    return dataclasses.replace(points, fill=fill, housing_fill=housing_fill)
 
 
 def _dirt(points: Points) -> Points:

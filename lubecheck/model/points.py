@@ -110,6 +110,7 @@ class Points:
     clearance: Array  # mm, mean of the class; NaN where there is none to judge
     fit_loss: Array  # mm; NaN where no fit is stated
     proposed_fill: Array
+    proposed_housing_fill: Array  # share of the space beside it
     is_proposed_fill: Array
     interval: Array  # running hours; NaN where none is planned
     hours_per_day: Array

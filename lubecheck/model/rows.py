@@ -13,7 +13,7 @@ from lubecheck.data.bearings import Bearing
 from lubecheck.data.families import FAMILIES, Family
 from lubecheck.errors import NotCalibrated
 from lubecheck.model.assumptions import HOUSING_AREA, SMALLEST_AREA, at_worst
-from lubecheck.model.calibration import COOLING
+from lubecheck.model.calibration import COOLING, NOTHING
 from lubecheck.model.duty_entries import Duty
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import Amount
@@ -118,7 +118,8 @@ def _calibration_columns(case: Case, reading: Mapping[str, Any]) -> dict[str, fl
         return columns
     if not found.is_explained:
         return columns | {"is_doubted": 1.0}
-    is_asked = found.column == COOLING or case.grease.fill == "unknown"  # a fill that was made anew is known
+    # A fill that was made anew is known; one that the measurements could not tell is read as without them.
+    is_asked = found.column == COOLING or (found.tells != NOTHING and case.grease.fill == "unknown")
     return columns | ({found.column: found.at(at_worst(reading))} if is_asked else {})
 
 
@@ -487,9 +488,9 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
         fill = volume_of(plan.fill, volume, grams_per_cm3) / volume
     room = volume if void is None else void
     housing_fill = plan.housing_fill
+    proposed_beside = grease_amount.HOUSING_FILL["vertical" if _is_vertical(case, reading) else "horizontal"][1]
     if housing_fill is None:
-        lies = "vertical" if _is_vertical(case, reading) else "horizontal"
-        housing_fill = reading.get("[grease] housing_fill", grease_amount.HOUSING_FILL[lies][1])
+        housing_fill = reading.get("[grease] housing_fill", proposed_beside)
     if plan.given is not None:
         # What the bearing has no room for went into the space beside it.
         found = fill_found(plan, fill, volume, grams_per_cm3)
@@ -503,6 +504,7 @@ def _amount_columns(case: Case, reading: Mapping[str, Any], row: Mapping[str, fl
         "housing_fill": housing_fill,
         "is_open": float(relief == "open"),
         "proposed_fill": float(proposed) if case.is_grease else math.nan,
+        "proposed_housing_fill": proposed_beside,
         "is_proposed_fill": float(plan.fill is None and plan.given is None),
         "interval": math.nan if interval is None else running_hours(interval, row["hours_per_day"]),
         "regrease_mass": mass * grams_per_cm3,

@@ -17,7 +17,7 @@ from lubecheck.data.oil_analysis import OilAnalysis
 from lubecheck.model import calibration_words, limits, oil_words
 from lubecheck.model import given as after
 from lubecheck.model.amounts import CARTRIDGE_G
-from lubecheck.model.assumptions import FACTS, Fact
+from lubecheck.model.assumptions import FACTS, Fact, proposed_housing_fill
 from lubecheck.model.entries import Case
 from lubecheck.model.entry import entries
 from lubecheck.model.equilibrium import TOP_TEMPERATURE
@@ -30,7 +30,7 @@ from lubecheck.model.result import Assumed
 from lubecheck.model.rows import DEFAULT_KAPPA, DEFAULT_LIFE, DEFAULT_RELIABILITY, LIMIT_ORIGINS, RULE_DAYS, seasons
 from lubecheck.model.shaft import loads_of
 from lubecheck.model.side_figures import curing_preload, safe_speed
-from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_amount, grease_life, oil_life
+from lubecheck.physics import churning, cleanliness, clearance, fatigue, grease_life, oil_life
 from lubecheck.units import KINDS
 
 SAFETY = (
@@ -500,7 +500,9 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     said += [Assumed(name, text, source) for name, value, text, source in defaults if value is None]
     is_proposed = case.grease.housing_fill is None and case.grease.fill != "unknown"
     if case.is_grease and is_proposed and not comes_filled:
-        said.append(Assumed("[grease] housing_fill", f"{_housing_fill(case) * 100:.0f} % proposed", "fill-handbooks"))
+        said.append(
+            Assumed("[grease] housing_fill", f"{proposed_housing_fill(case) * 100:.0f} % proposed", "fill-handbooks")
+        )
     for key, (low, high) in case.bearing.estimated.items():
         value = getattr(case.bearing, key)
         source = case.bearing.basis.get(key, "own-estimate")
@@ -529,10 +531,6 @@ def assumed(case: Case, moving: Sequence[Fact]) -> tuple[Assumed, ...]:
     if case.bearing.cage is None:
         said.append(Assumed("[bearing] cage", "metal", "common-practice"))
     return tuple(said)
-
-
-def _housing_fill(case: Case) -> float:
-    return grease_amount.HOUSING_FILL[case.surroundings.orientation or "horizontal"][1]
 
 
 def _comes_filled(case: Case) -> bool:

@@ -23,7 +23,10 @@ from lubecheck.model.assumptions import admissible_cooling, uncertain
 from lubecheck.model.calibration import (
     COOLING,
     FILL,
+    MOST,
+    NOTHING,
     USUAL,
+    VALUE,
     WIDEST_COOLING,
     WORST,
     Calibration,
@@ -44,6 +47,7 @@ from lubecheck.units import Array
 
 FILLS = (0.3, 1.0)  # an unknown fill, as it is judged without a measurement
 USUAL_FILL = 0.5
+NEARLY_ALL = 0.9  # of the range of fills: a reading whose error leaves so much of it cannot tell the fill
 NORMAL_95 = 1.959964  # standard deviations to each side that hold 95 % of a normal distribution
 FIT_STEPS = 40
 STEP = 1e-3  # of the unknown, for the slope
@@ -179,7 +183,8 @@ class Fit:
             return np.asarray((residuals**2).sum(axis=1) - rest - rise)
 
         least, most = self.unknown.range
-        found, _ = roots(surplus, np.array([least, x]), np.array([x, most]))
+        found, is_there = roots(surplus, np.array([least, x]), np.array([x, most]))
+        found = np.where(is_there, found, self.unknown.range)  # all of a side is left where nothing on it is excluded
         low, high = self.unknown.believed
         return max(float(found[0]), min(low, x)), min(float(found[1]), max(high, x))
 
@@ -207,10 +212,18 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
     is_inside = [((at >= lowest) & (at <= highest)).all() for at in (sensors.temperature, after)]
     is_believed = is_reached and all(is_inside) and bool((after < TOP_TEMPERATURE).all())
     residuals = sensors.temperature - after
-    is_split = is_believed and not agree(residuals, sensors.error, chi_square)
+    # A curve that can be believed, from which readings lie too far away: they contradict one another.
+    is_split = (
+        is_inside[1] and bool((after < TOP_TEMPERATURE).all()) and not agree(residuals, sensors.error, chi_square)
+    )
     is_explained = is_believed and not is_split
     edges = fit.each(join([usual, usual]), np.stack([lowest, highest])).mean(axis=1)
-    ends = fit.ends(usual, float(x[0]), squares if count > 1 else 0.0, scale**2) if is_explained else (x[0], x[0])
+    ends = fit.ends(usual, float(x[0]), squares, scale**2) if is_explained else (x[0], x[0])
+    tells = _tells(ends) if is_explained and unknown.column == FILL else VALUE
+    if tells != VALUE:
+        x[: len(said)] = np.minimum(x[: len(said)], min(USUAL_FILL, ends[1]))
+        x[0] = min(USUAL_FILL, ends[1])
+        after = fit.read(usual, x[:1])[0]
     values = unknown.value(x)
     made = Calibration(
         column=unknown.column,
@@ -223,12 +236,13 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
         values={},
         ends={},
         draws=(),
-        points=_measured(sensors, nominal[0], after if is_believed else nominal[0]),
+        points=_measured(sensors, nominal[0], after if is_believed or is_split else nominal[0]),
         chi_square=chi_square,
         error_scale=scale,
         heat_of=heat_of(case),
         is_split=is_split,
         most_split=int(np.abs(residuals / sensors.error).argmax()),
+        tells=tells,
     )
     if not is_explained:
         from lubecheck.studies.explain import explanations
@@ -279,12 +293,27 @@ def _band(fit: Fit, usual: Points, nominal: Array) -> tuple[Array, Array]:
     return nominal[0] - np.sqrt(down), nominal[0] + np.sqrt(up)
 
 
+def _tells(ends: tuple[float, float]) -> str:
+    """Return what is told of a fill by the ends that the reading errors leave.
+
+    Grease that clears makes no heat, so that the temperature is flat over the fill from the emptiest up to where it
+    clears no more: a hundredth of a kelvin moves the fit from one end of that stretch to the other. So where the
+    emptiest is not excluded only the upper end is told, and the fill in service is taken as one that nobody knows.
+    """
+    if ends[1] - ends[0] >= NEARLY_ALL * (FILLS[1] - FILLS[0]):
+        return NOTHING
+    return MOST if ends[0] <= FILLS[0] else VALUE
+
+
 def _cautious_fill(values: Mapping[str, float], ends: Mapping[str, tuple[float, float]]) -> dict[str, float]:
-    """Return the fills by reading: where the fill itself is read at its worst, the most that the reading leaves."""
-    usual = values[USUAL]
+    """Return the fills by reading: where the fill itself is read at its worst, the most that what was measured leaves.
+
+    That is never less than at any other reading: too much is worse for the fill than too little.
+    """
+    usual, most = values[USUAL], max(values.values())
     more = float(np.sqrt(sum(max(0.0, *(end - usual for end in pair)) ** 2 for pair in ends.values())))
     at_worst = (WORST, "[grease] fill")
-    return {name: min(1.0, value + more) if name in at_worst else value for name, value in values.items()}
+    return {name: min(1.0, most + more) if name in at_worst else value for name, value in values.items()}
 
 
 def _conductance(points: Points, air_properties: Air) -> float | None:

@@ -43,6 +43,7 @@ HOTTEST_AIR, COLDEST_AIR = 150.0, -60.0
 MOST_DRAUGHT = 30.0  # m/s
 # Rise of a motor-size bearing after regreasing, 14 to 17 K, and when it is packed full, over 28 K: field notes.
 PEAK, PACKED_PEAK = 17.0, 28.0
+ZERO_OF_SCALE = {"F": -32 / 1.8, "K": -273.15, "R": -273.15}  # degC, by the last letter of the unit; else degC itself
 WARM_UP = 1.0  # h, time constant of a start: level after 3 to 4 h (98 % after four of them)
 
 
@@ -226,8 +227,9 @@ def _misread(
         words = f"a thermometer that shows degC, written down as degF: it showed {in_celsius:.1f} degC"
         tries.append(("degC read as degF", in_celsius, words))
     if not is_hot:
-        words = f"a rise of {read:.0f} K over the air, written down as a temperature: {read + ambient:.1f} degC"
-        tries.append(("rise read as temperature", read + ambient, words))
+        rise = read - ZERO_OF_SCALE.get(text.strip()[-1:], 0.0)  # the number that was written, in kelvins
+        words = f"a rise of {rise:.0f} K over the air, written down as a temperature: {rise + ambient:.1f} degC"
+        tries.append(("rise read as temperature", rise + ambient, words))
     for cause, true, words in tries:
         if low <= true <= high:
             wide = max(high - nominal, nominal - low)

@@ -225,6 +225,23 @@ def test_overfill_takes_life_from_the_packed_motor_and_none_from_the_sound_one()
     assert taken["overfilled_motor"]["dirt"].factor_alone < 1
 
 
+@pytest.mark.parametrize("lies", ["horizontal", "vertical"])
+def test_a_housing_filled_as_proposed_for_its_shaft_takes_no_life(lies):
+    text = BASE
+    for table, key, value in (("duty", "radial_load", '"5 kN"'), ("duty", "speed", '"600 rpm"'),
+                              ("surroundings", "orientation", f'"{lies}"'),
+                              ("grease", "fill", None),
+                              ("grease", "housing_fill", None), ("housing", "void", '"20 cm^3"'),
+                              ("housing", "conductance", '"1 W/K"'), ("housing", "kind", None),
+                              ("surroundings", "draught", None)):  # fmt: skip
+        text = with_key(text, table, key, value)
+    account = lubecheck.check(read_case(text)).losses
+    (overfill,) = [part for part in account.parts if part.name == "overfill"]
+    assert (overfill.factor, overfill.factor_alone) == pytest.approx((1.0, 1.0), abs=1e-12)
+    product = math.prod(part.factor for part in account.parts)
+    assert product == pytest.approx(account.life_h / account.reference_life_h, rel=1e-9)
+
+
 def test_a_life_that_is_not_known_has_no_loss_account_and_the_record_stays_strict():
     result = lubecheck.check(read_case(with_key(BASE, "duty", "radial_load", '"28 kN"')))
     assert result.losses.life_h is None

@@ -5,6 +5,7 @@ from __future__ import annotations
 import dataclasses
 import functools
 import math
+import re
 
 import numpy as np
 import pytest
@@ -584,3 +585,117 @@ def test_the_example_tells_its_story():
     assert figures["after"].high - figures["after"].low < 0.65 * (figures["before"].high - figures["before"].low)
     assert (result.verdict, result.governing) == ("near", "interval")
     assert lubecheck.check(load_case(EXAMPLES / "new_motor.toml")).verdict == "within"
+
+
+# The cooling is stated, the fill is not known; void and relief are not said, so that grease clears up to 93 %.
+FAN = (EXAMPLES / "measured_fan.toml").read_text()
+FLAT = FAN
+for _table, _key, _value in (
+    ("grease", "fill", '"unknown"'),
+    ("grease", "housing_fill", None),
+    ("surroundings", "draught", None),
+    ("housing", "kind", None),
+    ("housing", "conductance", '"1.3 W/K"'),
+    ("housing", "void", None),
+    ("housing", "relief", None),
+):
+    FLAT = with_key(FLAT, _table, _key, _value)
+
+
+def read_at(text: str, temperature: float, error: str = "2 K") -> str:
+    """Return the case with the reading and its error instead of its own."""
+    return with_key(with_key(text, "measured", "temperature", f'"{temperature:.3f} degC"'),
+                    "measured", "reading_error", f'"{error}"')  # fmt: skip
+
+
+@pytest.mark.parametrize(("void", "error"), [(None, "2 K"), (None, "0.3 K"), ('"25 cm^3"', "0.5 K")])
+def test_on_a_flat_stretch_a_hundredth_of_a_kelvin_never_turns_unknown_into_beyond(void, error):
+    text = FLAT if void is None else with_key(FLAT, "housing", "void", void)
+    case = read_case(text)
+    points = states_of(case, readings(case)[1][0])
+    flat, end = (float(solve(points.changed(fill=fill)).outer[0]) for fill in (0.3, 0.6))
+    assert end == pytest.approx(flat, abs=1e-6)
+    for away in np.arange(-0.05, 0.055, 0.01):
+        result = lubecheck.check(read_case(read_at(text, flat + away, error)))
+        assert result.calibration.is_explained
+        assert result.limit("fill").state == "unknown", away
+        assert result.limit("fill").demand == pytest.approx(0.5), away
+
+
+@pytest.mark.parametrize("temperature", [43.0, 44.55, 44.58, 45.5, 47.0])
+def test_a_reading_that_goes_with_any_fill_tells_none_and_is_judged_as_none(temperature):
+    plain = FLAT[: FLAT.index("\n[measured]")] + FLAT[FLAT.index("\n[cleanliness]") :]
+    without, result = (lubecheck.check(read_case(one)) for one in (plain, read_at(FLAT, temperature)))
+    assert "cannot tell the fill: any from 30 to" in result.calibration.text
+    assert result.calibration.figures.figures["fill"].value is None
+    assert "judged from 30 to 100 %" in result.limit("fill").note
+    for limit in without.limits:
+        assert result.limit(limit.name) == limit
+
+
+def test_a_reading_that_excludes_the_emptiest_fill_tells_the_fill_and_one_that_does_not_its_most():
+    text = with_key(FLAT, "housing", "void", '"25 cm^3"')
+    fine, coarse = (lubecheck.check(read_case(read_at(text, 45.1, error))) for error in ("0.2 K", "1.5 K"))
+    found = fine.calibration.figures.figures["fill"]
+    assert 0.3 < found.low < found.value < found.high < 0.75
+    assert fine.limit("fill").state == "beyond"
+    assert coarse.limit("fill").state == "unknown"
+    assert "no more than" in coarse.calibration.text
+    assert "taken as 50 %" in coarse.limit("fill").note
+
+
+@pytest.mark.parametrize("temperature", [44.8, 45.1, 45.4])
+def test_the_worst_of_a_found_fill_is_never_less_than_what_was_found(temperature):
+    result = lubecheck.check(read_case(read_at(FLAT, temperature, "0.2 K")))
+    found = result.calibration.figures.figures["fill"]
+    assert result.limit("fill").state == "beyond"
+    worst = float(re.search(r"at worst (\d+) %", result.limit("fill").note)[1]) / 100
+    assert worst >= found.high - 0.005
+
+
+def test_no_heat_of_surplus_grease_leaves_all_fills_open():
+    result = lubecheck.check(read_case(read_at(with_key(FLAT, "housing", "relief", '"open"'), 44.5)))
+    assert "any from 30 to 100 %" in result.calibration.text
+
+
+def test_a_rise_written_in_fahrenheit_is_found_as_one_in_celsius_is():
+    # 43 degC over air of 18 degC is a rise of 25 K, which a thermometer in degF shows as 45.
+    found = [found_of(with_key(FAN, "measured", "temperature", f'"{written}"'))
+             for written in ("25 degC", "45 degF")]  # fmt: skip
+    for one in found:
+        (rise,) = [item for item in one.explained.likely if item.cause == "rise read as temperature"]
+        assert rise.needed == pytest.approx(43.0)
+        assert rise.words.startswith("a rise of 25 K over the air")
+
+
+def test_readings_that_contradict_one_another_are_not_said_to_take_a_cooling_that_can_be_believed():
+    text = FAN[: FAN.index("\n[measured]")] + FAN[FAN.index("\n[cleanliness]") :]
+    state = {"ambient": 18.0, "shaft_temperature": 73.0}
+    two = lubecheck.check(read_case(measured(text, {"temperature": 48.0, **state}, {"temperature": 62.0, **state})))
+    assert not two.calibration.is_explained
+    assert "can be believed" not in two.calibration.text
+    assert "the 2 readings disagree by more than their errors" in two.calibration.text
+    assert "62.0 degC was read where the best fit of all has 55.0 degC, 7.0 K hotter" in two.calibration.text
+
+
+def test_one_reading_just_outside_is_not_said_to_take_a_cooling_that_can_be_believed():
+    (estimate,) = predicted(MOTOR, [{}])
+    for hotter in np.arange(4.0, 30.0, 0.5).tolist():
+        text = measured(MOTOR, {"temperature": estimate + hotter - 1.0}, {"temperature": estimate + hotter})
+        found = lubecheck.check(read_case(text)).calibration
+        if not found.is_explained:
+            break
+    assert "that reading alone lies outside of what can be believed" in found.text
+    factor = float(re.search(r"all readings together give ([\d.]+) times", found.text)[1])
+    admissible = found.figures.figures["admissible_factor"]
+    assert admissible.low - 0.01 <= factor <= admissible.high
+
+
+@pytest.mark.parametrize(("lies", "share"), [("horizontal", "40 %"), ("vertical", "50 %")])
+def test_the_housing_at_the_reading_is_listed_as_it_is_proposed_for_the_shaft(lies, share):
+    text = with_key(with_key(MOTOR, "surroundings", "orientation", f'"{lies}"'), "grease", "fill", None)
+    text = with_key(text, "grease", "housing_fill", None)
+    result = lubecheck.check(read_case(measured(text, {"temperature": 60.0})))
+    listed = {item.name: item.value for item in result.assumed}
+    assert listed["[measured] fill"] == f"as proposed, with the housing at {share}"
+    assert listed["[grease] housing_fill"].startswith(share)
