@@ -279,7 +279,12 @@ def _coils(case: Case, before: Glances) -> Iterator[Change]:
     """Water in a coil or jacket that cools a bath that is too hot."""
     housing = case.housing
     is_bath = case.oil.supply in (None, "bath") and case.bearing.sealed_sides < 2
-    if not is_bath or housing.coolant is not None or housing.conductance is not None or not _fails(before, *BATH_HEAT):
+    if (
+        not is_bath
+        or housing.coolant is not None
+        or housing.conductance is not None
+        or not _fails(before, *HEAT_LIMITS)
+    ):
         return
     for step, flow in enumerate(COIL_FLOWS):
         edits: tuple[Edit, ...] = (
