@@ -240,7 +240,7 @@ def _calibration(case: Case, air_properties: Air) -> Calibration:
         chi_square=chi_square,
         error_scale=scale,
         heat_of=heat_of(case),
-        is_split=is_split,
+        is_split=bool(is_split),
         most_split=int(np.abs(residuals / sensors.error).argmax()),
         tells=tells,
     )
