@@ -114,7 +114,9 @@ def _followed(run: Run, name: str, course: str, case: Case) -> str:
         return f"no equilibrium below {TOP_TEMPERATURE:g} degC: the heat cannot be carried off"
     if np.isnan(run.known[0]):
         return "could not be followed: what it would end in is not known"
-    return wording.join(calibration_words.doubt(case, name) if run.points.is_doubted[0] else "", course)
+    # A peak is in doubt as the temperature that it ends in.
+    kind = "temperature" if name == "peak_temperature" else name
+    return wording.join(calibration_words.doubt(case, kind) if run.points.is_doubted[0] else "", course)
 
 
 def cold_run(runs: Mapping[str, Run]) -> Run | None:

@@ -187,7 +187,7 @@ def test_the_plan_line_has_the_housing_s_fill_as_the_plan_has():
 
 
 def test_what_is_to_be_settled_first_keeps_its_indent_where_it_wraps():
-    hot = with_key(with_key(BASE, "surroundings", "ambient", '"95 degC"'), "limits", "life", '"200000 h"')
+    hot = with_key(with_key(BASE, "duty", "ambient", '"95 degC"'), "limits", "life", '"200000 h"')
     hot = with_key(with_key(hot, "duty", "radial_load", '"30 kN"'), "limits", "trip", '"90 degC"')
     lines = printed(hot, width=40).splitlines()
     start = next(i for i, line in enumerate(lines) if "Only once this is settled" in line)
