@@ -4,6 +4,7 @@ from __future__ import annotations
 
 import math
 
+from lubecheck.model import calibration_words
 from lubecheck.model.amounts import (
     CONTINUOUS_BELOW_DAYS,
     feed,
@@ -110,7 +111,8 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
         interval_weeks=weeks_of(interval, hours_per_day),
         hours_per_day=hours_per_day,
         is_proposed=tuple(proposed),
-        steps=_steps(case, is_sealed=bool(points.is_sealed[0]), feeding=feeding, has_room=regrease is not None),
+        steps=_stopped(case, outcome)
+        + _steps(case, is_sealed=bool(points.is_sealed[0]), feeding=feeding, has_room=regrease is not None),
         is_as_supplied=case.is_grease and bool(points.is_sealed[0]),
         housing_fill_g=housing_fill(case, outcome)[1],
         feed_g_per_h=feeding,
@@ -119,6 +121,12 @@ def plan_line(case: Case, outcome: Outcome) -> PlanLine:
         last_done=kept.last_done,
         hours_run=kept.hours_run,
     )
+
+
+def _stopped(case: Case, outcome: Outcome) -> tuple[str, ...]:
+    """A temperature that was read over a limit comes before everything that a plan asks for."""
+    said = calibration_words.stop(case, outcome)
+    return (f"{said[0].upper()}{said[1:]}",) if said else ()
 
 
 def _steps(case: Case, *, is_sealed: bool, feeding: float | None, has_room: bool) -> tuple[str, ...]:

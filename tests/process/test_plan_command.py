@@ -98,3 +98,11 @@ def test_what_was_given_is_told_with_how_long_to_wait():
 def test_the_help_says_how_long_the_rounds_of_a_route_are():
     told = " ".join(run("plan", "--help").stdout.replace("\u2502", " ").split())
     assert "weekly is 7 days, monthly 28, quarterly 91" in told
+
+
+def test_a_reading_over_the_trip_is_the_first_step_of_the_plan():
+    case = BASE + '\n[limits]\nalarm = "85 degC"\ntrip = "95 degC"\n\n[measured]\ntemperature = "110 degC"\n'
+    done = run("plan", "-", "--json", stdin=case)
+    assert done.returncode == 1
+    steps = json.loads(done.stdout)["lines"][0]["steps"]
+    assert steps[0].startswith("Read 110 degC, trip 95 degC: stop")
