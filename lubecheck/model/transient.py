@@ -27,6 +27,7 @@ HOUR = 3600.0  # s
 _GAMMA = 1 - np.sqrt(0.5)  # of the method: the L-stable choice with the smaller error
 _FIRST = 0.2  # of the time in which the lubricant follows the rings: up to it steps are about equal
 _TIMES = 12.0  # of the slowest time: what is left is 6e-6
+_OIL_SHARE = 0.1  # of the free volume that oil fills while it runs: estimate, 0.05 to 0.3; a small part of the heat
 _NUDGE = 0.01  # K, for the slope of friction over temperature
 
 
@@ -80,7 +81,7 @@ def _capacities(course: Course) -> Array:
     bearing = warm_up.bearing_mass.plain(bore=p.bore, outside=p.outside, width=p.width, free_volume=p.free_volume)
     between = np.minimum(p.elements_mass, 0.5 * bearing)
     ring = 0.5 * (bearing - between)
-    lubricant = np.where(p.is_grease > 0, np.nan_to_num(p.fill), 0.1) * p.free_volume * p.density * 1e-3
+    lubricant = np.where(p.is_grease > 0, np.nan_to_num(p.fill), _OIL_SHARE) * p.free_volume * p.density * 1e-3
     inner = warm_up.steel_capacity.plain(ring + warm_up.shaft_mass.plain(p.bore))
     middle = warm_up.steel_capacity.plain(between) + lubricant * (warm_up.GREASE_HEAT / 1000)
     outer = warm_up.steel_capacity.plain(ring + course.housing_mass)

@@ -42,6 +42,7 @@ SETTLED = 1.0  # K: so close to the end counts as steady
 KEPT = 0.05  # K: a curve is kept up to where it stays so close to its end
 SAMPLES = 60  # points of a curve that are kept
 FIELD_HOURS = 24.0  # until a greased bearing is back: field notes of 2016
+LONGEST_WAIT = 366  # days: beyond it no day is named
 DOSE_SHARES = (0.75, 0.5, 0.35, 0.25, 0.15)
 _FAILING = (STATES[NEAR_CODE], STATES[BEYOND])
 CONCERN = 28.0  # K of rise after greasing: field notes of 2016
@@ -137,21 +138,27 @@ def waiting(case: Case, result: Result, *, air_properties: Air = air.properties)
         return ""
     hours, shortest, longest = run.band(_settled(run.history.time, run.history.outer, SETTLED))
     peak, low, high = run.band(run.peaks)
-    by_field = "" if shortest <= FIELD_HOURS <= longest else f"; field notes say about {FIELD_HOURS:.0f} h"
+    by_field = (
+        "" if not (shortest > FIELD_HOURS or longest < FIELD_HOURS) else f"; field notes say about {FIELD_HOURS:.0f} h"
+    )
     way = ", once the relief is open" if opens else ""
     per_day = float(run.points.hours_per_day[0])
-    until = ""
-    if case.grease.given_on is not None:
-        days = math.ceil(hours / per_day)
+    days, until = math.ceil(hours / per_day), ""
+    if case.grease.given_on is not None and days <= LONGEST_WAIT:
         until = (
             f", about until {date.fromisoformat(case.grease.given_on) + timedelta(days=days)} at {per_day:g} h a day"
         )
     return (
-        f"after the fact{way}: by the warm-up the housing peaks at {peak:.0f} degC "
-        f"({low:.0f} to {high:.0f} degC) and is within 1 K of its steady {run.history.outer[-1, 0]:.0f} degC after "
-        f"{hours:.0f} running hours ({shortest:.0f} to {longest:.0f}){until}{by_field}. Wait so long; if it is still "
-        "hotter then, it is not the fresh grease: look for what else it is"
+        f"after the fact{way}: by the warm-up the housing peaks at {peak:.0f} degC"
+        f"{_between(low, high, ' degC')}and is within 1 K of its steady {run.history.outer[-1, 0]:.0f} degC after "
+        f"{hours:.0f} running hours{_between(shortest, longest).rstrip()}{until}{by_field}. Wait so long; if it is "
+        "still hotter then, it is not the fresh grease: look for what else it is"
     )
+
+
+def _between(low: float, high: float, unit: str = "") -> str:
+    """Return a band in brackets, a space to either side; a space alone where it has an end that is no number."""
+    return f" ({low:.0f} to {high:.0f}{unit}) " if math.isfinite(low) and math.isfinite(high) else " "
 
 
 def _course(case: Case, run: Run) -> Course:

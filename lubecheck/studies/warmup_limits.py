@@ -130,9 +130,10 @@ def _start_torques(run: Run, temperature: Array) -> tuple[Array, Array]:
     temperature [degC]: of the start, one a row
     """
     p = run.points
-    balance = balance_of(p)
-    at = temperature - balance.floor
-    running = balance.flows(at, at, at, np.zeros(len(p)), np.zeros(len(p))).torque
+    with np.errstate(all="ignore"):
+        balance = balance_of(p)
+        at = temperature - balance.floor
+        running = balance.flows(at, at, at, np.zeros(len(p)), np.zeros(len(p))).torque
     volume = np.minimum(np.nan_to_num(p.fill), churning.CLEAR_SHARE) * p.free_volume
     at_room = warm_up.yield_torque.plain(
         volume,

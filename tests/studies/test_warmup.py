@@ -331,3 +331,15 @@ def test_a_smaller_dose_is_named_where_only_regreasing_is_too_hot():
     grams = re.search(r"after greasing: ([0-9.]+) g at a time", said)[1]
     assert float(grams) < 60
     assert warmed(with_key(text, "grease", "regrease_amount", f'"{grams} g"')).limit("set_point").state == "within"
+
+
+def test_no_wait_is_told_with_a_number_that_is_none():
+    """A band with an end that has no equilibrium has no ends in the text."""
+    text = with_key(with_key(BASE, "grease", "given", '"20 g"'), "grease", "given_on", '"2026-11-27"')
+    hot = with_key(with_key(text, "housing", "kind", None), "housing", "conductance", '"0.12 W/K"')
+    hot = with_key(hot, "surroundings", "draught", None).replace('"1480 rpm"', '"2900 rpm"')
+    hot = hot.replace('"1.9 kN"', '"12 kN"')
+    for conductance in ("0.15", "0.3"):
+        notes = check(read_case(hot.replace('"0.12 W/K"', f'"{conductance} W/K"'))).notes
+        (said,) = (note for note in notes if "by the warm-up" in note)
+        assert not re.search(r"\b(nan|inf)\b", said), said
